@@ -1,0 +1,34 @@
+// Bundles the two programs into dist/: `divisor.js`, the command line, with everything it needs inside, and
+// `start.js`, the bot and the practice room, which loads its packages from node_modules.
+import { chmod, cp, rm } from 'node:fs/promises';
+import { fileURLToPath } from 'node:url';
+import { build } from 'esbuild';
+
+const at = (path) => fileURLToPath(new URL(`../${path}`, import.meta.url));
+const common = { bundle: true, platform: 'node', target: 'node20', format: 'esm', logLevel: 'warning' };
+
+await rm(at('dist'), { recursive: true, force: true });
+await Promise.all([
+  build({
+    ...common,
+    entryPoints: [at('src/cli/divisor.ts')],
+    outfile: at('dist/divisor.js'),
+    minify: true,
+    banner: { js: '#!/usr/bin/env node' },
+  }),
+  build({
+    ...common,
+    entryPoints: [at('src/cli/start.ts')],
+    outfile: at('dist/start.js'),
+    packages: 'external',
+    sourcemap: true,
+  }),
+  build({
+    ...common,
+    entryPoints: [at('tests/bench/bench.ts')],
+    outfile: at('dist/bench.js'),
+    packages: 'external',
+  }),
+]);
+await cp(at('src/practice/page'), at('dist/page'), { recursive: true });
+await chmod(at('dist/divisor.js'), 0o755);
