@@ -1,11 +1,70 @@
-import type { Question } from '../../grammar/question.ts';
+import type { Quantity, Question } from '../../grammar/question.ts';
+import { bareCountsReport } from './bare-counts-report.ts';
+import { countsReport } from './counts-report.ts';
+import type { CautionId } from './cautions.ts';
+import type { MissingId } from './missing.ts';
+import type { Reading, ReadingId } from './reading.ts';
+import { sharesReport } from './shares-report.ts';
+import { statedReport } from './stated-report.ts';
+
+/** A percentage that stood beside counts, held against them. */
+export interface StatedBeside {
+  readonly group: number;
+  readonly stated: Quantity;
+  /** What the counts give, as a share. */
+  readonly computed: number;
+  /** True if the counts round to the stated figure at its own precision. */
+  readonly agrees: boolean;
+}
+
+/** What the two groups show about each other. `none-shown`: the interval includes no difference. */
+export type Direction = 'higher' | 'lower' | 'same' | 'none-shown' | 'undefined';
 
 /** Everything that can fairly be said about a question, in numbers and ids; no words. */
 export interface Report {
   readonly question: Question;
+  readonly level: number;
+  readonly readings: readonly Reading[];
+  /** The reading that answers "per person". */
+  readonly headline: ReadingId;
+  readonly stated: readonly StatedBeside[];
+  /** Most important first. */
+  readonly cautions: readonly CautionId[];
+  readonly missing: readonly MissingId[];
 }
 
 /** Works out the report of a question. */
 export function report(question: Question): Report {
-  return { question };
+  switch (question.kind) {
+    case 'counts':
+      return countsReport(question);
+    case 'shares':
+      return sharesReport(question);
+    case 'stated':
+      return statedReport(question);
+    case 'bare-counts':
+      return bareCountsReport(question);
+  }
+}
+
+/** The level used where the line names none: 95%, common practice. */
+export const usualLevel = 0.95;
+
+/** The readings of one id, in the order of the groups. */
+export function readingsOf(report: Report, id: ReadingId): readonly Reading[] {
+  return report.readings.filter((reading) => reading.id === id);
+}
+
+/** Which way a ratio reading points, as far as its interval shows one. */
+export function directionOf(reading: Reading): Direction {
+  const { estimate, interval, unbounded } = reading;
+  if (interval !== null) {
+    const above = interval.low !== null && interval.low > 1;
+    const below = interval.high !== null && interval.high < 1;
+    if (!above && !below) return 'none-shown';
+    return above ? 'higher' : 'lower';
+  }
+  if (unbounded) return 'higher';
+  if (estimate === null) return 'undefined';
+  return estimate > 1 ? 'higher' : estimate < 1 ? 'lower' : 'same';
 }

@@ -1,12 +1,136 @@
+import type { KnownBlock } from '@slack/types';
+import { printCanonical } from '../../../grammar/print-canonical.ts';
 import type { Report } from '../../report/report.ts';
+import { postLine, shortLine, workingLine } from '../render-text.ts';
+import { telling } from '../words/telling.ts';
+import type { Telling } from '../words/telling.ts';
+import { lackingText } from '../words/missing-words.ts';
 import type { CheckContext, PartBehind, SlackMessage } from './message.ts';
+import { bold, box, buttons, escape, list, paragraph, person, plain, quotation, table } from './rich-text.ts';
+import { quoteOf } from './render-root.ts';
 
-/** The full answer, for the thread. */
-export function renderReply(line: string, report: Report, context: CheckContext): SlackMessage {
-  return { text: `stub reply ${line} ${report.question.kind} ${context.checkId}`, blocks: [] };
+/** Longest top-level text: Slack splits longer ones into several messages. */
+const textLength = 3_900;
+
+const buttonWords = {
+  readings: { text: 'All readings', spoken: 'Show all readings of this figure' },
+  working: { text: 'Working', spoken: 'Show how each reading was worked out' },
+  questions: { text: 'Questions to send', spoken: 'Show questions to send to whoever gave the figure' },
+  avoid: { text: 'Better not posted', spoken: 'Show what is better not posted, and why' },
+  other: { text: 'Not what I meant', spoken: 'Show how to say the figure differently' },
+} satisfies Record<PartBehind, { text: string; spoken: string }>;
+
+/** The full answer, for the thread: at most 750 characters before the buttons for figures of usual length. */
+export function renderReply(report: Report, context: CheckContext): SlackMessage {
+  const words = telling(report);
+  const [post] = words.posts;
+  const lacking = lackingText(report);
+  const careful = words.cautions.map(({ text }) => text).join(' ');
+  const foot =
+    context.number === null
+      ? 'Only you see this answer; it has no number.'
+      : `Check ${context.number}, asked by `;
+  const asker = context.number === null ? [] : [person(context.askedBy), plain('.')];
+  const blocks: KnownBlock[] = [
+    paragraph(bold(words.headline)),
+    paragraph(plain([words.readAs, ...words.remarks].join(' '))),
+    ...(post === undefined ? [] : [paragraph(bold('To post:')), quotation(postLine(post))]),
+    paragraph(bold('Careful: '), plain(careful)),
+    ...(words.table === null ? [] : [table(words.table)]),
+    paragraph(plain([lacking, words.limits].filter((part) => part !== null).join(' '))),
+    paragraph(plain(foot), ...asker),
+    buttons(
+      'parts',
+      Object.entries(buttonWords).map(([part, { text, spoken }]) => ({
+        action: `show_${part}`,
+        text,
+        spoken,
+        value: context.checkId,
+      })),
+    ),
+  ];
+  const text = [
+    words.headline,
+    words.readAs,
+    ...words.remarks,
+    ...(post === undefined ? [] : [`To post: ${postLine(post)}`]),
+    `Careful: ${careful}`,
+    ...(words.table ?? []).map((row) => row.join('; ')),
+    ...(lacking === null ? [] : [lacking]),
+    words.limits,
+  ].join('\n');
+  const end = context.number === null ? foot : `${foot}<@${context.askedBy}>.`;
+  return { text: `${withinText(escape(text))}\n${end}`, blocks };
 }
 
 /** One of the parts behind the answer's buttons, for the person who pressed. */
 export function renderPart(line: string, report: Report, part: PartBehind): SlackMessage {
-  return { text: `stub ${part} ${line} ${report.question.kind}`, blocks: [] };
+  const words = telling(report);
+  const { title, lines: all } = partLines(line, report, words, part);
+  const lines = fitting(all);
+  return {
+    text: escape([title, ...lines].join('\n')),
+    blocks: [
+      paragraph(bold(title)),
+      part === 'other' ? box(lines.join('\n')) : list(lines.map((item) => [plain(item)])),
+    ],
+  };
+}
+
+function partLines(
+  line: string,
+  report: Report,
+  words: Telling,
+  part: PartBehind,
+): { title: string; lines: readonly string[] } {
+  switch (part) {
+    case 'readings':
+      return {
+        title: 'All readings',
+        lines: [
+          ...words.rows.map(({ name, value }) => `${name}: ${value}`),
+          ...words.posts.slice(1).map((post) => `To post: ${postLine(post)}`),
+          ...shortLine(words),
+        ],
+      };
+    case 'working':
+      return { title: 'Working', lines: words.rows.map(workingLine) };
+    case 'questions':
+      return { title: 'Questions to send', lines: words.missing.map(({ text }) => text) };
+    case 'avoid':
+      return {
+        title: 'Better not posted',
+        lines: words.avoid.map(({ because, text }) => `${because} So not: \u201c${text}\u201d`),
+      };
+    case 'other':
+      return {
+        title: 'Not what you meant? This is how the line was read; change it and send it again.',
+        lines: [
+          `You typed: ${quoteOf(line)}`,
+          `Read as:   ${printCanonical(report.question)}`,
+          'help shows each kind of question with an example.',
+        ],
+      };
+  }
+}
+
+/** As many lines as fit one message, and how many had to be left out. */
+function fitting(lines: readonly string[]): readonly string[] {
+  let room = textLength - 200;
+  const kept = lines.filter((item) => {
+    room -= escape(item).length + 1;
+    return room > 0;
+  });
+  return kept.length === lines.length
+    ? lines
+    : [
+        ...kept,
+        `${lines.length - kept.length} more lines do not fit here; the command line prints them all.`,
+      ];
+}
+
+/** Cuts a text at the last whole line that fits. */
+function withinText(text: string): string {
+  if (text.length <= textLength) return text;
+  return text.slice(0, text.lastIndexOf('\n', textLength));
 }

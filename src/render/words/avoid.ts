@@ -1,0 +1,101 @@
+import { readingsOf } from '../../report/report.ts';
+import type { Report } from '../../report/report.ts';
+import { shownDirection } from './headline.ts';
+import { capital, cases, Label, label, one } from './labels.ts';
+import { percent, ratio } from './numbers.ts';
+import { quantityText } from './read-as.ts';
+import type { Avoid } from './telling.ts';
+
+/** What is better not posted, and why. The reason is said first. */
+export function avoidFor(report: Report): readonly Avoid[] {
+  const { question } = report;
+  if (question.groups.length === 1) return [oneGroup(report)];
+  switch (question.kind) {
+    case 'counts':
+      return question.chosenByOutcome
+        ? [oddsAsRisk(report), causal(report)]
+        : [...countsAlone(report), ...difference(report), causal(report)];
+    case 'shares':
+      return [shareAsRisk(report), ...difference(report), causal(report)];
+    case 'stated':
+      return [...difference(report), causal(report)];
+    case 'bare-counts':
+      return [
+        {
+          because: 'Without the totals nobody can tell how often it happened.',
+          text: `${Label(question, 0)} is the more dangerous one.`,
+        },
+      ];
+  }
+}
+
+function oneGroup(report: Report): Avoid {
+  return {
+    because: 'One group by itself cannot be high or low: it takes a second one to compare with.',
+    text: `A high figure for ${label(report.question, 0)}.`,
+  };
+}
+
+function countsAlone(report: Report): Avoid[] {
+  const { question } = report;
+  if (question.kind !== 'counts' || question.groups.length !== 2) return [];
+  const [one_, other] = question.groups;
+  if (one_ === undefined || other === undefined || one_.total.value === other.total.value) return [];
+  return [
+    {
+      because: `It leaves out the totals, ${quantityText(one_.total)} and ${quantityText(other.total)}.`,
+      text: `${quantityText(one_.cases)} ${cases(question)} against ${quantityText(other.cases)}.`,
+    },
+  ];
+}
+
+function shareAsRisk(report: Report): Avoid {
+  const { question } = report;
+  const of = readingsOf(report, 'risk-ratio')[0]?.of ?? 0;
+  const share = readingsOf(report, 'case-share').find((reading) => reading.of === of)?.estimate ?? NaN;
+  const text = percent(share, 'short');
+  const single = one(question);
+  return {
+    because: `${text} is a share of the ${cases(question)}, not a risk.`,
+    text: `${single === null ? `Those in ${label(question, of)} have` : `A ${single} in ${label(question, of)} has`} a ${text} risk.`,
+  };
+}
+
+function difference(report: Report): Avoid[] {
+  const { question } = report;
+  const [reading] = readingsOf(report, report.headline);
+  if (reading?.estimate == null || question.groups.length !== 2) return [];
+  if (shownDirection(report, reading) === 'none-shown') {
+    return [
+      { because: 'These figures are too few to tell.', text: 'There is no difference.' },
+      {
+        because: 'The interval includes no difference.',
+        text: `${Label(question, reading.of)} is ${reading.estimate > 1 ? 'higher' : 'lower'}.`,
+      },
+    ];
+  }
+  if (reading.estimate <= 1) return [];
+  const times = ratio(reading.estimate, 'short');
+  return [
+    {
+      because: `Some read "times more" as ${times} times, others as ${ratio(reading.estimate + 1, 'short')} times; write "times as".`,
+      text: `${capital(times)} times more.`,
+    },
+  ];
+}
+
+function oddsAsRisk(report: Report): Avoid {
+  const odds = readingsOf(report, 'odds-ratio')[0]?.estimate ?? null;
+  return {
+    because: 'An odds ratio is not a risk ratio, and these rows were chosen by outcome.',
+    text: odds === null ? 'Times as likely.' : `${ratio(odds, 'short')} times as likely.`,
+  };
+}
+
+function causal(report: Report): Avoid {
+  const of = readingsOf(report, report.headline)[0]?.of ?? 0;
+  return {
+    because: 'The figures compare groups; they do not say why the groups differ.',
+    text: `${Label(report.question, of)} is the cause.`,
+  };
+}

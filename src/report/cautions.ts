@@ -1,0 +1,117 @@
+import type { CountsQuestion, Question, SharesQuestion } from '../../grammar/question.ts';
+import type { Reading } from './reading.ts';
+
+/**
+ * The cautions, most important first: an answer carries the first two that apply. Sources stand with the words in
+ * the renderer's catalogue.
+ */
+export const cautionIds = [
+  'rows-chosen-by-outcome',
+  'totals-missing',
+  'base-rate',
+  'all-cases-in-one-group',
+  'no-cases',
+  'suppressed-cell',
+  'shares-do-not-add-up',
+  'population-too-small',
+  'picked-comparison',
+  'few-cases',
+  'small-risk',
+  'odds-ratio-far',
+  'coverage-as-given',
+  'as-stated',
+  'one-group',
+  'groups-may-differ',
+] as const;
+export type CautionId = (typeof cautionIds)[number];
+
+/** How many cautions an answer carries. */
+const mostCautions = 2;
+
+/** The cautions that these inputs call for. */
+export function cautionsFor(question: Question, readings: readonly Reading[]): readonly CautionId[] {
+  const found = new Set(applying(question, readings));
+  return cautionIds.filter((id) => found.has(id)).slice(0, mostCautions);
+}
+
+function applying(question: Question, readings: readonly Reading[]): readonly CautionId[] {
+  switch (question.kind) {
+    case 'counts':
+      return countsCautions(question, readings);
+    case 'shares':
+      return sharesCautions(question);
+    case 'stated':
+      return ['as-stated', 'groups-may-differ', ...smallRisk(readings)];
+    case 'bare-counts':
+      return ['totals-missing', ...(question.groups.length > 2 ? (['picked-comparison'] as const) : [])];
+  }
+}
+
+function countsCautions(question: CountsQuestion, readings: readonly Reading[]): readonly CautionId[] {
+  const { groups, chosenByOutcome } = question;
+  if (chosenByOutcome) return ['rows-chosen-by-outcome', 'groups-may-differ'];
+  return [
+    ...(groups.some(({ cases }) => cases.precision === 'range') ? (['suppressed-cell'] as const) : []),
+    ...(groups.every(({ cases }) => cases.value === 0) ? (['no-cases'] as const) : []),
+    ...(groups.length > 1 && groups.filter(({ cases }) => cases.value > 0).length === 1
+      ? (['all-cases-in-one-group'] as const)
+      : []),
+    ...(groups.length > 2 ? (['picked-comparison'] as const) : []),
+    ...(groups.some(({ cases }) => cases.high < 5) || smallestExpected(question) < 3
+      ? (['few-cases'] as const)
+      : []),
+    ...smallRisk(readings),
+    ...(oddsRatioFar(readings) ? (['odds-ratio-far'] as const) : []),
+    groups.length === 1 ? 'one-group' : 'groups-may-differ',
+  ];
+}
+
+/** The smallest expected cell if all groups shared one risk: below 3 the limits are rough (measured, see the calibration). */
+function smallestExpected({ groups }: CountsQuestion): number {
+  const cases = groups.reduce((sum, group) => sum + group.cases.value, 0);
+  const total = groups.reduce((sum, group) => sum + group.total.value, 0);
+  const risk = cases / total;
+  return Math.min(...groups.map((group) => group.total.value * Math.min(risk, 1 - risk)));
+}
+
+function sharesCautions(question: SharesQuestion): readonly CautionId[] {
+  const { groups, clauses } = question;
+  const cases = groups.map((group) => group.cases);
+  const counted = cases.filter((quantity) => quantity !== null);
+  const caseShares = groups.reduce((sum, { caseShare }) => sum + caseShare.value, 0);
+  const coverages = groups.reduce((sum, { coverage }) => sum + coverage.value, 0);
+  const populationShort =
+    clauses.population !== null &&
+    groups.some(
+      (group) =>
+        group.cases !== null &&
+        group.cases.value > group.coverage.value * (clauses.population?.value ?? Infinity),
+    );
+  return [
+    'base-rate',
+    ...(Math.abs(caseShares - 1) > 1e-9 || Math.abs(coverages - 1) > 1e-9
+      ? (['shares-do-not-add-up'] as const)
+      : []),
+    ...(populationShort ? (['population-too-small'] as const) : []),
+    ...(counted.length > 1 && counted.filter(({ value }) => value > 0).length === 1
+      ? (['all-cases-in-one-group'] as const)
+      : []),
+    ...(groups.length > 2 ? (['picked-comparison'] as const) : []),
+    ...(counted.some(({ value }) => value < 5) ? (['few-cases'] as const) : []),
+    'coverage-as-given',
+  ];
+}
+
+/** A ratio of 2 or more between risks that are both below 1 in 1,000 sounds larger than it is. */
+function smallRisk(readings: readonly Reading[]): readonly CautionId[] {
+  const risks = readings.filter(({ id }) => id === 'risk').map(({ estimate }) => estimate ?? 0);
+  const ratio = readings.find(({ id }) => id === 'risk-ratio' || id === 'percentage-ratio')?.estimate ?? 1;
+  return Math.max(...risks) < 0.001 && (ratio >= 2 || ratio <= 0.5) ? ['small-risk'] : [];
+}
+
+function oddsRatioFar(readings: readonly Reading[]): boolean {
+  const odds = readings.find(({ id }) => id === 'odds-ratio')?.estimate ?? null;
+  const ratio = readings.find(({ id }) => id === 'risk-ratio')?.estimate ?? null;
+  if (odds === null || ratio === null || odds <= 0 || ratio <= 0) return false;
+  return Math.abs(Math.log(odds / ratio)) > Math.log(1.5);
+}

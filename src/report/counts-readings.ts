@@ -1,0 +1,206 @@
+import type { Quantity } from '../../grammar/question.ts';
+import { clopperPearsonInterval } from '../stats/clopper-pearson-interval.ts';
+import { conditionalOddsRatioInterval } from '../stats/conditional-odds-ratio-interval.ts';
+import type { TwoGroups } from '../stats/interval.ts';
+import { oddsRatioInterval } from '../stats/odds-ratio-interval.ts';
+import { oneExtraPer } from '../stats/one-extra-per.ts';
+import { riskDifferenceInterval } from '../stats/risk-difference-interval.ts';
+import { riskRatioInterval } from '../stats/risk-ratio-interval.ts';
+import { wilsonInterval } from '../stats/wilson-interval.ts';
+import { rangeOverCorners } from './corners.ts';
+import { estimateOf, intervalOver, mapInterval } from './estimates.ts';
+import { ratioFollowers, relativeChange } from './ratio-followers.ts';
+import { reading } from './reading.ts';
+import type { Reading } from './reading.ts';
+
+/** Cases among a total, as the readings need them. Totals may be coverage times population and need not be whole. */
+export interface CountsRow {
+  readonly cases: Quantity;
+  readonly total: Quantity;
+}
+
+export interface CountsOptions {
+  readonly level: number;
+  readonly exact: boolean;
+  /** The M of extra cases per M; `null`: the smallest power of ten at which the smaller risk gives at least 1. */
+  readonly per: number | null;
+}
+
+/** The risk in one group. */
+export function riskReading(row: CountsRow, of: number, { level, exact }: CountsOptions): Reading {
+  const quantities = [row.cases, row.total];
+  return reading({
+    id: 'risk',
+    of,
+    estimate: row.cases.value / row.total.value,
+    interval: exact
+      ? intervalOver(quantities, level, 'clopper-pearson', ([x = NaN, n = NaN]) =>
+          clopperPearsonInterval(x, n, level),
+        )
+      : intervalOver(quantities, level, 'wilson', ([x = NaN, n = NaN]) => wilsonInterval(x, n, level)),
+    roundingRange: rangeOverCorners(quantities, ([x = NaN, n = NaN]) => x / n),
+  });
+}
+
+/** Every reading of a group against its reference group, all from one null test, so that they never contradict each other. */
+export function pairReadings(
+  rows: readonly CountsRow[],
+  of: number,
+  against: number,
+  options: CountsOptions,
+): Reading[] {
+  const group = rows[of];
+  const reference = rows[against];
+  if (group === undefined || reference === undefined) return [];
+  const pair: Pair = {
+    of,
+    against,
+    quantities: [group.cases, group.total, reference.cases, reference.total],
+  };
+  const ratio = riskRatio(pair, options);
+  const difference = riskDifference(pair, options);
+  return [
+    ratio,
+    relativeChange(ratio),
+    difference,
+    extraCases(difference, group, reference, options),
+    ...oneExtra(difference),
+    oddsRatio(pair, options),
+    ...ratioFollowers(ratio),
+  ];
+}
+
+/** The odds ratio alone, for rows that were chosen by outcome. */
+export function oddsRatioReading(
+  rows: readonly CountsRow[],
+  of: number,
+  against: number,
+  options: CountsOptions,
+): Reading[] {
+  const group = rows[of];
+  const reference = rows[against];
+  if (group === undefined || reference === undefined) return [];
+  return [
+    oddsRatio(
+      { of, against, quantities: [group.cases, group.total, reference.cases, reference.total] },
+      options,
+    ),
+  ];
+}
+
+interface Pair {
+  readonly of: number;
+  readonly against: number;
+  readonly quantities: readonly [Quantity, Quantity, Quantity, Quantity];
+}
+
+const asGroups = ([
+  cases = NaN,
+  total = NaN,
+  referenceCases = NaN,
+  referenceTotal = NaN,
+]: readonly number[]): TwoGroups => ({
+  cases,
+  total,
+  referenceCases,
+  referenceTotal,
+});
+
+const riskRatioOf = ({ cases, total, referenceCases, referenceTotal }: TwoGroups) =>
+  (cases * referenceTotal) / (referenceCases * total);
+const riskDifferenceOf = ({ cases, total, referenceCases, referenceTotal }: TwoGroups) =>
+  (cases * referenceTotal - referenceCases * total) / (total * referenceTotal);
+const oddsRatioOf = ({ cases, total, referenceCases, referenceTotal }: TwoGroups) =>
+  (cases * (referenceTotal - referenceCases)) / (referenceCases * (total - cases));
+
+function riskRatio({ of, against, quantities }: Pair, { level, exact }: CountsOptions): Reading {
+  const values = quantities.map(({ value }) => value);
+  return reading({
+    id: 'risk-ratio',
+    of,
+    against,
+    ...estimateOf(riskRatioOf(asGroups(values))),
+    interval: exact
+      ? null
+      : intervalOver(quantities, level, 'miettinen-nurminen', (at) => riskRatioInterval(asGroups(at), level)),
+    whyNoInterval: exact ? 'no-exact-form' : null,
+    roundingRange: rangeOverCorners(quantities, (at) => riskRatioOf(asGroups(at))),
+  });
+}
+
+function riskDifference({ of, against, quantities }: Pair, { level, exact }: CountsOptions): Reading {
+  const values = quantities.map(({ value }) => value);
+  return reading({
+    id: 'risk-difference',
+    of,
+    against,
+    estimate: riskDifferenceOf(asGroups(values)),
+    interval: exact
+      ? null
+      : intervalOver(quantities, level, 'miettinen-nurminen', (at) =>
+          riskDifferenceInterval(asGroups(at), level),
+        ),
+    whyNoInterval: exact ? 'no-exact-form' : null,
+    roundingRange: rangeOverCorners(quantities, (at) => riskDifferenceOf(asGroups(at))),
+  });
+}
+
+function oddsRatio({ of, against, quantities }: Pair, { level, exact }: CountsOptions): Reading {
+  const values = quantities.map(({ value }) => value);
+  return reading({
+    id: 'odds-ratio',
+    of,
+    against,
+    ...estimateOf(oddsRatioOf(asGroups(values))),
+    interval: exact
+      ? intervalOver(quantities, level, 'conditional-exact', (at) =>
+          conditionalOddsRatioInterval(asGroups(at), level),
+        )
+      : intervalOver(quantities, level, 'miettinen-nurminen', (at) => oddsRatioInterval(asGroups(at), level)),
+    roundingRange: rangeOverCorners(quantities, (at) => oddsRatioOf(asGroups(at))),
+  });
+}
+
+function extraCases(
+  difference: Reading,
+  group: CountsRow,
+  reference: CountsRow,
+  options: CountsOptions,
+): Reading {
+  const per =
+    options.per ??
+    perFor([group.cases.value / group.total.value, reference.cases.value / reference.total.value]);
+  const scale = (share: number) => share * per;
+  return {
+    ...difference,
+    id: 'extra-cases',
+    estimate: difference.estimate === null ? null : scale(difference.estimate),
+    interval: difference.interval && mapInterval(difference.interval, scale),
+    roundingRange: difference.roundingRange && mapInterval(difference.roundingRange, scale),
+    per,
+  };
+}
+
+/** The smallest power of ten from 100 at which the smaller risk above zero gives at least 1; 100 where there is none. */
+export function perFor(risks: readonly number[]): number {
+  const smallest = Math.min(...risks.filter((risk) => risk > 0));
+  let per = 100;
+  while (Number.isFinite(smallest) && smallest * per < 1) per *= 10;
+  return per;
+}
+
+function oneExtra(difference: Reading): Reading[] {
+  if (difference.estimate === null || difference.estimate === 0) return [];
+  const { interval, ranges } = oneExtraPer(difference.estimate, difference.interval);
+  return [
+    reading({
+      id: 'one-extra-per',
+      of: difference.of,
+      against: difference.against,
+      estimate: 1 / Math.abs(difference.estimate),
+      interval: interval && difference.interval && { ...difference.interval, ...interval },
+      whyNoInterval: interval === null ? (difference.whyNoInterval ?? 'spans-none') : null,
+      ranges,
+    }),
+  ];
+}

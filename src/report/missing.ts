@@ -1,0 +1,34 @@
+import type { Question } from '../../grammar/question.ts';
+
+/** What the line does not say and the source could: each becomes a question that can be forwarded. */
+export type MissingId =
+  | 'group-sizes' // shares: how many in each group, for a risk
+  | 'case-number' // shares without the number of cases
+  | 'counts-behind' // percentages without counts
+  | 'totals' // counts without totals
+  | 'second-group' // one group only
+  | 'everybody' // rows chosen by outcome: how many in all, ill and well, in each group
+  | 'same-people' // shares: do cases and coverage belong to the same people, place and time
+  | 'same-time' // counts: were the groups watched equally long, and could one be counted twice
+  | 'who-is-counted';
+
+/** What to ask whoever gave the figure, most useful first. */
+export function missingFor(question: Question): readonly MissingId[] {
+  const who: readonly MissingId[] = question.clauses.among === null ? ['who-is-counted'] : [];
+  switch (question.kind) {
+    case 'counts':
+      if (question.chosenByOutcome) return ['everybody', ...who];
+      return [...(question.groups.length === 1 ? (['second-group'] as const) : []), 'same-time', ...who];
+    case 'shares':
+      return [
+        ...(question.groups.some(({ cases }) => cases === null) ? (['case-number'] as const) : []),
+        ...(question.clauses.population === null ? (['group-sizes'] as const) : []),
+        'same-people',
+        ...who,
+      ];
+    case 'stated':
+      return ['counts-behind', 'same-time', ...who];
+    case 'bare-counts':
+      return ['totals', 'same-time', ...who];
+  }
+}
