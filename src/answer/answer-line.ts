@@ -1,6 +1,6 @@
 import { readLine } from '../../grammar/read-line.ts';
 import type { Diagnosis, HelpTopic, LineLimits } from '../../grammar/question.ts';
-import { report } from '../report/report.ts';
+import { reportOf } from '../report/report-of.ts';
 import type { Report } from '../report/report.ts';
 
 /** What the house says to one typed line. */
@@ -17,7 +17,7 @@ export function answerLine(line: string, limits: LineLimits): Answer {
   const reading = readLine(line, limits);
   switch (reading.kind) {
     case 'question':
-      return { kind: 'report', line, report: report(reading.question) };
+      return { kind: 'report', line, report: reportOf(reading.question) };
     case 'help':
       return { kind: 'help', line, topic: reading.topic };
     case 'diagnosis':

@@ -3,7 +3,7 @@ import { renderJson, renderRefusalJson } from '../render/render-json.ts';
 import { renderRefusalText, renderText } from '../render/render-text.ts';
 import type { Emphasis } from '../render/render-text.ts';
 import { helpText } from '../render/words/help.ts';
-import { telling } from '../render/words/telling.ts';
+import { tell } from '../render/words/tell.ts';
 
 /** One line answered: what goes to standard output, what to standard error, and the exit status it calls for. */
 export interface Spoken {
@@ -35,7 +35,7 @@ export function speakOnOneLine(answer: Answer, json: boolean): Spoken {
   switch (answer.kind) {
     case 'report': {
       if (json) return { output: renderJson(answer.line, answer.report), error: null, status: 0 };
-      const { headline, readAs } = telling(answer.report);
+      const { headline, readAs } = tell(answer.report);
       return { output: `${headline} ${readAs}`, error: null, status: 0 };
     }
     case 'help':

@@ -4,14 +4,14 @@ import type { Reading } from '../report/reading.ts';
 import type { Report } from '../report/report.ts';
 import { whyText } from './words/reading-row.ts';
 import { plainLabel } from './words/labels.ts';
-import { telling } from './words/telling.ts';
+import { tell } from './words/tell.ts';
 
 /** The version of the JSON report; it changes when a field changes its meaning or goes. */
 const schema = 1;
 
 /** The report as one line of JSON: plain shares and ratios at full double precision, never per cent, never rounded. */
 export function renderJson(line: string, report: Report): string {
-  const words = telling(report);
+  const words = tell(report);
   const { question } = report;
   return JSON.stringify({
     schema,

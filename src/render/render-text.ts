@@ -2,7 +2,7 @@ import type { Diagnosis } from '../../grammar/question.ts';
 import { placeExcerpt } from '../../grammar/place-excerpt.ts';
 import type { Report } from '../report/report.ts';
 import { fitsPost } from './words/posts.ts';
-import { telling } from './words/telling.ts';
+import { tell } from './words/tell.ts';
 import type { Telling } from './words/telling.ts';
 
 /** How headings are set off: bold on a terminal, plain elsewhere. */
@@ -10,7 +10,7 @@ export type Emphasis = (text: string) => string;
 
 /** The answer as text for a terminal or a file, with everything that stands behind buttons elsewhere. */
 export function renderText(report: Report, strong: Emphasis): string {
-  const words = telling(report);
+  const words = tell(report);
   return [
     strong(words.headline),
     words.readAs,

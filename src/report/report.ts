@@ -1,11 +1,7 @@
 import type { Quantity, Question } from '../../grammar/question.ts';
-import { bareCountsReport } from './bare-counts-report.ts';
-import { countsReport } from './counts-report.ts';
 import type { CautionId } from './cautions.ts';
 import type { MissingId } from './missing.ts';
 import type { Reading, ReadingId } from './reading.ts';
-import { sharesReport } from './shares-report.ts';
-import { statedReport } from './stated-report.ts';
 
 /** A percentage that stood beside counts, held against them. */
 export interface StatedBeside {
@@ -31,20 +27,6 @@ export interface Report {
   /** Most important first. */
   readonly cautions: readonly CautionId[];
   readonly missing: readonly MissingId[];
-}
-
-/** Works out the report of a question. */
-export function report(question: Question): Report {
-  switch (question.kind) {
-    case 'counts':
-      return countsReport(question);
-    case 'shares':
-      return sharesReport(question);
-    case 'stated':
-      return statedReport(question);
-    case 'bare-counts':
-      return bareCountsReport(question);
-  }
 }
 
 /** The level used where the line names none: 95%, common practice. */

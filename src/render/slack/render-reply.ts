@@ -2,7 +2,7 @@ import type { KnownBlock } from '@slack/types';
 import { printCanonical } from '../../../grammar/print-canonical.ts';
 import type { Report } from '../../report/report.ts';
 import { postLine, shortLine, workingLine } from '../render-text.ts';
-import { telling } from '../words/telling.ts';
+import { tell } from '../words/tell.ts';
 import type { Telling } from '../words/telling.ts';
 import { lackingText } from '../words/missing-words.ts';
 import type { CheckContext, PartBehind, SlackMessage } from './message.ts';
@@ -22,7 +22,7 @@ const buttonWords = {
 
 /** The full answer, for the thread: at most 750 characters before the buttons for figures of usual length. */
 export function renderReply(report: Report, context: CheckContext): SlackMessage {
-  const words = telling(report);
+  const words = tell(report);
   const [post] = words.posts;
   const lacking = lackingText(report);
   const careful = words.cautions.map(({ text }) => text).join(' ');
@@ -65,7 +65,7 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
 
 /** One of the parts behind the answer's buttons, for the person who pressed. */
 export function renderPart(line: string, report: Report, part: PartBehind): SlackMessage {
-  const words = telling(report);
+  const words = tell(report);
   const { title, lines: all } = partLines(line, report, words, part);
   const lines = fitting(all);
   return {

@@ -1,5 +1,5 @@
 import type { Report } from '../../report/report.ts';
-import { telling } from '../words/telling.ts';
+import { tell } from '../words/tell.ts';
 import type { CheckContext, SlackMessage } from './message.ts';
 import { bold, escape, paragraph, person, plain, quotation } from './rich-text.ts';
 
@@ -8,7 +8,7 @@ const quoteLength = 600;
 
 /** The root message of a check: who asked, the figure quoted as typed, and the answer in one sentence. */
 export function renderRoot(line: string, report: Report, context: CheckContext): SlackMessage {
-  const { headline } = telling(report);
+  const { headline } = tell(report);
   const figure = quoteOf(line);
   const number = context.number === null ? 'Check' : `Check ${context.number}`;
   return {

@@ -1,15 +1,6 @@
-import type { Report } from '../../report/report.ts';
 import type { CautionId } from '../../report/cautions.ts';
 import type { MissingId } from '../../report/missing.ts';
 import type { Reading, ReadingId } from '../../report/reading.ts';
-import { avoidFor } from './avoid.ts';
-import { cautionText } from './caution-words.ts';
-import { headlineFor } from './headline.ts';
-import { missingText } from './missing-words.ts';
-import { postsFor, shortPost } from './posts.ts';
-import { readAs, remarksText, statedText } from './read-as.ts';
-import { readingRow } from './reading-row.ts';
-import { tableFor } from './group-table.ts';
 
 /** One sentence that may be posted, with its denominators and interval inside it, so that it can be copied alone. */
 export interface Post {
@@ -55,25 +46,4 @@ export interface Telling {
   readonly table: readonly (readonly string[])[] | null;
   readonly avoid: readonly Avoid[];
   readonly limits: string;
-}
-
-/** What the answer is not. It stands last under every answer, since a figure about health, safety or law may come unannounced. */
-export const whatItIsNot =
-  'Figures as given; no medical, safety or legal advice. Local rules and the licensed professional decide.';
-
-/** Puts a report into words. */
-export function telling(report: Report): Telling {
-  return {
-    headline: headlineFor(report),
-    readAs: readAs(report.question),
-    remarks: [...statedText(report), ...remarksText(report.question)],
-    posts: postsFor(report),
-    shortPost: shortPost(report),
-    cautions: report.cautions.map((id) => ({ id, text: cautionText(report, id) })),
-    missing: report.missing.map((id) => ({ id, text: missingText(report.question, id) })),
-    rows: report.readings.map((reading) => readingRow(report, reading)),
-    table: tableFor(report),
-    avoid: avoidFor(report),
-    limits: whatItIsNot,
-  };
 }
