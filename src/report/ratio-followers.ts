@@ -1,11 +1,10 @@
+import { attributableFraction, preventedFraction } from '../stats/attributable-fraction.ts';
 import { hiddenCauseStrength, hiddenCauseStrengthAtLimit } from '../stats/hidden-cause-strength.ts';
 import { estimateOf, mapInterval } from './estimates.ts';
 import { reading } from './reading.ts';
 import type { Reading } from './reading.ts';
 
 const change = (ratio: number) => ratio - 1;
-const attributable = (ratio: number) => (ratio === 0 ? null : 1 - 1 / ratio);
-const prevented = (ratio: number) => 1 - ratio;
 
 /** The relative change that goes with every ratio: RR - 1, signed, with the ratio's limits carried over. */
 export function relativeChange(ratio: Reading): Reading {
@@ -27,14 +26,20 @@ function fraction(ratio: Reading): Reading[] {
   if (ratio.estimate > 1) {
     // No upper limit on the ratio is a fraction that reaches 1.
     const interval = ratio.interval && {
-      ...mapInterval(ratio.interval, attributable),
+      ...mapInterval(ratio.interval, attributableFraction),
       ...(ratio.interval.high === null ? { high: 1 } : {}),
     };
     return [
-      { ...ratio, id: 'attributable-fraction', ...carried(ratio, attributable), interval, exactBeside: null },
+      {
+        ...ratio,
+        id: 'attributable-fraction',
+        ...carried(ratio, attributableFraction),
+        interval,
+        exactBeside: null,
+      },
     ];
   }
-  const flipped = carried(ratio, prevented);
+  const flipped = carried(ratio, preventedFraction);
   const swap = <T extends { low: number | null; high: number | null }>(interval: T): T => ({
     ...interval,
     low: interval.high,

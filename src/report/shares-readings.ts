@@ -1,6 +1,6 @@
 import type { Quantity, SharesGroup, SharesQuestion } from '../../grammar/question.ts';
 import { clopperPearsonInterval } from '../stats/clopper-pearson-interval.ts';
-import { populationAttributableFraction } from '../stats/population-attributable-fraction.ts';
+import { populationAttributableFraction } from '../stats/attributable-fraction.ts';
 import { exactShareRatioInterval, shareRatioInterval } from '../stats/share-ratio.ts';
 import type { SharePair } from '../stats/share-ratio.ts';
 import { wilsonInterval } from '../stats/wilson-interval.ts';
