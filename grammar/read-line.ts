@@ -1,15 +1,75 @@
-import type { LineLimits, LineReading } from './question.ts';
+import type { IRecognitionException, IToken } from 'chevrotain';
+import { diagnosis, linesToTry } from './diagnosis.ts';
+import { fold, typedSpan } from './fold.ts';
+import type { Folded } from './fold.ts';
+import { parseTags } from './parser.ts';
+import type { Diagnosis, HelpTopic, LineLimits, LineReading } from './question.ts';
+import { settleLine } from './settle.ts';
+import { tagLine } from './tag.ts';
+import * as tags from './tags.ts';
+import { fineTokensOf } from './tokens.ts';
+import { partsOfTree } from './tree.ts';
+
+const topics: readonly HelpTopic[] = ['overview', 'counts', 'shares', 'stated', 'bare-counts'];
 
 /** Reads one typed line. Pure, linear in the length of the line, and never throws whatever the line holds. */
 export function readLine(line: string, limits: LineLimits): LineReading {
-  void limits;
-  return {
-    kind: 'diagnosis',
-    diagnosis: {
-      id: 'empty-line',
-      message: 'Not built yet.',
-      span: { from: 0, to: line.length },
-      suggestions: [],
-    },
-  };
+  // Before anything else, so that no step ever sees more.
+  if (line.length > limits.characters) {
+    return refusal(
+      diagnosis('too-long', { from: limits.characters, to: line.length }, [
+        limits.characters.toLocaleString('en-US'),
+      ]),
+    );
+  }
+  const topic = helpTopicOf(line);
+  if (topic !== null) return { kind: 'help', topic };
+  const folded = fold(line);
+  const fine = fineTokensOf(folded.text);
+  if (/^[\s?]*$/.test(folded.text))
+    return refusal(diagnosis('empty-line', { from: 0, to: line.length }, [], linesToTry));
+  const { tags: tagged, fault, hasFigure } = tagLine(fine, folded);
+  if (fault !== null) return refusal(fault);
+  if (
+    !hasFigure &&
+    !tagged.some(({ tokenType }) => tokenType === tags.CasesTag || tokenType === tags.ShareTag)
+  ) {
+    return refusal(diagnosis('no-figure', { from: 0, to: line.length }, [], linesToTry));
+  }
+  const { tree, errors } = parseTags(tagged);
+  const [error] = errors;
+  if (error !== undefined) return refusal(faultOf(error, folded));
+  const question = settleLine(partsOfTree(tree, folded), line, folded.remarks, limits.groups);
+  return question.ok ? { kind: 'question', question: question.value } : refusal(question.fault);
+}
+
+const refusal = (fault: Diagnosis): LineReading => ({ kind: 'diagnosis', diagnosis: fault });
+
+/** `help`, `help counts`: the whole line, and no figure in it. */
+function helpTopicOf(line: string): HelpTopic | null {
+  const words = /^\s*help(?:\s+([a-z -]+?))?\s*[.?!]?\s*$/i.exec(line);
+  if (words === null) return null;
+  const asked = words[1]?.toLowerCase().replace(/\s+/g, '-') ?? 'overview';
+  return topics.find((topic) => topic === asked) ?? 'overview';
+}
+
+/** What a parse error says to a person: where it is, and what would have been understood there. */
+function faultOf(error: IRecognitionException, folded: Folded): Diagnosis {
+  const { token } = error;
+  const previousToken = 'previousToken' in error ? (error.previousToken as IToken | undefined) : undefined;
+  // At the end of the input the parser gives no place; the end of the token before is it.
+  const atEnd = Number.isNaN(token.startOffset);
+  const from = atEnd ? (previousToken?.startOffset ?? 0) : token.startOffset;
+  const to = atEnd ? (previousToken?.endOffset ?? 0) + 1 : (token.endOffset ?? token.startOffset) + 1;
+  const span = typedSpan(folded, from, to);
+  if (previousToken?.tokenType === tags.OfTag) {
+    const count = folded.typed.slice(0, span.from).trim().split(/\s+/).at(-1) ?? '';
+    return diagnosis('total-missing', span, [count], [`${folded.typed.slice(0, span.to).trim()} ...`]);
+  }
+  return diagnosis(
+    'unread-part',
+    span,
+    [folded.typed.slice(span.from, span.to).trim().slice(0, 40)],
+    linesToTry.slice(0, 2),
+  );
 }

@@ -1,0 +1,135 @@
+import { writtenNumber } from './numbers.ts';
+import type { WrittenNumber } from './numbers.ts';
+import type { Part } from './parts.ts';
+import type { ClauseName } from './tags.ts';
+import * as token from './tokens.ts';
+
+/** What a part is, if it is a clause. `not-yet`: a clause of the language that is not read yet. */
+export type ClausePart =
+  | {
+      readonly kind: 'clause';
+      readonly name: ClauseName;
+      readonly body: string;
+      readonly number: WrittenNumber | null;
+    }
+  | { readonly kind: 'no-value'; readonly word: string; readonly example: string }
+  | { readonly kind: 'not-yet'; readonly word: string };
+
+const examples = {
+  level: 'level 90%',
+  per: 'per 1,000',
+  reference: 'reference day shift',
+  population: 'population 84,000',
+  among: 'among "registered riders, May"',
+  period: 'period Jan to Jun',
+  source: 'source https://harrowmere.example/table',
+  note: 'note "from the May table"',
+} as const;
+
+const textClauses = new Map<unknown, 'reference' | 'among' | 'period' | 'source' | 'note'>([
+  [token.Reference, 'reference'],
+  [token.Among, 'among'],
+  [token.Period, 'period'],
+  [token.Source, 'source'],
+  [token.Note, 'note'],
+]);
+
+/**
+ * Reads a part as a clause, or returns `null` if it is none. A part is a clause if its first word is a clause word, except
+ * where a later colon (not directly behind that word) leads to a figure: `level 1: 3 of 900` is a group.
+ */
+export function clauseOf(part: Part, folded: string): ClausePart | null {
+  const { tokens } = part;
+  const [first, second, third] = tokens;
+  if (first === undefined || isNamed(part)) return null;
+  const afterWord = first.startOffset + first.image.length;
+  const rest = folded
+    .slice(afterWord, part.end)
+    .replace(/^\s*:?\s*/, '')
+    .trim();
+  const textClause = textClauses.get(first.tokenType);
+  if (textClause !== undefined) {
+    const body = unquoted(rest);
+    return body === ''
+      ? { kind: 'no-value', word: textClause, example: examples[textClause] }
+      : { kind: 'clause', name: textClause, body, number: null };
+  }
+  const number =
+    second?.tokenType === token.NumberToken
+      ? writtenNumber(second.image, third?.tokenType === token.Magnitude ? third.image : null)
+      : null;
+  switch (first.tokenType) {
+    case token.Level:
+      if (number === null) return { kind: 'no-value', word: 'level', example: examples.level };
+      return tokens.length <= 3 ? { kind: 'clause', name: 'level', body: rest, number } : null;
+    case token.Per:
+      if (number === null) return { kind: 'no-value', word: 'per', example: examples.per };
+      return { kind: 'clause', name: 'per', body: rest, number };
+    case token.Population: {
+      const own = second?.tokenType === token.Colon ? numberAfterColon(part) : number;
+      if (own === null)
+        return tokens.length === 1
+          ? { kind: 'no-value', word: 'population', example: examples.population }
+          : null;
+      return tokens.length <= 4 ? { kind: 'clause', name: 'population', body: rest, number: own } : null;
+    }
+    case token.Exact:
+      return tokens.length === 1 ? { kind: 'clause', name: 'exact', body: '', number: null } : null;
+    case token.OnlyMe:
+      return tokens.length === 1 ? { kind: 'clause', name: 'onlyMe', body: '', number: null } : null;
+    case token.Of:
+      // `of 75 cases`, alone in its part.
+      return number !== null &&
+        tokens.slice(2).every(({ tokenType }) => tokenType === token.Word || tokenType === token.CasesWord)
+        ? {
+            kind: 'clause',
+            name: 'ofCases',
+            body: folded
+              .slice(second === undefined ? afterWord : second.startOffset + second.image.length, part.end)
+              .trim(),
+            number,
+          }
+        : null;
+    case token.Says:
+      return { kind: 'not-yet', word: 'says' };
+    default:
+      return notYet(part, folded);
+  }
+}
+
+function numberAfterColon({ tokens }: Part): WrittenNumber | null {
+  const third = tokens[2];
+  return third?.tokenType === token.NumberToken ? writtenNumber(third.image, null) : null;
+}
+
+/** Clauses of the language that later kinds of question bring. */
+function notYet({ tokens }: Part, folded: string): ClausePart | null {
+  const [first, second] = tokens;
+  if (first === undefined) return null;
+  const two = folded
+    .slice(first.startOffset, second === undefined ? undefined : second.startOffset + second.image.length)
+    .toLowerCase();
+  if (/^design effect$/.test(two)) return { kind: 'not-yet', word: 'design effect' };
+  if (/^counted\s*:?$/.test(two)) return { kind: 'not-yet', word: 'counted' };
+  if (/^try$/i.test(first.image) && second?.tokenType === token.NumberToken)
+    return { kind: 'not-yet', word: 'try' };
+  return null;
+}
+
+/** Whether a later colon leads to a figure, so that the first word belongs to a name. */
+function isNamed({ tokens }: Part): boolean {
+  const colon = tokens.findIndex(({ tokenType }, at) => at >= 2 && tokenType === token.Colon);
+  if (colon === -1) return false;
+  if (
+    tokens.slice(0, colon).some(({ tokenType }) => tokenType === token.Address || tokenType === token.Quoted)
+  )
+    return false;
+  if (tokens[1]?.tokenType === token.Colon) return false;
+  return tokens.slice(colon + 1).some(({ tokenType }) => tokenType === token.NumberToken);
+}
+
+/** Text without the quotation marks around the whole of it. */
+export function unquoted(text: string): string {
+  const quoted = /^["\u201c\u201e\u00ab](.*?)["\u201d\u201c\u00bb]$/s.exec(text);
+  return (quoted?.[1] ?? text).trim();
+}

@@ -1,0 +1,88 @@
+import { diagnosis } from './diagnosis.ts';
+import { countQuantity, refused, settled } from './quantities.ts';
+import type { Settled } from './quantities.ts';
+import type { Clauses, Quantity, Span } from './question.ts';
+import type { TreePart } from './tree.ts';
+
+type ClausePart = Extract<TreePart, { kind: 'clause' }>;
+
+/** The clauses of a line, and the number of all cases from `of 75 cases`. */
+export interface SettledClauses {
+  readonly clauses: Clauses;
+  readonly ofCases: { readonly quantity: Quantity; readonly noun: string | null } | null;
+  /** Where `reference` stood, for a name that is no group. */
+  readonly referenceSpan: Span | null;
+}
+
+const none: Clauses = {
+  level: null,
+  per: null,
+  reference: null,
+  population: null,
+  among: null,
+  period: null,
+  source: null,
+  note: null,
+  exact: false,
+  onlyMe: false,
+};
+
+export const noClauses = none;
+
+/** Settles the clauses one by one; the first that cannot be is refused with its place. */
+export function settleClauses(parts: readonly ClausePart[], typed: string): Settled<SettledClauses> {
+  let found: SettledClauses = { clauses: none, ofCases: null, referenceSpan: null };
+  const seen = new Set<string>();
+  for (const part of parts) {
+    const word = part.name === 'onlyMe' ? 'only me' : part.name === 'ofCases' ? 'of ... cases' : part.name;
+    if (seen.has(part.name)) return refused(diagnosis('clause-twice', part.span, [word]));
+    seen.add(part.name);
+    const next = withClause(found, part, typed);
+    if (!next.ok) return next;
+    found = next.value;
+  }
+  return settled(found);
+}
+
+function withClause(found: SettledClauses, part: ClausePart, typed: string): Settled<SettledClauses> {
+  const { clauses } = found;
+  const set = (more: Partial<Clauses>) =>
+    settled<SettledClauses>({ ...found, clauses: { ...clauses, ...more } });
+  switch (part.name) {
+    case 'level': {
+      const text = `${part.number?.text ?? part.body.replace('%', '')}%`;
+      const value = Number(((part.number?.value ?? NaN) / 100).toPrecision(15));
+      if (!(value >= 0.5 && value <= 0.9999))
+        return refused(diagnosis('level-out-of-range', part.span, [text]));
+      return set({ level: { value, text } });
+    }
+    case 'per':
+      if (part.number === null || part.number.value < 1 || !Number.isInteger(part.number.value)) {
+        return refused(diagnosis('not-whole', part.span, [part.body]));
+      }
+      return set({ per: part.number.value });
+    case 'population':
+    case 'ofCases': {
+      if (part.number === null)
+        return refused(diagnosis('clause-without-value', part.span, [part.name, 'population 84,000']));
+      const quantity = countQuantity({ written: part.number, suppressed: false }, part.span, typed);
+      if (!quantity.ok) return quantity;
+      if (quantity.value.value === 0)
+        return refused(diagnosis('total-zero', part.span, [quantity.value.text]));
+      if (part.name === 'population') return set({ population: quantity.value });
+      const noun = part.body === '' ? null : part.body;
+      return settled({ ...found, ofCases: { quantity: quantity.value, noun } });
+    }
+    case 'reference':
+      return settled({ ...found, clauses: { ...clauses, reference: part.body }, referenceSpan: part.span });
+    case 'among':
+    case 'period':
+    case 'source':
+    case 'note':
+      return set({ [part.name]: part.body });
+    case 'exact':
+      return set({ exact: true });
+    case 'onlyMe':
+      return set({ onlyMe: true });
+  }
+}

@@ -1,0 +1,287 @@
+import { diagnosis } from './diagnosis.ts';
+import { chosenByOutcome, earlierOf, nameKey } from './labels.ts';
+import { countQuantity, countsThatFit, exactCount, refused, settled, shareQuantity } from './quantities.ts';
+import type { Settled } from './quantities.ts';
+import type {
+  BareCountsGroup,
+  CountsGroup,
+  Question,
+  Quantity,
+  ReadingRemark,
+  StatedGroup,
+} from './question.ts';
+import type { Setting } from './setting.ts';
+import type { Item, Words } from './tree.ts';
+
+/** What the words around the figures mean: names, the unit, and what a case is called. */
+interface Naming {
+  readonly labels: readonly (string | null)[];
+  readonly unit: string | null;
+  readonly caseNoun: string | null;
+}
+
+/**
+ * Words before a figure are its name. Words after it are the unit if a name stands before, or if they are the same after every
+ * figure; otherwise they are the name.
+ */
+export function namingOf(items: readonly Item[]): Naming {
+  const nouns = items
+    .map(({ figure }) => (figure.kind === 'count' ? figure.noun?.text : null) ?? null)
+    .filter((noun) => noun !== null);
+  const afters = items.map(({ after }) => after?.text ?? null);
+  const named = items.some(({ name }) => name !== null);
+  const present = afters.filter((after) => after !== null);
+  const same = present.length > 0 && present.every((after) => nameKey(after) === nameKey(present[0] ?? ''));
+  const isUnit = named || (same && items.length > 1 && present.length >= 1);
+  const labels = items.map(({ name, after }) => name?.text ?? (isUnit ? null : (after?.text ?? null)));
+  return { labels, unit: isUnit && same ? (present[0] ?? null) : null, caseNoun: nouns[0] ?? null };
+}
+
+/** The group that the others are compared with: the named one, the earlier one, or the last. */
+export function referenceOf(labels: readonly (string | null)[], setting: Setting): Settled<number> {
+  const { clauses, referenceSpan } = setting.given;
+  if (clauses.reference !== null) {
+    const key = nameKey(clauses.reference);
+    const index = labels.findIndex((label) => label !== null && nameKey(label) === key);
+    if (index !== -1) return settled(index);
+    const known = labels
+      .map((label, at) => label ?? (at === 0 ? 'the first group' : 'the second group'))
+      .join(', ');
+    return refused(
+      diagnosis('reference-unknown', referenceSpan ?? { from: 0, to: 0 }, [clauses.reference, known]),
+    );
+  }
+  const earlier = earlierOf(labels);
+  if (earlier === null || earlier === labels.length - 1) return settled(labels.length - 1);
+  const text = labels[earlier] ?? '';
+  return settled(earlier, [{ id: 'time-order', text, readAs: text, span: { from: 0, to: 0 } }]);
+}
+
+/** The same name twice is refused, and so are too many groups and a person as a name. */
+export function checkNames(
+  items: readonly Item[],
+  labels: readonly (string | null)[],
+  setting: Setting,
+): Settled<null> {
+  const beyond = items[setting.mostGroups];
+  if (beyond !== undefined)
+    return refused(diagnosis('too-many-groups', beyond.span, [String(setting.mostGroups)]));
+  const seen = new Set<string>();
+  for (const [index, label] of labels.entries()) {
+    const item = items[index];
+    if (label === null || item === undefined) continue;
+    const place = (item.name ?? item.after ?? (item as { readonly span: Words['span'] })) as {
+      readonly span: Words['span'];
+    };
+    if (label.startsWith('@')) return refused(diagnosis('mention-as-name', place.span));
+    if (seen.has(nameKey(label))) return refused(diagnosis('same-name-twice', place.span, [label]));
+    seen.add(nameKey(label));
+  }
+  return settled(null);
+}
+
+/** Counts: every group has its cases and its total. */
+export function settleCounts(items: readonly Item[], setting: Setting): Settled<Question> {
+  const naming = namingOf(items);
+  const names = checkNames(items, naming.labels, setting);
+  if (!names.ok) return names;
+  const remarks: ReadingRemark[] = [...setting.remarks];
+  const groups: CountsGroup[] = [];
+  for (const [index, item] of items.entries()) {
+    const group = countsGroup(item, naming.labels[index] ?? null, setting);
+    if (!group.ok) return group;
+    groups.push(group.value);
+    remarks.push(...group.remarks);
+  }
+  const reference = referenceOf(naming.labels, setting);
+  if (!reference.ok) return reference;
+  return settled({
+    kind: 'counts',
+    groups,
+    reference: groups.length === 1 ? 0 : reference.value,
+    chosenByOutcome: chosenByOutcome(naming.labels),
+    clauses: setting.given.clauses,
+    unit: naming.unit,
+    caseNoun: naming.caseNoun,
+    remarks: [...remarks, ...placed(reference.remarks, items)],
+  });
+}
+
+const placed = (remarks: readonly ReadingRemark[], items: readonly Item[]) =>
+  remarks.map((remark) => ({ ...remark, span: items[0]?.span ?? remark.span }));
+
+function countsGroup(item: Item, label: string | null, setting: Setting): Settled<CountsGroup> {
+  const { figure, stated } = item;
+  if (figure.total === null) {
+    const text = setting.typed.slice(item.span.from, item.span.to).trim();
+    return refused(
+      diagnosis(label === null ? 'one-count' : 'second-total-missing', item.span, [label ?? text]),
+    );
+  }
+  const total = countQuantity(
+    { written: figure.total.written, suppressed: false },
+    figure.total.span,
+    setting.typed,
+  );
+  if (!total.ok) return total;
+  const figureText = setting.typed.slice(item.span.from, item.span.to).trim();
+  if (total.value.value === 0) return refused(diagnosis('total-zero', figure.total.span, [figureText]));
+  const cases =
+    figure.kind === 'count'
+      ? countQuantity(figure.count, figure.countSpan, setting.typed)
+      : casesFromShare(figure, total.value);
+  if (!cases.ok) return cases;
+  if (cases.value.low > total.value.high) {
+    const span = { from: cases.value.span.from, to: total.value.span.to };
+    const turned = `${setting.typed.slice(0, span.from)}${total.value.text} of ${cases.value.text}${setting.typed.slice(span.to)}`;
+    return refused(
+      diagnosis(
+        'more-cases-than-people',
+        span,
+        [cases.value.text, total.value.text],
+        cases.value.value > 0 ? [turned] : [],
+      ),
+    );
+  }
+  const once: readonly ReadingRemark[] =
+    figure.kind === 'count' && figure.eachCountedOnce
+      ? [
+          {
+            id: 'each-counted-once',
+            text: setting.typed.slice(figure.countSpan.from, figure.total.span.to),
+            readAs: '',
+            span: item.span,
+          },
+        ]
+      : [];
+  return settled(
+    {
+      label,
+      cases: cases.value,
+      total: total.value,
+      stated: stated === null ? null : shareQuantity(stated.share, stated.span),
+      span: item.span,
+    },
+    [...cases.remarks, ...total.remarks, ...once],
+  );
+}
+
+/** `1.5% of 1,204` is 18; `0.4% of 2,377` is 9 or 10; `58.1% of 75` is no count at all. */
+function casesFromShare(
+  figure: Extract<Item['figure'], { kind: 'share' }>,
+  total: Quantity,
+): Settled<Quantity> {
+  if (figure.share.value > 1)
+    return refused(diagnosis('share-above-one', figure.shareSpan, [figure.share.text]));
+  const fit = countsThatFit(figure.share, total.value);
+  if (fit === null)
+    return refused(diagnosis('no-count-fits', figure.shareSpan, [figure.share.text, total.text]));
+  const span = figure.shareSpan;
+  const remark = (readAs: string): ReadingRemark => ({
+    id: 'count-from-percentage',
+    text: `${figure.share.text} of ${total.text}`,
+    readAs,
+    span,
+  });
+  if (fit.low === fit.high) {
+    const [number] = [fit.low];
+    return settled(exactCount(number, number.toLocaleString('en-US'), span), [
+      remark(number.toLocaleString('en-US')),
+    ]);
+  }
+  return settled(
+    {
+      text: `${figure.share.text} of ${total.text}`,
+      value: (fit.low + fit.high) / 2,
+      low: fit.low,
+      high: fit.high,
+      precision: 'range',
+      span,
+    },
+    [remark(`${fit.low.toLocaleString('en-US')} to ${fit.high.toLocaleString('en-US')}`)],
+  );
+}
+
+/** Percentages or frequencies without counts. One alone has nothing to be compared with. */
+export function settleStated(items: readonly Item[], setting: Setting): Settled<Question> {
+  const nouns = items.map(({ figure }) => (figure.kind === 'share' ? (figure.noun?.text ?? null) : null));
+  const naming = namingOf(items);
+  const differ =
+    new Set(nouns.map((noun) => noun?.toLowerCase())).size === nouns.length &&
+    nouns.every((noun) => noun !== null);
+  const labels = naming.labels.map((label, index) => label ?? (differ ? (nouns[index] ?? null) : null));
+  const groups: StatedGroup[] = [];
+  for (const [index, item] of items.entries()) {
+    if (item.figure.kind !== 'share') throw new Error('a stated figure is a share');
+    const { share, shareSpan } = item.figure;
+    if (share.value > 1) return refused(diagnosis('share-above-one', shareSpan, [share.text]));
+    groups.push({
+      label: labels[index] ?? null,
+      share: shareQuantity(share, shareSpan),
+      form: share.form,
+      span: item.span,
+    });
+  }
+  const [only] = groups;
+  if (groups.length === 1 && only !== undefined)
+    return refused(
+      diagnosis(
+        'one-share',
+        only.span,
+        [only.share.text],
+        [`${only.share.text} vs ...`, 'night shift: 18 of 1,204'],
+      ),
+    );
+  const names = checkNames(items, labels, setting);
+  if (!names.ok) return names;
+  const reference = referenceOf(labels, setting);
+  if (!reference.ok) return reference;
+  return settled({
+    kind: 'stated',
+    groups,
+    reference: reference.value,
+    clauses: setting.given.clauses,
+    unit: differ ? null : (naming.unit ?? nouns[0] ?? null),
+    caseNoun: null,
+    remarks: [...setting.remarks, ...placed(reference.remarks, items)],
+  });
+}
+
+/** Counts whose totals nobody stated. */
+export function settleBareCounts(items: readonly Item[], setting: Setting): Settled<Question> {
+  const naming = namingOf(items);
+  const groups: BareCountsGroup[] = [];
+  const remarks: ReadingRemark[] = [...setting.remarks];
+  for (const [index, item] of items.entries()) {
+    if (item.figure.kind !== 'count') throw new Error('a bare count is a count');
+    const cases = countQuantity(item.figure.count, item.figure.countSpan, setting.typed);
+    if (!cases.ok) return cases;
+    remarks.push(...cases.remarks);
+    groups.push({ label: naming.labels[index] ?? null, cases: cases.value, span: item.span });
+  }
+  const [only] = groups;
+  if (groups.length === 1 && only !== undefined) {
+    const name = only.label === null ? '' : `${only.label}: `;
+    return refused(
+      diagnosis(
+        'one-count',
+        only.span,
+        [`${name}${only.cases.text}`],
+        [`${name}${only.cases.text} of ... vs ... of ...`],
+      ),
+    );
+  }
+  const names = checkNames(items, naming.labels, setting);
+  if (!names.ok) return names;
+  const reference = referenceOf(naming.labels, setting);
+  if (!reference.ok) return reference;
+  return settled({
+    kind: 'bare-counts',
+    groups,
+    reference: reference.value,
+    clauses: setting.given.clauses,
+    unit: naming.unit,
+    caseNoun: null,
+    remarks: [...remarks, ...placed(reference.remarks, items)],
+  });
+}
