@@ -1,3 +1,4 @@
+import { printCanonical } from '../../grammar/print-canonical.ts';
 import { readLine } from '../../grammar/read-line.ts';
 import type { Diagnosis, HelpTopic, LineLimits } from '../../grammar/question.ts';
 import { reportOf } from '../report/report-of.ts';
@@ -5,7 +6,7 @@ import type { Report } from '../report/report.ts';
 
 /** What the house says to one typed line. */
 export type Answer =
-  | { readonly kind: 'report'; readonly line: string; readonly report: Report }
+  | { readonly kind: 'report'; readonly line: string; readonly report: Report; readonly canonical: string }
   | { readonly kind: 'help'; readonly line: string; readonly topic: HelpTopic }
   | { readonly kind: 'refusal'; readonly line: string; readonly diagnosis: Diagnosis };
 
@@ -17,7 +18,12 @@ export function answerLine(line: string, limits: LineLimits): Answer {
   const reading = readLine(line, limits);
   switch (reading.kind) {
     case 'question':
-      return { kind: 'report', line, report: reportOf(reading.question) };
+      return {
+        kind: 'report',
+        line,
+        report: reportOf(reading.question),
+        canonical: printCanonical(reading.question),
+      };
     case 'help':
       return { kind: 'help', line, topic: reading.topic };
     case 'diagnosis':

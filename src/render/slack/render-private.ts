@@ -49,14 +49,17 @@ export function renderHelp(topic: HelpTopic): SlackMessage {
 }
 
 /** What the asker alone is told when something outside the figure went wrong. */
-export type Notice = 'not-in-channel' | 'could-not-post' | 'busy';
+export type Notice = 'not-in-channel' | 'could-not-post' | 'gone' | 'asked' | 'failed';
 
 const notices = {
   'not-in-channel':
     'Divisor is not in this conversation, so the answer is shown to you alone. Invite it to have answers posted here.',
   'could-not-post':
     'The answer could not be posted here, or it is not certain that it was; it is not posted twice. Send the line again if it is missing.',
-  busy: 'The answer takes longer than usual; it will be posted when its turn comes.',
+  gone: 'This is no longer here: it was taken before, or the check is not kept any more. Send the line again.',
+  asked: 'Asked. The answer comes in a moment.',
+  failed:
+    'Something went wrong on our side, and the line was not answered. Nothing was posted. Please send it again.',
 } satisfies Record<Notice, string>;
 
 /** A notice for one person. */
