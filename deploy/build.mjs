@@ -5,6 +5,8 @@ import { fileURLToPath } from 'node:url';
 import { build } from 'esbuild';
 
 const at = (path) => fileURLToPath(new URL(`../${path}`, import.meta.url));
+// These find parts of their own at run time and stay as they are installed.
+const slackAndDatabase = ['@slack/*', 'better-sqlite3', 'kysely', 'dotenv', 'undici'];
 const common = { bundle: true, platform: 'node', target: 'node20', format: 'esm', logLevel: 'warning' };
 
 await rm(at('dist'), { recursive: true, force: true });
@@ -20,7 +22,7 @@ await Promise.all([
     ...common,
     entryPoints: [at('src/cli/start.ts')],
     outfile: at('dist/start.js'),
-    packages: 'external',
+    external: slackAndDatabase,
     sourcemap: true,
   }),
   build({

@@ -1,4 +1,4 @@
-import { jStat } from 'jstat';
+import jstat from 'jstat';
 import { checkLevel } from './argument-error.ts';
 
 const known = new Map<number, number>();
@@ -18,7 +18,7 @@ export function criticalValue(level: number): number {
   const before = known.get(level);
   if (before !== undefined) return before;
   // The lower tail is the one without a digit lost to 1 - level.
-  const value = -jStat.normal.inv((1 - level) / 2, 0, 1);
+  const value = -jstat.normal.inv((1 - level) / 2, 0, 1);
   if (known.size < 64) known.set(level, value);
   return value;
 }

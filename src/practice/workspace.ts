@@ -1,0 +1,34 @@
+/** The invented people and channels of the practice room. */
+export interface Person {
+  readonly id: string;
+  readonly name: string;
+  readonly work: string;
+}
+
+export interface Channel {
+  readonly id: string;
+  readonly name: string;
+}
+
+export const people: readonly Person[] = [
+  { id: 'UADA', name: 'Ada', work: 'communications' },
+  { id: 'UBEN', name: 'Ben', work: 'analyst on call' },
+  { id: 'UCLEO', name: 'Cleo', work: 'newsroom' },
+];
+
+export const channels: readonly Channel[] = [
+  { id: 'CFERRY', name: 'ferry desk' },
+  { id: 'CTOWN', name: 'town hall press' },
+];
+
+export const botPerson: Person = { id: 'UDIVISOR', name: 'Divisor', work: 'checks figures' };
+export const teamId = 'THARROWMERE';
+export const botId = 'BDIVISOR';
+
+/** Lines that the page offers to try. */
+export const linesToTry: readonly string[] = [
+  'cases: no helmet 44, helmet 31; coverage: no helmet 38%',
+  'night shift: 18 of 1,204 vs day shift: 9 of 2,377',
+  '71% of the injured vs 38% of riders',
+  '18 of 12',
+];
