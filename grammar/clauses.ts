@@ -60,10 +60,12 @@ export function clauseOf(part: Part, folded: string): ClausePart | null {
       : null;
   switch (first.tokenType) {
     case token.Level:
-      if (number === null) return { kind: 'no-value', word: 'level', example: examples.level };
+      if (number === null)
+        return tokens.length <= 2 ? { kind: 'no-value', word: 'level', example: examples.level } : null;
       return tokens.length <= 3 ? { kind: 'clause', name: 'level', body: rest, number } : null;
     case token.Per:
-      if (number === null) return { kind: 'no-value', word: 'per', example: examples.per };
+      if (number === null)
+        return tokens.length === 1 ? { kind: 'no-value', word: 'per', example: examples.per } : null;
       return { kind: 'clause', name: 'per', body: rest, number };
     case token.Population: {
       const own = second?.tokenType === token.Colon ? numberAfterColon(part) : number;

@@ -20,7 +20,7 @@ export function diagnosis(
   suggestions: readonly (string | Suggestion)[] = [],
 ): Diagnosis {
   return {
-    id: id.startsWith('two-readings') || id === 'year-or-people' ? 'two-readings' : id,
+    id: id === 'two-readings-shares' ? 'two-readings' : id,
     message: messageText(id, ...pieces),
     span,
     suggestions: suggestions

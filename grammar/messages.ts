@@ -13,6 +13,7 @@ export const messages = {
   'total-missing': (count: string) => `${count} of what? I need a total after "of".`,
   'second-total-missing': (name: string) =>
     `${name} has a count but no total, and the other group has one. Out of how many?`,
+  'group-missing': (word: string) => `${word} what? I need a second group after it.`,
   'joined-number': (joined: string) => `Is this one number, ${joined}? A space inside a number makes it two.`,
   'two-numbers': (count: string, total: string) =>
     `${count} and ${total}: a count and its total? Put "of" between them.`,
@@ -44,10 +45,10 @@ export const messages = {
   'cases-by-group': () => 'I need the cases of at least two groups, or how many of all cases: "44 of 75".',
   'no-count-fits': (share: string, total: string) => `No count out of ${total} gives ${share}.`,
   'same-name-twice': (name: string) => `${name} stands twice. Give the two groups different names.`,
+  'total-first': (total: string) => `The total, ${total}, stands first. Put the count before it.`,
   'one-share': (share: string) => `${share} of what, compared with what? I need a second group, or a count.`,
   'one-count': (count: string) => `${count} out of how many? Add the total, or a second group.`,
   'mixed-figures': () => 'Some groups have counts and others percentages. Write all of them the same way.',
-  'per-in-the-middle': (text: string) => `${text} belongs at the end, after the last group.`,
   'level-out-of-range': (text: string) => `A level of ${text} is outside 50% to 99.99%.`,
   'clause-without-value': (word: string, example: string) =>
     `"${word}" needs something after it, as in "${example}".`,
@@ -56,7 +57,8 @@ export const messages = {
   'clauses-only': () => 'There is no figure here, only what goes with one. Put the figure first.',
   'date-in-figure': (text: string) =>
     `${text} looks like a date. A date belongs after "period"; two figures need "vs" between them.`,
-  'population-too-small': (text: string) => `A population of ${text} is smaller than the number of cases.`,
+  'population-too-small': (text: string) =>
+    `In a population of ${text} a group would have more cases than people. Is it the right population?`,
   'mention-as-name': () => 'A person cannot be the name of a group here. Write the name out without the @.',
   'two-readings-shares': (one: string, ofOne: string, other: string, ofOther: string) =>
     `${one} is a share of ${ofOne}, ${other} a share of ${ofOther}. I can work out the ratio per person from the two, or compare them as two separate groups.`,

@@ -33,7 +33,7 @@ const suffixes: Readonly<Record<string, number>> = {
  * multiplying would make fractions of a person (2.01k as 2009.9999999999998).
  */
 export function writtenNumber(spelling: string, magnitude: string | null): WrittenNumber {
-  const typed = spelling.toLowerCase().replace(/\.$/, '');
+  const typed = spelling.toLowerCase().trim().replace(/\.$/, '');
   const suffix = /(?:k|m|bn)$/.exec(typed)?.[0] ?? null;
   const digits = suffix === null ? typed : typed.slice(0, -suffix.length);
   const { plain, commas } = withoutCommas(digits);

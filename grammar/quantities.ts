@@ -117,3 +117,29 @@ export function countsThatFit(
   const high = Math.floor(share.high * total + hair);
   return low > high ? null : { low, high };
 }
+
+/** `1.5% of 1,204` is 18; `0.4% of 2,377` is 9 or 10; `58.1% of 75` is no count at all, which is said. */
+export function countFromShare(share: ShareValue, span: Span, total: Quantity): Settled<Quantity> {
+  if (share.value > 1) return refused(diagnosis('share-above-one', span, [share.text]));
+  const fit = countsThatFit(share, total.value);
+  if (fit === null) return refused(diagnosis('no-count-fits', span, [share.text, total.text]));
+  const remark = (readAs: string): ReadingRemark => ({
+    id: 'count-from-percentage',
+    text: `${share.text} of ${total.text}`,
+    readAs,
+    span,
+  });
+  const text = (count: number) => count.toLocaleString('en-US');
+  if (fit.low === fit.high) return settled(exactCount(fit.low, text(fit.low), span), [remark(text(fit.low))]);
+  return settled(
+    {
+      text: `${share.text} of ${total.text}`,
+      value: (fit.low + fit.high) / 2,
+      low: fit.low,
+      high: fit.high,
+      precision: 'range',
+      span,
+    },
+    [remark(`${text(fit.low)} to ${text(fit.high)}`)],
+  );
+}

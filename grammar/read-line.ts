@@ -2,6 +2,7 @@ import type { IRecognitionException, IToken } from 'chevrotain';
 import { diagnosis, linesToTry } from './diagnosis.ts';
 import { fold, typedSpan } from './fold.ts';
 import type { Folded } from './fold.ts';
+import { joinSpacedNumbers } from './odd-figures.ts';
 import { parseTags } from './parser.ts';
 import type { Diagnosis, HelpTopic, LineLimits, LineReading } from './question.ts';
 import { settleLine } from './settle.ts';
@@ -25,7 +26,7 @@ export function readLine(line: string, limits: LineLimits): LineReading {
   const topic = helpTopicOf(line);
   if (topic !== null) return { kind: 'help', topic };
   const folded = fold(line);
-  const fine = fineTokensOf(folded.text);
+  const fine = joinSpacedNumbers(fineTokensOf(folded.text));
   if (/^[\s?]*$/.test(folded.text))
     return refusal(diagnosis('empty-line', { from: 0, to: line.length }, [], linesToTry));
   const { tags: tagged, fault, hasFigure } = tagLine(fine, folded);

@@ -1,6 +1,6 @@
 import { diagnosis } from './diagnosis.ts';
 import { chosenByOutcome, earlierOf, nameKey } from './labels.ts';
-import { countQuantity, countsThatFit, exactCount, refused, settled, shareQuantity } from './quantities.ts';
+import { countFromShare, countQuantity, refused, settled, shareQuantity } from './quantities.ts';
 import type { Settled } from './quantities.ts';
 import type {
   BareCountsGroup,
@@ -11,7 +11,7 @@ import type {
   StatedGroup,
 } from './question.ts';
 import type { Setting } from './setting.ts';
-import type { Item, Words } from './tree.ts';
+import type { Item } from './tree.ts';
 
 /** What the words around the figures mean: names, the unit, and what a case is called. */
 interface Naming {
@@ -70,9 +70,7 @@ export function checkNames(
   for (const [index, label] of labels.entries()) {
     const item = items[index];
     if (label === null || item === undefined) continue;
-    const place = (item.name ?? item.after ?? (item as { readonly span: Words['span'] })) as {
-      readonly span: Words['span'];
-    };
+    const place = item.name ?? item.after ?? item;
     if (label.startsWith('@')) return refused(diagnosis('mention-as-name', place.span));
     if (seen.has(nameKey(label))) return refused(diagnosis('same-name-twice', place.span, [label]));
     seen.add(nameKey(label));
@@ -129,9 +127,13 @@ function countsGroup(item: Item, label: string | null, setting: Setting): Settle
   const cases =
     figure.kind === 'count'
       ? countQuantity(figure.count, figure.countSpan, setting.typed)
-      : casesFromShare(figure, total.value);
+      : countFromShare(figure.share, figure.shareSpan, total.value);
   if (!cases.ok) return cases;
-  if (cases.value.low > total.value.high) {
+  const tooMany =
+    cases.value.precision === 'range'
+      ? cases.value.low > total.value.low
+      : cases.value.value > total.value.value;
+  if (tooMany) {
     const span = { from: cases.value.span.from, to: total.value.span.to };
     const turned = `${setting.typed.slice(0, span.from)}${total.value.text} of ${cases.value.text}${setting.typed.slice(span.to)}`;
     return refused(
@@ -143,6 +145,13 @@ function countsGroup(item: Item, label: string | null, setting: Setting): Settle
       ),
     );
   }
+  // No more cases than people: where a range would allow more, it ends at the total.
+  const possible: Quantity = {
+    ...cases.value,
+    high: Math.min(cases.value.high, Math.max(total.value.low, cases.value.low)),
+  };
+  const held: Quantity =
+    possible.precision === 'range' ? { ...possible, value: (possible.low + possible.high) / 2 } : possible;
   const once: readonly ReadingRemark[] =
     figure.kind === 'count' && figure.eachCountedOnce
       ? [
@@ -157,48 +166,12 @@ function countsGroup(item: Item, label: string | null, setting: Setting): Settle
   return settled(
     {
       label,
-      cases: cases.value,
+      cases: held,
       total: total.value,
       stated: stated === null ? null : shareQuantity(stated.share, stated.span),
       span: item.span,
     },
     [...cases.remarks, ...total.remarks, ...once],
-  );
-}
-
-/** `1.5% of 1,204` is 18; `0.4% of 2,377` is 9 or 10; `58.1% of 75` is no count at all. */
-function casesFromShare(
-  figure: Extract<Item['figure'], { kind: 'share' }>,
-  total: Quantity,
-): Settled<Quantity> {
-  if (figure.share.value > 1)
-    return refused(diagnosis('share-above-one', figure.shareSpan, [figure.share.text]));
-  const fit = countsThatFit(figure.share, total.value);
-  if (fit === null)
-    return refused(diagnosis('no-count-fits', figure.shareSpan, [figure.share.text, total.text]));
-  const span = figure.shareSpan;
-  const remark = (readAs: string): ReadingRemark => ({
-    id: 'count-from-percentage',
-    text: `${figure.share.text} of ${total.text}`,
-    readAs,
-    span,
-  });
-  if (fit.low === fit.high) {
-    const [number] = [fit.low];
-    return settled(exactCount(number, number.toLocaleString('en-US'), span), [
-      remark(number.toLocaleString('en-US')),
-    ]);
-  }
-  return settled(
-    {
-      text: `${figure.share.text} of ${total.text}`,
-      value: (fit.low + fit.high) / 2,
-      low: fit.low,
-      high: fit.high,
-      precision: 'range',
-      span,
-    },
-    [remark(`${fit.low.toLocaleString('en-US')} to ${fit.high.toLocaleString('en-US')}`)],
   );
 }
 

@@ -108,7 +108,7 @@ function twoReadings(items: readonly Item[], figures: readonly ItemFigureShare[]
   if (one === undefined || other === undefined || first === undefined || second === undefined)
     throw new Error('two readings need two figures');
   const [ofOne, ofOther] = [one.noun?.text ?? '', other.noun?.text ?? ''];
-  const name = first.name?.text ?? first.after?.text ?? 'the group asked about';
+  const name = first.name?.text ?? first.after?.text ?? 'this group';
   const asShares = settleShares(
     {
       cases: [{ ...first, name: { text: name, span: first.span }, after: null }],

@@ -1,13 +1,31 @@
 import type { IToken, TokenType } from 'chevrotain';
-import { clauseOf, unquoted } from './clauses.ts';
+import { clauseOf } from './clauses.ts';
 import { diagnosis } from './diagnosis.ts';
 import { figureAt } from './figures.ts';
+import { oddFigureIn } from './odd-figures.ts';
 import type { Figure } from './figures.ts';
 import { typedSpan } from './fold.ts';
 import type { Folded } from './fold.ts';
 import { partsOf } from './parts.ts';
+import { withoutStated } from './stated-beside.ts';
+import type { StatedShare } from './stated-beside.ts';
 import type { Part } from './parts.ts';
 import type { Diagnosis } from './question.ts';
+import {
+  endOffset,
+  hasColon,
+  hasWords,
+  lastIndexOf,
+  lastOfEachItem,
+  leadStart,
+  offset,
+  separatorIn,
+  strongSeparators,
+  textOf,
+  trimEnd,
+  withoutDash,
+  wordsText,
+} from './tag-words.ts';
 import * as tags from './tags.ts';
 import type { Tagged, TagPayload } from './tags.ts';
 import * as token from './tokens.ts';
@@ -19,17 +37,6 @@ export interface TaggedLine {
   /** Whether the line holds any number at all. */
   readonly hasFigure: boolean;
 }
-
-const separators: ReadonlySet<unknown> = new Set([
-  token.Versus,
-  token.Against,
-  token.And,
-  token.Comma,
-  token.Arrow,
-  token.Slash,
-  token.Ampersand,
-]);
-const strongSeparators: ReadonlySet<unknown> = new Set([token.Versus, token.Against, token.Arrow]);
 
 /** Settles in one linear pass what each fine token stands for: part of a name, of a figure, of a clause, or between groups. */
 export function tagLine(fine: readonly IToken[], folded: Folded): TaggedLine {
@@ -87,14 +94,16 @@ class TaggingPass {
           return;
       }
     }
-    const { figures, used } = this.#figuresOf(part.tokens);
+    this.fault ??= oddFigureIn(part.tokens, this.#folded);
+    const { tokens, stated } = withoutStated(part.tokens);
+    const { figures, used } = this.#figuresOf(tokens);
     const isHead =
       head === 'coverage' ||
       (head === 'cases' && (hasCoverage || !figures.some(({ kind }) => kind === 'counts')));
     let start = 0;
     if (isHead) {
-      start = part.tokens[1]?.tokenType === token.Colon ? 2 : 1;
-      const last = part.tokens[start - 1];
+      start = tokens[1]?.tokenType === token.Colon ? 2 : 1;
+      const last = tokens[start - 1];
       this.push(
         head === 'cases' ? tags.CasesHeadTag : tags.CoverageHeadTag,
         first.startOffset,
@@ -103,10 +112,11 @@ class TaggingPass {
       );
     }
     this.#list(
-      part,
+      tokens,
       start,
       figures.filter((figure) => figure.start >= start),
       used,
+      stated,
     );
   }
 
@@ -126,8 +136,13 @@ class TaggingPass {
     return { figures: all.filter(({ kind }) => kind !== 'bare'), used: true };
   }
 
-  #list(part: Part, start: number, figures: readonly Figure[], connected: boolean): void {
-    const { tokens } = part;
+  #list(
+    tokens: readonly IToken[],
+    start: number,
+    figures: readonly Figure[],
+    connected: boolean,
+    stated: ReadonlyMap<number, StatedShare>,
+  ): void {
     const [firstFigure] = figures;
     if (firstFigure === undefined) {
       this.#words(tags.AfterTag, tokens, start, tokens.length);
@@ -142,10 +157,49 @@ class TaggingPass {
     figures.forEach((figure, index) => {
       const previous = figures[index - 1];
       if (previous !== undefined) this.#gap(tokens, previous, figure, before, trailing);
-      this.#figure(tokens, figure, previous);
+      this.#figure(tokens, figure);
+      const beside = stated.get(offset(tokens, figure.start));
+      if (beside !== undefined)
+        this.push(tags.StatedTag, beside.from, beside.to, { kind: 'share', share: beside.share });
     });
     const last = figures.at(-1);
-    if (last !== undefined) this.#after(tokens, last, trimEnd(tokens, last.end));
+    if (last === undefined) return;
+    const end = trimEnd(tokens, last.end);
+    const separator = tokens.findIndex(
+      (each, at) => at >= last.end && at < end && strongSeparators.has(each.tokenType),
+    );
+    this.#after(tokens, last, separator === -1 ? end : separator);
+    if (separator !== -1) this.#missingGroup(tokens, separator, end);
+  }
+
+  /** Behind a last `vs` there is nothing, only words, or a count without its total. */
+  #missingGroup(tokens: readonly IToken[], separator: number, end: number): void {
+    const number = tokens.findIndex(
+      (each, at) => at > separator && at < end && each.tokenType === token.NumberToken,
+    );
+    const [from, to] = [offset(tokens, separator), endOffset(tokens, end)];
+    const word = tokens[separator]?.image ?? '';
+    if (number === -1) {
+      this.#refuse(
+        'group-missing',
+        from,
+        to,
+        [`"${word}"`],
+        [`${this.#repaired(from, to, word)} ... of ...`],
+      );
+      return;
+    }
+    const name = textOf(this.#folded.text, tokens, separator + 1, number)
+      .replace(/:$/, '')
+      .trim();
+    const place = offset(tokens, number);
+    this.#refuse(
+      'second-total-missing',
+      place,
+      to,
+      [name === '' ? 'The second group' : name],
+      [`${this.#repaired(to, to, '')} of ...`],
+    );
   }
 
   /** Words before the first figure are its name. */
@@ -198,7 +252,7 @@ class TaggingPass {
     this.#words(tags.AfterTag, tokens, from, to);
   }
 
-  #figure(tokens: readonly IToken[], figure: Figure, previous: Figure | undefined): void {
+  #figure(tokens: readonly IToken[], figure: Figure): void {
     switch (figure.kind) {
       case 'bare':
         this.#push(tags.CasesTag, tokens, figure.start, figure.end, { kind: 'count', count: figure.count });
@@ -242,29 +296,30 @@ class TaggingPass {
           count: { written: figure.total, suppressed: false },
         });
         return;
-      case 'share': {
-        const beside = previous?.kind === 'counts' && this.#isBeside(tokens, previous.end, figure.start);
-        this.#push(beside ? tags.StatedTag : tags.ShareTag, tokens, figure.start, figure.end, {
-          kind: 'share',
-          share: figure.share,
-        });
+      case 'share':
+        this.#push(tags.ShareTag, tokens, figure.start, figure.end, { kind: 'share', share: figure.share });
+        return;
+      case 'rate':
+        this.#refuse(
+          'not-yet-rate',
+          offset(tokens, figure.start),
+          endOffset(tokens, figure.end),
+          [],
+          ['depot A: 14 of 5,200 vs depot B: 9 of 8,800'],
+        );
+        return;
+      case 'year': {
+        const [from, to] = [offset(tokens, figure.start), endOffset(tokens, figure.end)];
+        this.#refuse(
+          'year-or-people',
+          from,
+          to,
+          [figure.year],
+          [`${figure.year}: ${figure.count.text} of ... vs ...: ... of ...`],
+        );
         return;
       }
-      case 'rate':
-        this.#refuse('not-yet-rate', offset(tokens, figure.start), endOffset(tokens, figure.end));
-        return;
-      case 'year':
-        this.#refuse('year-or-people', offset(tokens, figure.start), endOffset(tokens, figure.end), [
-          figure.year,
-        ]);
-        return;
     }
-  }
-
-  /** `31 of 9,240 (3.4%)`: a percentage with nothing but a bracket between it and the counts. */
-  #isBeside(tokens: readonly IToken[], from: number, to: number): boolean {
-    for (let at = from; at < to; at += 1) if (tokens[at]?.tokenType !== token.Open) return false;
-    return to > from;
   }
 
   /** A total that was cut by a space after its comma: `18 of 1, 204`. */
@@ -285,9 +340,9 @@ class TaggingPass {
       )
         continue;
       const from = offset(tokens, figure.totalAt[0]);
-      this.#refuse('joined-number', from, endOffset(tokens, figure.end + 2), [
-        `${figure.total.text},${rest.image}`,
-      ]);
+      const joined = `${figure.total.text},${rest.image}`;
+      const to = endOffset(tokens, figure.end + 2);
+      this.#refuse('joined-number', from, to, [joined], [this.#repaired(from, to, joined)]);
     }
   }
 
@@ -337,91 +392,15 @@ class TaggingPass {
     from: number,
     to: number,
     pieces: readonly string[] = [],
+    suggestions: Parameters<typeof diagnosis>[3] = [],
   ): void {
-    this.fault ??= diagnosis(id, typedSpan(this.#folded, from, to), pieces);
+    this.fault ??= diagnosis(id, typedSpan(this.#folded, from, to), pieces, suggestions);
   }
-}
 
-const offset = (tokens: readonly IToken[], at: number) => tokens[at]?.startOffset ?? 0;
-const endOffset = (tokens: readonly IToken[], at: number) => {
-  const last = tokens[at - 1];
-  return last === undefined ? 0 : last.startOffset + last.image.length;
-};
-
-/** Words as one text: the quoted part where there is one, else as typed with single spaces, without a full stop at the end. */
-function textOf(folded: string, tokens: readonly IToken[], from: number, to: number): string {
-  const quoted = tokens.slice(from, to).find(({ tokenType }) => tokenType === token.Quoted);
-  if (quoted !== undefined && to - from === 1) return unquoted(quoted.image);
-  const text = folded
-    .slice(offset(tokens, from), endOffset(tokens, to))
-    .replace(/\s+/g, ' ')
-    .replace(/"/g, "'");
-  return text.replace(/[.\s]+$/, '');
-}
-
-const wordsText = (tokens: readonly IToken[], from: number, to: number) =>
-  tokens
-    .slice(from, to)
-    .map(({ image }) => image)
-    .join(' ')
-    .replace(/[.?\s]+$/, '');
-
-/** Leaves "is", "are" and "can I say" at the start of a question out of the name. */
-function leadStart(tokens: readonly IToken[], start: number): number {
-  return /^(?:is|are|was|were)$/i.test(tokens[start]?.image ?? '') && tokens.length > start + 1
-    ? start + 1
-    : start;
-}
-
-/** `night - 18 of 1,204`: a dash between name and figure acts as a colon. */
-const withoutDash = (tokens: readonly IToken[], from: number, to: number) =>
-  to > from && tokens[to - 1]?.tokenType === token.Dash ? to - 1 : to;
-
-/** Leaves "significant", "had an incident?" and the like alone, but a question mark at the end out. */
-function trimEnd(tokens: readonly IToken[], from: number): number {
-  let end = tokens.length;
-  while (
-    end > from &&
-    (tokens[end - 1]?.tokenType === token.Question ||
-      /^(?:significant(?:ly)?|ok|different)$/i.test(tokens[end - 1]?.image ?? ''))
-  )
-    end -= 1;
-  return end;
-}
-
-const isWord = (each: IToken | undefined) =>
-  each !== undefined &&
-  !separators.has(each.tokenType) &&
-  ![token.Colon, token.Open, token.Close, token.Dash, token.Question].includes(each.tokenType);
-const hasWords = (tokens: readonly IToken[], from: number, to: number) => tokens.slice(from, to).some(isWord);
-const hasColon = (tokens: readonly IToken[], from: number, to: number) =>
-  lastIndexOf(tokens, from, to, token.Colon) !== -1;
-
-function lastIndexOf(tokens: readonly IToken[], from: number, to: number, type: TokenType): number {
-  for (let at = to - 1; at >= from; at -= 1) if (tokens[at]?.tokenType === type) return at;
-  return -1;
-}
-
-/** Where two groups meet: a `vs` or an arrow if there is one, else the first comma, slash or `and`. */
-function separatorIn(tokens: readonly IToken[], from: number, to: number): number {
-  let weak = -1;
-  for (let at = from; at < to; at += 1) {
-    const type = tokens[at]?.tokenType;
-    if (strongSeparators.has(type)) return at;
-    if (weak === -1 && separators.has(type)) weak = at;
+  /** The typed line with one stretch written differently. */
+  #repaired(from: number, to: number, instead: string): string {
+    const { typed } = this.#folded;
+    const span = typedSpan(this.#folded, from, to);
+    return `${typed.slice(0, span.from)}${instead}${typed.slice(span.to)}`.trim();
   }
-  return weak;
-}
-
-/**
- * In a list of bare counts (`no helmet 44, two doses 31`) the last number of an item is its figure, unless only words follow
- * the first (`44 no helmet`).
- */
-function lastOfEachItem(figures: readonly Figure[], tokens: readonly IToken[]): Figure[] {
-  return figures.filter((figure, index) => {
-    const next = figures[index + 1];
-    if (next === undefined) return true;
-    const between = tokens.slice(figure.end, next.start);
-    return between.some(({ tokenType }) => separators.has(tokenType));
-  });
 }

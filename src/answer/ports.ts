@@ -4,12 +4,12 @@
  */
 
 export interface Clock {
-  now(): number;
+  readonly now: () => number;
 }
 
 export interface Ids {
   /** A new id that nobody can guess. */
-  next(): string;
+  readonly next: () => string;
 }
 
 /** Somebody's request, as it is stored before it is acknowledged. Holds no token and no bearer address. */

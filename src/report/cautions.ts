@@ -13,7 +13,6 @@ export const cautionIds = [
   'no-cases',
   'suppressed-cell',
   'shares-do-not-add-up',
-  'population-too-small',
   'picked-comparison',
   'few-cases',
   'small-risk',
@@ -75,24 +74,16 @@ function smallestExpected({ groups }: CountsQuestion): number {
 }
 
 function sharesCautions(question: SharesQuestion): readonly CautionId[] {
-  const { groups, clauses } = question;
+  const { groups } = question;
   const cases = groups.map((group) => group.cases);
   const counted = cases.filter((quantity) => quantity !== null);
   const caseShares = groups.reduce((sum, { caseShare }) => sum + caseShare.value, 0);
   const coverages = groups.reduce((sum, { coverage }) => sum + coverage.value, 0);
-  const populationShort =
-    clauses.population !== null &&
-    groups.some(
-      (group) =>
-        group.cases !== null &&
-        group.cases.value > group.coverage.value * (clauses.population?.value ?? Infinity),
-    );
   return [
     'base-rate',
     ...(Math.abs(caseShares - 1) > 1e-9 || Math.abs(coverages - 1) > 1e-9
       ? (['shares-do-not-add-up'] as const)
       : []),
-    ...(populationShort ? (['population-too-small'] as const) : []),
     ...(counted.length > 1 && counted.filter(({ value }) => value > 0).length === 1
       ? (['all-cases-in-one-group'] as const)
       : []),

@@ -112,7 +112,7 @@ export class StandInServer {
       this.#sockets.handleUpgrade(request, socket, head, (link) => {
         this.links.push(link);
         link.on('message', (data) => {
-          const ack = JSON.parse(String(data as Buffer)) as { envelope_id?: string };
+          const ack = JSON.parse(String(data)) as { envelope_id?: string };
           this.#acks.get(ack.envelope_id ?? '')?.(ack);
         });
         link.on('close', () => this.links.splice(this.links.indexOf(link), 1));

@@ -40,11 +40,6 @@ export const cautionCatalogue = {
     source: 'common practice',
     text: () => 'The shares do not add up to 100%: ask whether a group is missing or rounding did it.',
   },
-  'population-too-small': {
-    source: 'common practice',
-    text: () =>
-      'A group has more cases than its share of the population: the population or the coverage belongs to other people.',
-  },
   'picked-comparison': {
     source: 'Agresti et al. 2008, Statistics in Medicine 27:2870',
     text: () =>
