@@ -33,6 +33,9 @@ export function settleShares(parts: SharesParts, setting: Setting): Settled<Ques
       ]),
     );
   }
+  if (groups.some(({ coverage }) => coverage.value <= 0)) {
+    return refused(diagnosis('coverage-at-end', firstCoverage?.span ?? { from: 0, to: 0 }, ['100%']));
+  }
   const labels = groups.map(({ label }) => label);
   const names = checkNames(parts.cases, labels.slice(0, parts.cases.length), setting);
   if (!names.ok) return names;

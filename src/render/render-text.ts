@@ -1,3 +1,4 @@
+import { avoidLine } from './words/avoid.ts';
 import type { Diagnosis } from '../../grammar/question.ts';
 import { placeExcerpt } from '../../grammar/place-excerpt.ts';
 import type { Report } from '../report/report.ts';
@@ -27,11 +28,7 @@ export function renderText(report: Report, strong: Emphasis): string {
       words.missing.map(({ text }) => text),
       strong,
     ),
-    ...section(
-      'Better not',
-      words.avoid.map(({ because, text }) => `${because} So not: \u201c${text}\u201d`),
-      strong,
-    ),
+    ...section('Better not', words.avoid.map(avoidLine), strong),
     ...(words.table === null ? [] : [strong('Table'), ...columns(words.table), '']),
     strong('All readings'),
     ...words.rows.map(({ name, value }) => `  ${name}: ${value}`),

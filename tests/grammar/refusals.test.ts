@@ -42,6 +42,7 @@ const refused: readonly (readonly [string, string, string])[] = [
   ['58.1% of 75 vs 3 of 9', 'no-count-fits', '58.1% '],
   ['cases: a 10, b 5', 'coverage-missing', 'b 5'],
   ['cases: a 10, b 5; coverage: a 100%', 'coverage-at-end', '100%'],
+  ['cases: a 10, b 5, c 3; coverage: a 40%, b 60%', 'coverage-at-end', 'a 40%'],
   ['cases: a 10, b 5; coverage: a 0%', 'coverage-at-end', '0%'],
   ['cases: a 10, b 5; coverage: a 60%, b 70%', 'coverage-adds-up', 'a 60%'],
   ['cases: a 10, b 5; coverage: c 60%', 'coverage-unknown-group', 'c'],

@@ -111,8 +111,8 @@ export class StandInServer {
     this.#server.on('upgrade', (request, socket, head) => {
       this.#sockets.handleUpgrade(request, socket, head, (link) => {
         this.links.push(link);
-        link.on('message', (data) => {
-          const ack = JSON.parse(String(data)) as { envelope_id?: string };
+        link.on('message', (data: Buffer) => {
+          const ack = JSON.parse(data.toString('utf8')) as { envelope_id?: string };
           this.#acks.get(ack.envelope_id ?? '')?.(ack);
         });
         link.on('close', () => this.links.splice(this.links.indexOf(link), 1));

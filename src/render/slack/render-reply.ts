@@ -1,3 +1,4 @@
+import { avoidLine } from '../words/avoid.ts';
 import type { KnownBlock } from '@slack/types';
 import { printCanonical } from '../../../grammar/print-canonical.ts';
 import type { Report } from '../../report/report.ts';
@@ -23,7 +24,8 @@ const buttonWords = {
 /** The full answer, for the thread: at most 750 characters before the buttons for figures of usual length. */
 export function renderReply(report: Report, context: CheckContext): SlackMessage {
   const words = tell(report);
-  const [post] = words.posts;
+  // Three or more groups have a table instead; their sentences stand with the readings.
+  const post = words.table === null ? words.posts[0] : undefined;
   const lacking = lackingText(report);
   const careful = words.cautions.map(({ text }) => text).join(' ');
   const foot =
@@ -89,7 +91,7 @@ function partLines(
         title: 'All readings',
         lines: [
           ...words.rows.map(({ name, value }) => `${name}: ${value}`),
-          ...words.posts.slice(1).map((post) => `To post: ${postLine(post)}`),
+          ...words.posts.slice(words.table === null ? 1 : 0).map((post) => `To post: ${postLine(post)}`),
           ...shortLine(words),
         ],
       };
@@ -100,7 +102,7 @@ function partLines(
     case 'avoid':
       return {
         title: 'Better not posted',
-        lines: words.avoid.map(({ because, text }) => `${because} So not: \u201c${text}\u201d`),
+        lines: words.avoid.map(avoidLine),
       };
     case 'other':
       return {

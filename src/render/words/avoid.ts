@@ -57,7 +57,7 @@ function shareAsRisk(report: Report): Avoid {
   const single = one(question);
   return {
     because: `${text} is a share of the ${cases(question)}, not a risk.`,
-    text: `${single === null ? `Those in ${label(question, of)} have` : `A ${single} in ${label(question, of)} has`} a ${text} risk.`,
+    text: `${single === null ? `Those in ${label(question, of)} have` : `A ${single} in ${label(question, of)} has`} a risk of ${text}.`,
   };
 }
 
@@ -99,3 +99,7 @@ function causal(report: Report): Avoid {
     text: `${Label(report.question, of)} is the cause.`,
   };
 }
+
+/** "The reason. So not: ‘the sentence’", in one line; names keep quotation marks of their own. */
+export const avoidLine = ({ because, text }: Avoid): string =>
+  `${because} So not: \u201c${text.replaceAll('\u201c', '\u2018').replaceAll('\u201d', '\u2019')}\u201d`;

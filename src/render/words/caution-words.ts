@@ -1,9 +1,8 @@
 import type { CautionId } from '../../report/cautions.ts';
 import { readingsOf } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
-import { cases, label } from './labels.ts';
+import { cases } from './labels.ts';
 import { fixed, percent } from './numbers.ts';
-import { quantityText } from './read-as.ts';
 
 interface CautionEntry {
   /** Where the advice comes from; `common practice` for a fact of the trade. */
@@ -43,7 +42,7 @@ export const cautionCatalogue = {
   'picked-comparison': {
     source: 'Agresti et al. 2008, Statistics in Medicine 27:2870',
     text: () =>
-      'With several groups one pair often looks different by chance: do not pick the highest and the lowest after looking.',
+      'With several groups one pair often looks different by chance: do not pick one after looking.',
   },
   'few-cases': {
     source: 'calibration of the intervals, see tests; common practice for small counts of people',
@@ -69,8 +68,7 @@ export const cautionCatalogue = {
   },
   'groups-may-differ': {
     source: 'common practice',
-    text: () =>
-      'The groups may differ in more than their name (age, place, time), and were taken to be watched equally long.',
+    text: () => 'The groups may differ in more than their name, such as age, place or time watched.',
   },
 } satisfies Record<CautionId, CautionEntry>;
 
@@ -81,13 +79,7 @@ function baseRate(report: Report): string {
   const { question } = report;
   const of = readingsOf(report, 'risk-ratio')[0]?.of ?? 0;
   const share = readingsOf(report, 'case-share').find((reading) => reading.of === of)?.estimate ?? NaN;
-  const coverage = question.kind === 'shares' ? question.groups[of] : undefined;
-  const held =
-    coverage === undefined
-      ? ''
-      : coverage.coverageImplied
-        ? percent(coverage.coverage.value, 'full')
-        : quantityText(coverage.coverage);
+  const held = question.kind === 'shares' ? (question.groups[of]?.coverage.text ?? '') : '';
   return `${percent(share, 'short')} is a share of the ${cases(question)}, not a risk; it would be ${held} if both groups had ${cases(question)} equally often.`;
 }
 
@@ -109,12 +101,6 @@ function smallRisk({ question, readings }: Report): string {
 
 function coverageAsGiven({ question }: Report): string {
   if (question.kind !== 'shares') return '';
-  const index = Math.max(
-    0,
-    question.groups.findIndex(({ coverageImplied }) => !coverageImplied),
-  );
-  const group = question.groups[index];
-  const held =
-    group === undefined ? 'Coverage' : `${quantityText(group.coverage)} for ${label(question, index)}`;
-  return `${held} is taken as exact: it must be about the same people, place and time as the ${cases(question)}.`;
+  const held = question.groups.find(({ coverageImplied }) => !coverageImplied)?.coverage.text ?? 'Coverage';
+  return `${held} is taken as exact, for the same people, place and time.`;
 }

@@ -10,7 +10,8 @@ export function tableFor(report: Report): readonly (readonly string[])[] | null 
   const { question } = report;
   if (question.groups.length < 3) return null;
   const reference = plainLabel(question, question.reference);
-  const header = ['Group', 'Given', `Ratio against ${reference}`, 'Interval'];
+  const what = question.kind === 'shares' ? 'Cases; coverage' : 'Given';
+  const header = ['Group', what, `Ratio against ${reference}`, 'Interval'];
   const ratios = readingsOf(report, report.headline);
   const rows = question.groups.map((_, index) => {
     const reading = ratios.find(({ of }) => of === index);
@@ -22,7 +23,7 @@ export function tableFor(report: Report): readonly (readonly string[])[] | null 
       reading.estimate === null
         ? reading.unbounded
           ? 'no upper end'
-          : 'undefined'
+          : 'no value'
         : ratio(reading.estimate, 'full'),
       reading.interval === null ? 'none' : limitsText(reading, reading.interval, 'full'),
     ];
@@ -41,7 +42,7 @@ function given({ question }: Report, index: number): string {
       const group = question.groups[index];
       if (group === undefined) return '';
       const share = group.cases === null ? quantityText(group.caseShare) : quantityText(group.cases);
-      return `${share} of the cases, ${group.coverageImplied ? percent(group.coverage.value, 'full') : quantityText(group.coverage)} coverage`;
+      return `${share}; ${group.coverage.text}`;
     }
     case 'stated':
       return question.groups[index]?.share.text ?? '';

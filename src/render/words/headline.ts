@@ -38,7 +38,7 @@ function twoGroups(report: Report, reading: Reading): string {
   const note = intervalNote(reading);
   if (question.kind === 'counts' && question.chosenByOutcome) {
     const value = reading.estimate === null ? 'without a value' : ratio(reading.estimate, 'short');
-    return `Odds ratio ${value} (${note}), ${group} against ${reference}: no risk can be read from such rows.`;
+    return `Odds ratio ${value} (${note}), ${group} against ${reference}.`;
   }
   const direction = shownDirection(report, reading);
   if (direction === 'none-shown') {
@@ -90,5 +90,5 @@ function manyGroups(report: Report, ratios: readonly Reading[]): string {
 
 /** Leaves the words "95% interval" out where the line would otherwise run past what a notification shows. */
 function shorten(line: string): string {
-  return line.length <= within ? line : line.replace(/\((?:[\d.]+)% interval /, '(');
+  return line.length <= within ? line : line.replace(/[\d.]+% interval /, '');
 }

@@ -26,7 +26,7 @@ export function estimateText(reading: Reading, digits: Digits): string | null {
 export function workingText(reading: Reading): string {
   const { estimate, interval } = reading;
   const write = working([estimate, interval?.low ?? null, interval?.high ?? null]);
-  const value = estimate === null ? (reading.unbounded ? 'no upper end' : 'undefined') : write(estimate);
+  const value = estimate === null ? (reading.unbounded ? 'no upper end' : 'no value') : write(estimate);
   if (interval === null) return value;
   const low = interval.low === null ? 'no lower limit' : write(interval.low);
   const high = interval.high === null ? 'no upper limit' : write(interval.high);

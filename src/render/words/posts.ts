@@ -1,10 +1,10 @@
-import type { CountsQuestion, Quantity, SharesQuestion } from '../../../grammar/question.ts';
+import type { CountsQuestion, SharesQuestion } from '../../../grammar/question.ts';
 import type { Reading, ReadingId } from '../../report/reading.ts';
 import { readingsOf } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
 import { shownDirection } from './headline.ts';
 import { changeText, limitsText } from './interval-text.ts';
-import { capital, cases, casesAsTyped, Label, label, one, perOne, population } from './labels.ts';
+import { capital, cases, casesAsTyped, Label, label, perOne, population } from './labels.ts';
 import { amount, beside, fixed, percent, points, ratio } from './numbers.ts';
 import { compared, comparison, intervalNote } from './ratio-words.ts';
 import { quantityText } from './read-as.ts';
@@ -37,7 +37,8 @@ export function shortPost(report: Report): string | null {
   const { question } = report;
   const [reading] = readingsOf(report, report.headline);
   if (reading?.estimate == null || reading.against === null || question.groups.length !== 2) return null;
-  if (report.headline === 'odds-ratio' || shownDirection(report, reading) === 'none-shown') return null;
+  if (question.kind === 'bare-counts' || report.headline === 'odds-ratio') return null;
+  if (shownDirection(report, reading) === 'none-shown') return null;
   const { words, joiner, figure } = comparison(
     reading.estimate,
     question.kind === 'shares' ? `many ${cases(question)}` : 'often',
@@ -94,6 +95,9 @@ function countsPosts(report: Report, question: CountsQuestion): Post[] {
           },
         ]
       : [{ reading: 'risk-ratio', text: `${rows} That is ${compared(ratioReading, 'often', reference)}.` }];
+  // A hidden count has no percentage of its own that could be posted.
+  if (question.groups.some(({ cases: x, total }) => x.precision === 'range' || total.precision === 'range'))
+    return ratioPost;
   return [
     ...ratioPost,
     ...changePost(report, rows),
@@ -122,6 +126,20 @@ function changePost(report: Report, rows: string): Post[] {
     {
       reading: 'relative-change',
       text: `${rows} That is ${changeText(change.estimate, 'short')} (${intervalNote(change)}).`,
+    },
+  ];
+}
+
+/** For shares: "Per rider, that is 130% more cases than ...", since the two shares in front are not what is compared. */
+function shareChangePost(report: Report, rows: string, reference: string): Post[] {
+  const [change] = readingsOf(report, 'relative-change');
+  if (change?.estimate == null || change.interval === null) return [];
+  const counted = (text: string) => text.replaceAll('higher', 'more').replaceAll('lower', 'fewer');
+  const more = counted(changeText(change.estimate, 'short'));
+  return [
+    {
+      reading: 'relative-change',
+      text: `${rows} ${capital(perOne(report.question))}, that is ${more} ${cases(report.question)} than ${reference} (${counted(intervalNote(change))}).`,
     },
   ];
 }
@@ -196,7 +214,7 @@ function sharesPosts(report: Report, question: SharesQuestion): Post[] {
   const reference = label(report.question, question.reference);
   if (shownDirection(report, ratioReading) === 'none-shown')
     return [{ reading: 'risk-ratio', text: noneShown(ratioReading, made) }];
-  const per = one(report.question) === null ? 'For its size' : capital(perOne(report.question));
+  const per = capital(perOne(report.question));
   const ratioPost: Post =
     ratioReading.estimate === null
       ? {
@@ -217,7 +235,7 @@ function sharesPosts(report: Report, question: SharesQuestion): Post[] {
             text: `${made.slice(0, -1)}. As a share of all ${cases(report.question)} that is ${percent(share.estimate ?? NaN, 'short')} (${intervalNote(share)}); it is no risk.`,
           },
         ];
-  return [ratioPost, ...changePost(report, made), ...sharePost];
+  return [ratioPost, ...shareChangePost(report, made, reference), ...sharePost];
 }
 
 /** "“No helmet” made up 44 of 75 admitted (59%) and 38% of riders." */
@@ -230,11 +248,8 @@ function madeUp(report: Report, question: SharesQuestion, index: number): string
     group.cases !== null && all !== null
       ? `${quantityText(group.cases)} of ${quantityText(all)} ${casesAsTyped(report.question)} (${share})`
       : `${quantityText(group.caseShare)} of the ${casesAsTyped(report.question)}`;
-  return `${Label(report.question, index)} made up ${counted} and ${coverageText(group.coverage, group.coverageImplied)} of ${population(report.question)}.`;
+  return `${Label(report.question, index)} made up ${counted} and ${group.coverage.text} of ${population(report.question)}.`;
 }
-
-const coverageText = (coverage: Quantity, implied: boolean) =>
-  implied ? percent(coverage.value, 'full') : quantityText(coverage);
 
 function statedPosts(report: Report): Post[] {
   const [reading] = readingsOf(report, 'percentage-ratio');

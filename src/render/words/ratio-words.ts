@@ -11,7 +11,7 @@ export function intervalNote(reading: Reading): string {
     case 'no-exact-form':
       return 'no exact interval for this reading';
     case 'no-case-number':
-      return 'no interval without the number of cases';
+      return 'no interval without counts';
     case 'no-totals':
       return 'no interval without the totals';
     case 'counts-rows-only':

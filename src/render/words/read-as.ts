@@ -5,9 +5,9 @@ import { count, percent } from './numbers.ts';
 
 /** A typed number as it was read: counts grouped, percentages and frequencies in their own spelling. */
 export function quantityText(quantity: Quantity): string {
-  return quantity.precision === 'exact' && /^\d+$/.test(quantity.text)
-    ? count(quantity.value)
-    : quantity.text;
+  if (quantity.precision === 'exact' && /^\d+$/.test(quantity.text)) return count(quantity.value);
+  // A percentage of a total that several counts fit.
+  return / of /.test(quantity.text) ? `${count(quantity.low)} to ${count(quantity.high)}` : quantity.text;
 }
 
 /** The second line of every answer: how the line was read. */
@@ -24,15 +24,14 @@ export function readAs(question: Question): string {
       return `Read as: ${rows.join('; ')}${against}.`;
     }
     case 'shares': {
-      const rows = question.groups.map(({ cases, caseShare, coverage, coverageImplied }, index) => {
+      const rows = question.groups.map(({ cases, caseShare, coverage }, index) => {
         const share =
           cases === null ? `${quantityText(caseShare)} of ${casesAsTyped(question)}` : quantityText(cases);
         const of =
           index === 0 && question.totalCases !== null && cases !== null
             ? ` of ${quantityText(question.totalCases)} ${casesAsTyped(question)}`
             : '';
-        const held = coverageImplied ? percent(coverage.value, 'full') : quantityText(coverage);
-        return `${named(index)} ${share}${of}, ${held}${index === 0 ? ` of ${population(question)}` : ''}`;
+        return `${named(index)} ${share}${of}, ${coverage.text}${index === 0 ? ` of ${population(question)}` : ''}`;
       });
       return `Read as: ${rows.join('; ')}${against}.`;
     }

@@ -12,7 +12,7 @@ export function readingRow(report: Report, reading: Reading): ReadingRow {
   const { question } = report;
   return {
     reading,
-    name: nameOf(question, reading),
+    name: nameOf(question, reading, isFewer(report, reading)),
     value: valueOf(reading),
     formula: formulaOf(question, reading),
     long: workingText(reading),
@@ -20,7 +20,7 @@ export function readingRow(report: Report, reading: Reading): ReadingRow {
   };
 }
 
-function nameOf(question: Question, reading: Reading): string {
+function nameOf(question: Question, reading: Reading, fewer: boolean): string {
   const group = plainLabel(question, reading.of);
   const against = reading.against === null ? '' : ` against ${plainLabel(question, reading.against)}`;
   switch (reading.id) {
@@ -39,9 +39,9 @@ function nameOf(question: Question, reading: Reading): string {
     case 'odds-ratio':
       return `Odds ratio, ${group}${against}`;
     case 'extra-cases':
-      return `${extraIsFewer(reading) ? 'Fewer' : 'Extra'} ${cases(question)} per ${fixed(reading.per ?? 0, 0)}, ${group}${against}`;
+      return `Extra ${cases(question)} per ${fixed(reading.per ?? 0, 0)}, ${group}${against}`;
     case 'one-extra-per':
-      return `One ${extraIsFewer(reading) ? 'case fewer' : 'extra case'} for every, ${group}${against}`;
+      return `One ${fewer ? 'case fewer' : 'extra case'} for every K, ${group}${against}`;
     case 'break-even-coverage':
       return `Break-even coverage, ${group}`;
     case 'attributable-fraction':
@@ -61,10 +61,12 @@ function nameOf(question: Question, reading: Reading): string {
   }
 }
 
-const extraIsFewer = (reading: Reading) => reading.id === 'extra-cases' && (reading.estimate ?? 0) < 0;
+/** Whether the difference behind a reading is below 0. */
+const isFewer = ({ readings }: Report, { of }: Reading) =>
+  (readings.find((each) => each.id === 'risk-difference' && each.of === of)?.estimate ?? 0) < 0;
 
 function valueOf(reading: Reading): string {
-  const estimate = estimateText(reading, 'full') ?? (reading.unbounded ? 'no upper end' : 'undefined');
+  const estimate = estimateText(reading, 'full') ?? (reading.unbounded ? 'no upper end' : 'no value');
   const parts = [intervalPart(reading), exactPart(reading), roundingPart(reading), limitPart(reading)].filter(
     (part) => part !== null,
   );
