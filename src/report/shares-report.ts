@@ -67,8 +67,9 @@ export function sharesReport(question: SharesQuestion): Report {
   };
 }
 
-function rowsInPopulation({ groups, clauses: { population } }: SharesQuestion): CountsRow[] | null {
-  if (population === null) return null;
+function rowsInPopulation({ groups, clauses: { population, exact } }: SharesQuestion): CountsRow[] | null {
+  // Exact methods count whole outcomes, and coverage times population need not be whole.
+  if (population === null || exact) return null;
   const rows = groups.map(({ cases, coverage }) => cases && { cases, total: times(coverage, population) });
   return rows.every((row) => row !== null) ? rows : null;
 }
