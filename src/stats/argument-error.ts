@@ -40,3 +40,34 @@ export function checkWhole(...values: readonly number[]): void {
     }
   }
 }
+
+/** Refuses events below 0 and exposures of 0 or below, NaN and infinities included. */
+export function checkExposure(events: number, exposure: number): void {
+  if (!(exposure > 0 && exposure < Infinity)) {
+    throw new ArgumentError('exposure-out-of-range', `an exposure must be above 0, not ${exposure}`);
+  }
+  if (!(events >= 0 && events <= 1e15)) {
+    throw new ArgumentError('cases-out-of-range', `events must be within 0 and 1e15, not ${events}`);
+  }
+}
+
+/** Refuses coverages outside (0, 1), NaN included. */
+export function checkCoverage(...coverages: readonly number[]): void {
+  for (const coverage of coverages) {
+    if (!(coverage > 0 && coverage < 1)) {
+      throw new ArgumentError(
+        'coverage-out-of-range',
+        `a coverage must be above 0 and below 1, not ${coverage}`,
+      );
+    }
+  }
+}
+
+/** Refuses counts of cases below 0 or above 1e15, NaN included. */
+export function checkCaseCounts(...counts: readonly number[]): void {
+  for (const cases of counts) {
+    if (!(cases >= 0 && cases <= 1e15)) {
+      throw new ArgumentError('cases-out-of-range', `cases must be within 0 and 1e15, not ${cases}`);
+    }
+  }
+}

@@ -1,4 +1,4 @@
-import { ArgumentError } from './argument-error.ts';
+import { ArgumentError, checkCoverage } from './argument-error.ts';
 
 /**
  * The fraction of a group's cases above what the reference group's rate would have given: 1 - 1/RR.
@@ -32,12 +32,7 @@ export function preventedFraction(ratio: number): number {
  */
 export function populationAttributableFraction(ratio: number, coverage: number): number {
   checkRatio(ratio);
-  if (!(coverage > 0 && coverage < 1)) {
-    throw new ArgumentError(
-      'coverage-out-of-range',
-      `a coverage must be above 0 and below 1, not ${coverage}`,
-    );
-  }
+  checkCoverage(coverage);
   const excess = coverage * (ratio - 1);
   return excess / (1 + excess);
 }

@@ -1,6 +1,5 @@
-import { ArgumentError } from './argument-error.ts';
-import { exactLowerLimit } from './clopper-pearson-interval.ts';
-import { criticalValue } from './critical-value.ts';
+import { checkCaseCounts, checkCoverage } from './argument-error.ts';
+import { caseOddsInterval, exactCaseOddsInterval, scaled } from './case-odds-interval.ts';
 import type { Interval } from './interval.ts';
 
 /**
@@ -34,24 +33,13 @@ export function shareRatio(pair: SharePair): number | null {
  * @returns lower limit 0 without cases in the group, no upper limit without cases in the reference
  * @throws ArgumentError for cases or coverages out of range
  *
- * The same interval is the score interval of a rate ratio with c = T1/(T1 + T2) (Miettinen & Nurminen 1985). Closed form on
- * the odds scale, never through p/(1 - p): A = 2 x1 x2 + z^2 n, B = z root(n(z^2 n + 4 x1 x2)), lower 2 x1^2/(A + B), upper
- * (A + B)/(2 x2^2). For three or more groups it is conditional on the pair. Accuracy: 1e-14 relative.
+ * The same interval is the score interval of a rate ratio with c = T1/(T1 + T2) (Miettinen & Nurminen 1985). For
+ * three or more groups it is conditional on the pair. Accuracy: 1e-14 relative.
  */
 export function shareRatioInterval(pair: SharePair, level: number): Interval {
   check(pair);
   const { cases, referenceCases, coverage, referenceCoverage } = pair;
-  const z = criticalValue(level);
-  const all = cases + referenceCases;
-  const sum =
-    2 * cases * referenceCases +
-    z * z * all +
-    z * Math.sqrt(all * (z * z * all + 4 * cases * referenceCases));
-  const scale = referenceCoverage / coverage;
-  return {
-    low: cases === 0 ? 0 : ((2 * cases * cases) / sum) * scale,
-    high: referenceCases === 0 ? null : (sum / (2 * referenceCases * referenceCases)) * scale,
-  };
+  return scaled(caseOddsInterval(cases, referenceCases, level), referenceCoverage / coverage);
 }
 
 /**
@@ -62,29 +50,10 @@ export function shareRatioInterval(pair: SharePair, level: number): Interval {
 export function exactShareRatioInterval(pair: SharePair, level: number): Interval {
   check(pair);
   const { cases, referenceCases, coverage, referenceCoverage } = pair;
-  if (cases + referenceCases === 0) return { low: 0, high: null };
-  const scale = referenceCoverage / coverage;
-  const all = cases + referenceCases;
-  const own = exactLowerLimit(cases, all, level);
-  // The upper limit of this group's share is what the other group's lower limit leaves.
-  const other = exactLowerLimit(referenceCases, all, level);
-  return {
-    low: own.limit === 0 ? 0 : (own.limit / own.rest) * scale,
-    high: other.limit === 0 ? null : (other.rest / other.limit) * scale,
-  };
+  return scaled(exactCaseOddsInterval(cases, referenceCases, level), referenceCoverage / coverage);
 }
 
 function check({ cases, referenceCases, coverage, referenceCoverage }: SharePair): void {
-  if (!(cases >= 0 && referenceCases >= 0 && cases + referenceCases <= 1e15)) {
-    throw new ArgumentError(
-      'cases-out-of-range',
-      `cases must be 0 or more, not ${cases} and ${referenceCases}`,
-    );
-  }
-  if (!(coverage > 0 && coverage < 1 && referenceCoverage > 0 && referenceCoverage < 1)) {
-    throw new ArgumentError(
-      'coverage-out-of-range',
-      `coverages must be above 0 and below 1, not ${coverage} and ${referenceCoverage}`,
-    );
-  }
+  checkCaseCounts(cases, referenceCases);
+  checkCoverage(coverage, referenceCoverage);
 }
