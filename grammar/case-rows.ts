@@ -1,3 +1,4 @@
+import { grouped } from './numbers.ts';
 import { diagnosis } from './diagnosis.ts';
 import {
   countFromShare,
@@ -71,7 +72,7 @@ function bareRows(items: readonly Item[], setting: Setting): Settled<Rows> {
       return refused(diagnosis('more-cases-than-people', only.span, [only.cases?.text ?? '', total.text]));
     rows.push({
       label: null,
-      cases: exactCount(rest, rest.toLocaleString('en-US'), only.span),
+      cases: exactCount(rest, grouped(rest), only.span),
       caseShare: null,
       span: only.span,
     });
@@ -79,11 +80,7 @@ function bareRows(items: readonly Item[], setting: Setting): Settled<Rows> {
   const known = rows.every(({ cases }) => cases?.precision !== 'range');
   const span = { from: items[0]?.span.from ?? 0, to: items.at(-1)?.span.to ?? 0 };
   const all =
-    rows.length > items.length && total !== null
-      ? total
-      : known
-        ? exactCount(sum, sum.toLocaleString('en-US'), span)
-        : null;
+    rows.length > items.length && total !== null ? total : known ? exactCount(sum, grouped(sum), span) : null;
   if (sum === 0) return refused(diagnosis('total-zero', span, ['No cases']));
   return settled(
     { rows: rows.map((row) => withShare(row, all)), total: all, caseNoun: nounOf(items, setting) },
@@ -157,7 +154,7 @@ function countedRows(items: readonly Item[], setting: Setting): Settled<Rows> {
   if (only !== undefined && rows.length === 1 && total !== null && only.cases !== null) {
     const { cases } = only;
     const rest: Quantity = {
-      text: (total.value - cases.value).toLocaleString('en-US'),
+      text: grouped(total.value - cases.value),
       value: total.value - cases.value,
       low: total.value - cases.high,
       high: total.value - cases.low,
@@ -215,7 +212,7 @@ function shareRows(items: readonly Item[], setting: Setting): Settled<Rows> {
         ? null
         : {
             ...cases,
-            text: (total.value - cases.value).toLocaleString('en-US'),
+            text: grouped(total.value - cases.value),
             value: total.value - cases.value,
             low: total.value - cases.high,
             high: total.value - cases.low,

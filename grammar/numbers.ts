@@ -77,9 +77,15 @@ function movePoint(plain: string, places: number): string {
 /** Groups of three with a comma, decimals untouched. */
 export function group(plain: string): string {
   const [whole = '', fraction] = plain.split('.');
-  const grouped = whole.replace(/\B(?=(\d{3})+$)/g, ',');
-  return fraction === undefined ? grouped : `${grouped}.${fraction}`;
+  if (whole.length <= 3) return plain;
+  const short = whole.length % 3 || 3;
+  const pieces = [whole.slice(0, short)];
+  for (let at = short; at < whole.length; at += 3) pieces.push(whole.slice(at, at + 3));
+  return `${pieces.join(',')}${fraction === undefined ? '' : `.${fraction}`}`;
 }
+
+/** A whole number with its groups of three. */
+export const grouped = (value: number) => group(String(value));
 
 const words: Readonly<Record<string, number>> = {
   one: 1,

@@ -1,3 +1,4 @@
+import { grouped } from './numbers.ts';
 import type { Question, Quantity } from './question.ts';
 
 /** The canonical spelling of a question. Reading it again gives the same question. */
@@ -92,7 +93,7 @@ function clauseParts({ clauses }: Question): string[] {
   const { level, per, reference, population, among, period, source, note, exact, onlyMe } = clauses;
   return [
     ...(level === null ? [] : [`level ${level.text}`]),
-    ...(per === null ? [] : [`per ${per.toLocaleString('en-US')}`]),
+    ...(per === null ? [] : [`per ${grouped(per)}`]),
     ...(reference === null ? [] : [`reference ${quote(reference)}`]),
     ...(population === null ? [] : [`population ${population.text}`]),
     ...(among === null ? [] : [`among ${quote(among)}`]),

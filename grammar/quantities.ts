@@ -1,5 +1,5 @@
 import { diagnosis } from './diagnosis.ts';
-import { largestNumber } from './numbers.ts';
+import { grouped, largestNumber } from './numbers.ts';
 import type { WrittenNumber } from './numbers.ts';
 import type { Diagnosis, Quantity, ReadingRemark, Span } from './question.ts';
 import type { CountValue, ShareValue } from './tags.ts';
@@ -129,7 +129,7 @@ export function countFromShare(share: ShareValue, span: Span, total: Quantity): 
     readAs,
     span,
   });
-  const text = (count: number) => count.toLocaleString('en-US');
+  const text = (count: number) => grouped(count);
   if (fit.low === fit.high) return settled(exactCount(fit.low, text(fit.low), span), [remark(text(fit.low))]);
   return settled(
     {

@@ -1,3 +1,4 @@
+import { grouped } from './numbers.ts';
 import type { IRecognitionException, IToken } from 'chevrotain';
 import { diagnosis, linesToTry } from './diagnosis.ts';
 import { fold, typedSpan } from './fold.ts';
@@ -18,9 +19,7 @@ export function readLine(line: string, limits: LineLimits): LineReading {
   // Before anything else, so that no step ever sees more.
   if (line.length > limits.characters) {
     return refusal(
-      diagnosis('too-long', { from: limits.characters, to: line.length }, [
-        limits.characters.toLocaleString('en-US'),
-      ]),
+      diagnosis('too-long', { from: limits.characters, to: line.length }, [grouped(limits.characters)]),
     );
   }
   const topic = helpTopicOf(line);

@@ -9,8 +9,11 @@ export type Digits = 'full' | 'short';
 /** Groups of three with a comma: 1204 is `1,204`. Takes a plain decimal text, so that its digits stay as they were rounded. */
 function group(text: string): string {
   const [whole = '', fraction] = text.split('.');
-  const grouped = whole.replace(/\B(?=(\d{3})+$)/g, ',');
-  return fraction === undefined ? grouped : `${grouped}.${fraction}`;
+  if (whole.length <= 3) return text;
+  const short = whole.length % 3 || 3;
+  const pieces = [whole.slice(0, short)];
+  for (let at = short; at < whole.length; at += 3) pieces.push(whole.slice(at, at + 3));
+  return `${pieces.join(',')}${fraction === undefined ? '' : `.${fraction}`}`;
 }
 
 /** A number with a fixed count of decimals, grouped; a minus sign is the typographic one. */
