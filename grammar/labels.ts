@@ -1,10 +1,11 @@
 /** How names of groups are compared: case, hyphens, extra spaces and a final s do not make two names. */
-export const nameKey = (name: string): string =>
-  name
+export function nameKey(name: string): string {
+  const key = name
     .toLowerCase()
     .replace(/[-_\s]+/g, ' ')
-    .trim()
-    .replace(/(?<=\p{L}{2})s$/u, '');
+    .trim();
+  return key.length > 2 && key.endsWith('s') ? key.slice(0, -1) : key;
+}
 
 const earlier = ['before', 'old', 'earlier', 'last', 'previous', 'prior', 'baseline'];
 const later = ['after', 'new', 'later', 'recent', 'this', 'current', 'now', 'recently'];

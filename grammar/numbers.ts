@@ -76,12 +76,12 @@ function movePoint(plain: string, places: number): string {
 
 /** Groups of three with a comma, decimals untouched. */
 export function group(plain: string): string {
-  const [whole = '', fraction] = plain.split('.');
-  if (whole.length <= 3) return plain;
-  const short = whole.length % 3 || 3;
-  const pieces = [whole.slice(0, short)];
-  for (let at = short; at < whole.length; at += 3) pieces.push(whole.slice(at, at + 3));
-  return `${pieces.join(',')}${fraction === undefined ? '' : `.${fraction}`}`;
+  const point = plain.indexOf('.');
+  const end = point === -1 ? plain.length : point;
+  if (end <= 3) return plain;
+  let out = plain.slice(0, end % 3 || 3);
+  for (let at = out.length; at < end; at += 3) out += `,${plain.slice(at, at + 3)}`;
+  return out + plain.slice(end);
 }
 
 /** A whole number with its groups of three. */

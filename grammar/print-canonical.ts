@@ -77,7 +77,10 @@ function sharesPart(question: Extract<Question, { kind: 'shares' }>): string {
 }
 
 /** Names that a reader could take for something else stand in quotation marks. */
-const plainName = /^[\p{L}][\p{L}\p{M}'\- ]*$/u;
+// Letters by ranges: a Unicode property class takes milliseconds to compile, which the command line would pay at every start.
+const letters = 'A-Za-z\u00c0-\u1fff\u2c00-\ud7ff\uf900-\ufaff';
+const plainName = new RegExp(`^[${letters}][${letters}' -]*$`);
+const plainText = new RegExp(`^[${letters}0-9][${letters}0-9 '-]*$`);
 const keywordInName =
   /(?:^| )(?:of|out|in|per|vs?|versus|against|compared|than|and|or|from|to|cases|coverage|level|reference|population|among|period|source|note|exact|only|says|fewer|less|under|about|around|roughly|over|some|nearly|almost|approx|approximately|ca|half|third|quarter|thirds|quarters|fifth|tenth|hundred|thousand|million|billion|is|are|was|were|pc|pct|percent|help|design|counted|try|no|a|one|two|three|four|five|six|seven|eight|nine|ten|eleven|twelve|twenty|thirty|forty|fifty|sixty|seventy|eighty|ninety|dozen|significant|significantly|ok|different|k|m|bn|n)(?: |$)/i;
 
@@ -105,5 +108,4 @@ function clauseParts({ clauses }: Question): string[] {
   ];
 }
 
-const quote = (text: string) =>
-  /^[\p{L}\p{N}][\p{L}\p{N} '-]*$/u.test(text) ? text : `"${text.replaceAll('"', "'")}"`;
+const quote = (text: string) => (plainText.test(text) ? text : `"${text.replaceAll('"', "'")}"`);

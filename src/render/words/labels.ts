@@ -30,7 +30,7 @@ const groupName = (index: number) => `the ${ordinals[index] ?? `${index + 1}th`}
 
 /** Words that make a label read badly inside a sentence unless it is quoted: "no helmet had ...". */
 const wantsQuotes =
-  /^(?:no|not|non|never|without|with|under|over|up|less|more|at|above|below|in|on|from|to|of|by|yes|before|after|\W|\d)/iu;
+  /^(?:no|not|non|never|without|with|under|over|up|less|more|at|above|below|in|on|from|to|of|by|yes|before|after|[^A-Za-z\u00c0-\uffff])/i;
 
 function quoted(question: Question): boolean {
   return question.groups.some(
@@ -57,7 +57,7 @@ export function capital(text: string): string {
 /** What cases are called: the typed noun where it is a plural, else "cases". */
 export function cases(question: Question): string {
   const noun = question.caseNoun;
-  return noun !== null && /[^s]s$/iu.test(noun) ? noun : 'cases';
+  return noun !== null && /[^s]s$/i.test(noun) ? noun : 'cases';
 }
 
 /** What all cases together are called: "75 injured", "75 cases". */

@@ -8,12 +8,12 @@ export type Digits = 'full' | 'short';
 
 /** Groups of three with a comma: 1204 is `1,204`. Takes a plain decimal text, so that its digits stay as they were rounded. */
 function group(text: string): string {
-  const [whole = '', fraction] = text.split('.');
-  if (whole.length <= 3) return text;
-  const short = whole.length % 3 || 3;
-  const pieces = [whole.slice(0, short)];
-  for (let at = short; at < whole.length; at += 3) pieces.push(whole.slice(at, at + 3));
-  return `${pieces.join(',')}${fraction === undefined ? '' : `.${fraction}`}`;
+  const point = text.indexOf('.');
+  const end = point === -1 ? text.length : point;
+  if (end <= 3) return text;
+  let out = text.slice(0, end % 3 || 3);
+  for (let at = out.length; at < end; at += 3) out += `,${text.slice(at, at + 3)}`;
+  return out + text.slice(end);
 }
 
 /** A number with a fixed count of decimals, grouped; a minus sign is the typographic one. */
