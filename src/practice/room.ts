@@ -2,10 +2,13 @@ import type { Clock, Ids, Ledger } from '../answer/ports.ts';
 import { createBot } from '../slack/bot.ts';
 import type { Bot } from '../slack/bot.ts';
 import type { Log } from '../slack/log.ts';
+import { buttonIn, commandBody, isMention, mentionBody, mentionText, pressBody } from './deliveries.ts';
 import { MessageStore } from './message-store.ts';
+import type { StoredMessage } from './message-store.ts';
 import { PracticeReceiver } from './receiver.ts';
+import type { Acknowledgement } from './receiver.ts';
 import { createStandIn } from './stand-in.ts';
-import { botPerson, channels, teamId } from './workspace.ts';
+import { botPerson, channels } from './workspace.ts';
 
 export interface RoomParts {
   readonly ledger: Ledger;
@@ -14,10 +17,11 @@ export interface RoomParts {
   readonly log: Log;
 }
 
-/** Something typed: a command in a channel, or a mention of the bot in a thread. */
+/** Something typed: the command or a mention of the bot in a channel, or a mention in a thread. */
 export interface Typed {
   readonly person: string;
   readonly channel: string;
+  /** The first message of the thread it is typed in; `null` for the channel itself. */
   readonly threadTs: string | null;
   readonly line: string;
 }
@@ -28,23 +32,25 @@ export interface Pressed {
   readonly action: string;
 }
 
+/** What became of something typed or pressed. `not-there`: no such thread, or no such button for this person. */
+export type Taken = 'taken' | 'not-acknowledged' | 'not-there';
+
 /** The practice room without its page: three people, two channels, and the very same bot over the stand-in. */
 export interface Room {
   readonly store: MessageStore;
   readonly bot: Bot;
-  type(typed: Typed): Promise<void>;
-  /** False where the person sees no such button. */
-  press(pressed: Pressed): Promise<boolean>;
+  type(typed: Typed): Promise<Taken>;
+  press(pressed: Pressed): Promise<Taken>;
+  /** What one person sees in one channel, in the order in which it was said. */
+  seenBy(person: string, channel: string): readonly StoredMessage[];
 }
+
+const origin = 'https://harrowmere.example';
 
 export async function createRoom({ ledger, clock, ids, log }: RoomParts): Promise<Room> {
   const store = new MessageStore(() => clock.now());
   const known = new Set(channels.map(({ id }) => id));
-  const standIn = createStandIn({
-    store,
-    isMember: (channel) => known.has(channel),
-    origin: 'https://harrowmere.example',
-  });
+  const standIn = createStandIn({ store, isMember: (channel) => known.has(channel), origin });
   const receiver = new PracticeReceiver();
   const bot = await createBot({
     ledger,
@@ -52,108 +58,91 @@ export async function createRoom({ ledger, clock, ids, log }: RoomParts): Promis
     start: (each) => each.start(),
     stop: (each) => each.stop(),
     token: 'xoxb-practice',
-    slackApiUrl: 'https://harrowmere.example/api/',
+    slackApiUrl: `${origin}/api/`,
     fetch: standIn.fetch,
     clock,
     log,
     pace: 0,
     lookUpWaits: [0],
   });
+  const seen = (message: StoredMessage, person: string) =>
+    message.onlyFor === null || message.onlyFor === person;
+  /** Threads hang under what everybody sees. The first message itself may be gone, as after a restart. */
+  const isThread = (channel: string, threadTs: string) =>
+    store.messages.some(
+      (message) =>
+        message.channel === channel &&
+        message.onlyFor === null &&
+        (message.threadTs ?? message.ts) === threadTs,
+    );
   return {
     store,
     bot,
     async type({ person, channel, threadTs, line }) {
-      if (threadTs === null) {
-        await receiver.deliver({
-          command: '/divisor',
-          text: escaped(line),
-          team_id: teamId,
-          channel_id: channel,
-          user_id: person,
-          trigger_id: ids.next(),
-          response_url: standIn.responseUrl({ channel, user: person, messageTs: null }),
-        });
-        return;
+      if (threadTs === null && !isMention(line)) {
+        const acknowledgement = await receiver.deliver(
+          commandBody({
+            person,
+            channel,
+            line,
+            triggerId: ids.next(),
+            responseUrl: standIn.responseUrl({ channel, user: person, messageTs: null }),
+          }),
+        );
+        showAcknowledged(acknowledgement, store, person, channel);
+        return taken(acknowledgement);
       }
-      const asked = `<@${botPerson.id}> ${escaped(line)}`;
-      const { ts } = store.add({
+      if (threadTs !== null && !isThread(channel, threadTs)) return 'not-there';
+      const message = store.add({
         channel,
         threadTs,
         user: person,
-        text: asked,
+        text: mentionText(line),
         blocks: [],
         metadata: null,
         onlyFor: null,
       });
-      await receiver.deliver({
-        type: 'event_callback',
-        team_id: teamId,
-        event_id: ids.next(),
-        event: {
-          type: 'app_mention',
-          user: person,
-          text: asked,
-          ts,
-          channel,
-          event_ts: ts,
-          thread_ts: threadTs,
-        },
-      });
+      return taken(await receiver.deliver(mentionBody(message, ids.next())));
     },
     async press({ person, messageTs, action }) {
-      const message = store.messages.find(
-        ({ ts, onlyFor }) => ts === messageTs && (onlyFor === null || onlyFor === person),
-      );
+      const message = store.messages.find((each) => each.ts === messageTs && seen(each, person));
       const button = message === undefined ? undefined : buttonIn(message.blocks, action);
-      if (message === undefined || button === undefined) return false;
-      const { channel, threadTs } = message;
-      await receiver.deliver({
-        type: 'block_actions',
-        team: { id: teamId },
-        user: { id: person, team_id: teamId },
-        channel: { id: channel },
-        container: {
-          type: 'message',
-          message_ts: messageTs,
-          channel_id: channel,
-          ...(threadTs === null ? {} : { thread_ts: threadTs }),
-        },
-        message: { ts: messageTs, text: message.text, ...(threadTs === null ? {} : { thread_ts: threadTs }) },
-        trigger_id: ids.next(),
-        response_url: standIn.responseUrl({ channel, user: person, messageTs }),
-        actions: [
-          {
-            type: 'button',
-            action_id: action,
-            block_id: button.blockId,
-            value: button.value,
-            action_ts: messageTs,
-          },
-        ],
-      });
-      return true;
+      if (message === undefined || button === undefined) return 'not-there';
+      return taken(
+        await receiver.deliver(
+          pressBody({
+            person,
+            message,
+            button,
+            triggerId: ids.next(),
+            responseUrl: standIn.responseUrl({ channel: message.channel, user: person, messageTs }),
+          }),
+        ),
+      );
     },
+    seenBy: (person, channel) =>
+      store.messages.filter((message) => message.channel === channel && seen(message, person)),
   };
 }
 
-/** Slack hands over what was typed with these three characters escaped. */
-const escaped = (line: string) =>
-  line.replaceAll('&', '&amp;').replaceAll('<', '&lt;').replaceAll('>', '&gt;');
+const taken = ({ acknowledged }: Acknowledgement): Taken => (acknowledged ? 'taken' : 'not-acknowledged');
 
-interface Button {
-  readonly blockId: string;
-  readonly value: string;
-}
-
-function buttonIn(blocks: readonly unknown[], action: string): Button | undefined {
-  for (const block of blocks as readonly {
-    readonly type?: string;
-    readonly block_id?: string;
-    readonly elements?: readonly { readonly action_id?: string; readonly value?: string }[];
-  }[]) {
-    const found =
-      block.type === 'actions' ? block.elements?.find(({ action_id }) => action_id === action) : undefined;
-    if (found !== undefined) return { blockId: block.block_id ?? '', value: found.value ?? '' };
-  }
-  return undefined;
+/** A command's acknowledgement may carry a text, which Slack shows to the asker alone. */
+function showAcknowledged(
+  { body }: Acknowledgement,
+  store: MessageStore,
+  person: string,
+  channel: string,
+): void {
+  const said = typeof body === 'object' && body !== null && 'text' in body ? body.text : body;
+  if (typeof said !== 'string' || said === '') return;
+  store.add({
+    channel,
+    threadTs: null,
+    user: botPerson.id,
+    text: said,
+    blocks: [],
+    metadata: null,
+    onlyFor: person,
+  });
 }

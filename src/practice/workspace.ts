@@ -24,6 +24,7 @@ export const channels: readonly Channel[] = [
 export const botPerson: Person = { id: 'UDIVISOR', name: 'Divisor', work: 'checks figures' };
 export const teamId = 'THARROWMERE';
 export const botId = 'BDIVISOR';
+export const appId = 'ADIVISOR';
 
 /** Lines that the page offers to try. */
 export const linesToTry: readonly string[] = [

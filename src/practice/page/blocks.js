@@ -1,48 +1,90 @@
-// Turns Block Kit, as the bot posted it, into elements. Nothing typed ever becomes markup: only text nodes are made.
+// Turns Block Kit, as the bot posted it, into elements.
+import { linkTo, make } from './elements.js';
+import { mrkdwnNodes } from './mrkdwn.js';
 
-/** @param {string} tag @param {string} [text] @param {string} [name] */
-export function make(tag, text, name) {
-  const node = document.createElement(tag);
-  if (text !== undefined) node.textContent = text;
-  if (name !== undefined) node.className = name;
+/**
+ * Renders a message's blocks.
+ * @param {readonly object[]} blocks
+ * @param {Record<string, string>} names people's names by their ids
+ * @param {(action: string) => void} press called with a button's action id
+ */
+export function renderBlocks(blocks, names, press) {
+  const out = document.createDocumentFragment();
+  for (const block of blocks) out.append(blockNode(block, names, press));
+  return out;
+}
+
+function blockNode(block, names, press) {
+  switch (block.type) {
+    case 'section': {
+      const node = make('div', undefined, 'section');
+      if (block.text) node.append(textNodes(block.text, names));
+      if (block.fields) {
+        const fields = make('div', undefined, 'fields');
+        for (const field of block.fields) {
+          const cell = make('div');
+          cell.append(textNodes(field, names));
+          fields.append(cell);
+        }
+        node.append(fields);
+      }
+      if (block.accessory) node.append(elementNode(block.accessory, names, press));
+      return node;
+    }
+    case 'header':
+      return make('h4', block.text.text);
+    case 'context':
+      return row(block.elements, 'small context', names, press);
+    case 'actions':
+      return row(block.elements, 'keys', names, press);
+    case 'divider':
+      return make('hr');
+    case 'image':
+      return pictureNode(block);
+    case 'rich_text':
+      return richText(block.elements, names);
+    case 'table':
+      return tableNode(block, names);
+    default:
+      return make('p', `(a block of the type ${block.type})`);
+  }
+}
+
+function row(elements, name, names, press) {
+  const node = make('div', undefined, name);
+  for (const element of elements) node.append(elementNode(element, names, press));
   return node;
 }
 
-/** Renders a message's blocks. `names` gives people's names, `press` is called with a button's action id. */
-export function renderBlocks(blocks, names, press) {
-  const out = document.createDocumentFragment();
-  for (const block of blocks) {
-    switch (block.type) {
-      case 'rich_text':
-        for (const element of block.elements) out.append(richElement(element, names));
-        break;
-      case 'actions': {
-        const row = make('div', undefined, 'keys');
-        for (const element of block.elements) {
-          const button = make('button', element.text.text);
-          button.type = 'button';
-          button.dataset.action = element.action_id;
-          if (element.accessibility_label) button.setAttribute('aria-label', element.accessibility_label);
-          button.addEventListener('click', () => press(element.action_id));
-          row.append(button);
-        }
-        out.append(row);
-        break;
-      }
-      case 'table':
-        out.append(tableOf(block.rows));
-        break;
-      case 'divider':
-        out.append(make('hr'));
-        break;
-      case 'section':
-      case 'header':
-        out.append(make('p', block.text?.text ?? ''));
-        break;
-      default:
-        out.append(make('p', `(a block of the type ${block.type})`));
+function elementNode(element, names, press) {
+  switch (element.type) {
+    case 'button': {
+      const button = make('button', element.text.text);
+      button.type = 'button';
+      button.dataset.action = element.action_id;
+      if (element.accessibility_label) button.setAttribute('aria-label', element.accessibility_label);
+      button.addEventListener('click', () => press(element.action_id));
+      return button;
     }
+    case 'image':
+      return pictureNode(element);
+    case 'plain_text':
+    case 'mrkdwn':
+      return textNodes(element, names);
+    default:
+      return make('span', `(an element of the type ${element.type})`);
   }
+}
+
+const textNodes = (text, names) =>
+  text.type === 'mrkdwn' ? mrkdwnNodes(text.text, names) : make('p', text.text);
+
+/** No picture is loaded from anywhere: its words stand for it. */
+const pictureNode = ({ alt_text: alt }) => make('p', `Picture: ${alt}`, 'picture');
+
+function richText(elements, names) {
+  const out = document.createDocumentFragment();
+  for (const element of elements) out.append(richElement(element, names));
   return out;
 }
 
@@ -53,7 +95,9 @@ function richElement(element, names) {
     case 'rich_text_preformatted':
       return withPieces(make('pre'), element.elements, names);
     case 'rich_text_list': {
-      const list = make('ul');
+      const list = make(element.style === 'ordered' ? 'ol' : 'ul');
+      if (element.style === 'ordered' && element.offset) list.start = element.offset + 1;
+      if (element.indent) list.classList.add(`indent-${Math.min(element.indent, 3)}`);
       for (const item of element.elements) list.append(withPieces(make('li'), item.elements, names));
       return list;
     }
@@ -62,42 +106,53 @@ function richElement(element, names) {
   }
 }
 
+const styles = { bold: 'strong', italic: 'em', strike: 's', code: 'code' };
+
 function withPieces(node, pieces, names) {
   for (const piece of pieces) {
-    const text =
-      piece.type === 'user' ? (names[piece.user_id] ?? piece.user_id) : (piece.text ?? piece.url ?? '');
-    if (piece.style?.bold) node.append(make('strong', text));
-    else if (piece.style?.italic) node.append(make('em', text));
-    else if (piece.style?.code) node.append(make('code', text));
-    else node.append(document.createTextNode(text));
+    let inside = pieceNode(piece, names);
+    for (const [style, tag] of Object.entries(styles)) {
+      if (piece.style?.[style] !== true) continue;
+      const around = make(tag);
+      around.append(inside);
+      inside = around;
+    }
+    node.append(inside);
   }
   return node;
 }
 
-function tableOf(rows) {
+function pieceNode(piece, names) {
+  switch (piece.type) {
+    case 'user':
+      return make('span', `@${names[piece.user_id] ?? piece.user_id}`, 'mention');
+    case 'link':
+      return linkTo(piece.url, piece.text ?? piece.url);
+    case 'emoji':
+      return document.createTextNode(`:${piece.name}:`);
+    default:
+      return document.createTextNode(piece.text ?? '');
+  }
+}
+
+function tableNode({ rows, column_settings: columns = [] }, names) {
   const frame = make('div', undefined, 'scroll');
   frame.tabIndex = 0;
   frame.setAttribute('role', 'group');
   frame.setAttribute('aria-label', 'Table');
   const table = make('table');
   rows.forEach((cells, index) => {
-    const row = make('tr');
-    for (const cell of cells) {
-      const node = make(index === 0 ? 'th' : 'td', cell.text ?? '');
+    const line = make('tr');
+    cells.forEach((cell, column) => {
+      const node = make(index === 0 ? 'th' : 'td');
       if (index === 0) node.scope = 'col';
-      row.append(node);
-    }
-    table.append(row);
+      if (cell.type === 'rich_text') node.append(richText(cell.elements, names));
+      else node.textContent = cell.text ?? String(cell.value ?? '');
+      if (cell.type === 'raw_number' || columns[column]?.align === 'right') node.className = 'right';
+      line.append(node);
+    });
+    table.append(line);
   });
   frame.append(table);
   return frame;
-}
-
-/** A message's top-level text with its three entities and its mentions, as plain words. */
-export function spokenText(text, names) {
-  return text
-    .replace(/<@([^>|]+)(?:\|[^>]*)?>/g, (_, id) => names[id] ?? id)
-    .replaceAll('&lt;', '<')
-    .replaceAll('&gt;', '>')
-    .replaceAll('&amp;', '&');
 }

@@ -1,73 +1,86 @@
-import { make, renderBlocks, spokenText } from './blocks.js';
+// The page of the practice room: who types where, the lines to try, and what comes back.
+import { make } from './elements.js';
+import { spokenText } from './mrkdwn.js';
+import { createSheet, sendOnEnter } from './sheet.js';
 
 const $ = (id) => document.getElementById(id);
-const [desk, line, send, leave, place, trouble, sheet] = [
-  'desk',
-  'line',
-  'send',
-  'leave',
-  'place',
-  'trouble',
-  'sheet',
-].map($);
+const [desk, line, send, trouble, announcement] = ['desk', 'line', 'send', 'trouble', 'announcement'].map($);
 
-let state = null;
 let person = null;
 let channel = null;
-/** The thread that is written in, by the time stamp of its first message. */
-let thread = null;
-let shownBefore = new Map();
+/** Messages that were shown before; `null` where everything is new, as after a change of person. */
+let seen = null;
+/** The newest question to the server for what is to be shown. */
+let newest = null;
 
-async function ask(path, body) {
-  const answer = await fetch(path, {
-    method: 'POST',
-    headers: { 'content-type': 'application/json' },
-    body: JSON.stringify(body),
-  });
-  if (!answer.ok) throw new Error((await answer.json()).error);
+const sheet = createSheet($('sheet'), {
+  press: (messageTs, action) => void act('press', { person, messageTs, action }),
+  write: async (threadTs, typed) => (await act('type', { person, channel, threadTs, line: typed })) !== null,
+});
+
+/** Fetches what this person sees here and draws it; the newest of several questions is the one that counts. */
+function load() {
+  const mine = (async () => {
+    const query = person === null ? '' : `?${new URLSearchParams({ person, channel })}`;
+    const state = await answerOf(await fetch(`state${query}`));
+    if (mine !== newest) return newest;
+    if (person === null) {
+      ({ person, channel } = state);
+      furnish(state);
+    }
+    draw(state);
+  })();
+  newest = mine;
+  return mine;
 }
 
-async function load() {
-  const answer = await fetch('state');
-  state = await answer.json();
-  person ??= state.people[0].id;
-  channel ??= state.channels[0].id;
-  if ($('people').childElementCount === 0) furnish();
-  draw();
+function draw({ people, channels, bot, messages }) {
+  const names = Object.fromEntries([...people, bot].map(({ id, name }) => [id, name]));
+  const here = channels.find(({ id }) => id === channel)?.name ?? '';
+  $('sheet-title').textContent = `The ${here}, as ${names[person]} sees it`;
+  sheet.draw(messages, names);
+  const fresh = seen === null ? [] : messages.filter(({ ts }) => !seen.has(ts));
+  seen = new Set(messages.map(({ ts }) => ts));
+  const heard = fresh
+    .filter(({ user }) => user === bot.id)
+    .map(({ text, onlyFor }) => {
+      const [first] = spokenText(text, names).split('\n');
+      return onlyFor === null ? `${bot.name}: ${first}` : `Only ${names[onlyFor]} sees this: ${first}`;
+    });
+  if (heard.length > 0) announcement.textContent = [...new Set(heard)].join(' ');
 }
 
-function furnish() {
+function furnish({ people, channels, linesToTry }) {
+  const change = (set) => (id) => {
+    set(id);
+    seen = null;
+    sheet.clear();
+    void attempt(load);
+  };
   choices(
     $('people'),
     'person',
-    state.people,
-    (each) => `${each.name}, ${each.work}`,
-    (id) => {
-      person = id;
-      shownBefore = new Map();
-      draw();
-    },
+    people,
+    ({ name, work }) => `${name}, ${work}`,
+    change((id) => (person = id)),
   );
   choices(
     $('channels'),
     'channel',
-    state.channels,
-    (each) => each.name,
-    (id) => {
-      channel = id;
-      thread = null;
-      shownBefore = new Map();
-      draw();
-    },
+    channels,
+    ({ name }) => `the ${name}`,
+    change((id) => (channel = id)),
   );
-  for (const text of state.linesToTry) {
+  for (const text of linesToTry) {
     const button = make('button', text);
     button.type = 'button';
     button.addEventListener('click', () => {
       line.value = text;
       line.focus();
     });
-    $('tries').append(button);
+    const item = make('li');
+    item.append(button);
+    $('tries').append(item);
   }
 }
 
@@ -80,82 +93,45 @@ function choices(into, name, entries, words, chosen) {
     input.value = entry.id;
     input.checked = index === 0;
     input.addEventListener('change', () => chosen(entry.id));
-    label.append(input, ` ${words(entry)}`);
+    label.append(input, make('span', words(entry)));
     into.append(label);
   });
 }
 
-function draw() {
-  const names = Object.fromEntries([...state.people, state.bot].map(({ id, name }) => [id, name]));
-  place.textContent = thread === null ? '' : 'You write in the thread: the line goes to @Divisor there.';
-  leave.hidden = thread === null;
-  const seen = state.messages.filter(
-    (message) => message.channel === channel && (message.onlyFor === null || message.onlyFor === person),
-  );
-  const roots = seen.filter(
-    (message) => message.threadTs === null || !seen.some(({ ts }) => ts === message.threadTs),
-  );
-  // Entries that did not change stay the same elements, so that a screen reader hears only what is new.
-  const next = new Map();
-  const entries = roots.map((root) => {
-    const replies = seen.filter((message) => message.threadTs === root.ts);
-    const key = JSON.stringify([root, replies]);
-    const node = shownBefore.get(key) ?? entryOf(root, replies, names);
-    next.set(key, node);
-    return node;
+async function answerOf(response) {
+  const body = await response.json();
+  if (!response.ok) throw new Error(body.error);
+  return body;
+}
+
+/** Types or presses, then shows what came of it. Comes back with what is new, or `null` where it was not taken. */
+const act = (path, body) =>
+  attempt(async () => {
+    const before = seen ?? new Set();
+    await answerOf(
+      await fetch(path, {
+        method: 'POST',
+        headers: { 'content-type': 'application/json' },
+        body: JSON.stringify(body),
+      }),
+    );
+    await load();
+    const fresh = [...(seen ?? [])].filter((ts) => !before.has(ts));
+    const [first] = fresh;
+    if (first !== undefined) sheet.find(first)?.scrollIntoView({ block: 'nearest' });
+    return fresh;
   });
-  shownBefore = next;
-  if (entries.length === 0)
-    entries.push(make('p', 'The sheet is empty. Pick a line above, or type your own.', 'empty'));
-  sheet.replaceChildren(...entries);
-}
 
-function entryOf(message, replies, names) {
-  const entry = make('article', undefined, message.onlyFor === null ? 'entry' : 'entry private');
-  entry.dataset.ts = message.ts;
-  const who =
-    message.onlyFor === null
-      ? (names[message.user] ?? message.user)
-      : `Only ${names[message.onlyFor] ?? 'you'} sees this`;
-  entry.append(make('div', who, 'who'));
-  const body = make('div', undefined, 'body');
-  const spoken = spokenText(message.text, names);
-  if (message.blocks.length > 0) {
-    body.append(renderBlocks(message.blocks, names, (action) => press(message.ts, action)));
-    const aloud = make('details');
-    aloud.append(make('summary', 'As read aloud'), make('pre', spoken));
-    body.append(aloud);
-  } else {
-    body.append(make('p', spoken));
-  }
-  entry.append(body);
-  if (message.threadTs === null && message.onlyFor === null) {
-    const under = make('div', undefined, 'thread');
-    for (const reply of replies) under.append(entryOf(reply, [], names));
-    const write = make('button', 'Write in this thread');
-    write.type = 'button';
-    write.addEventListener('click', () => {
-      thread = message.ts;
-      draw();
-      line.focus();
-      window.scrollTo({ top: 0 });
-    });
-    under.append(write);
-    entry.append(under);
-  }
-  return entry;
-}
-
-async function press(messageTs, action) {
-  await tell(() => ask('press', { person, messageTs, action }));
-}
-
-async function tell(work) {
+async function attempt(work) {
   trouble.textContent = '';
   try {
-    await work();
+    return await work();
   } catch (error) {
-    trouble.textContent = error.message || 'The practice room does not answer. Is it still running?';
+    trouble.textContent =
+      error instanceof TypeError
+        ? 'The practice room does not answer. Start it again with npm start; this page finds it by itself.'
+        : error.message;
+    return null;
   }
 }
 
@@ -163,28 +139,22 @@ desk.addEventListener('submit', (event) => {
   event.preventDefault();
   const typed = line.value;
   send.disabled = true;
-  void tell(async () => {
-    await ask('type', { person, channel, threadTs: thread, line: typed });
-    line.value = '';
-    await load();
-    sheet.lastElementChild?.scrollIntoView({ block: 'nearest' });
-  }).finally(() => {
-    send.disabled = false;
-    line.focus();
-  });
+  void act('type', { person, channel, threadTs: null, line: typed })
+    .then((fresh) => {
+      const answered = fresh?.some((ts) => sheet.find(ts)?.classList.contains('slip') === false);
+      // What was not understood stays, to be put right.
+      if (answered && line.value === typed) line.value = '';
+    })
+    .finally(() => {
+      send.disabled = false;
+      line.focus({ preventScroll: true });
+    });
 });
+sendOnEnter(line, desk);
 
-line.addEventListener('keydown', (event) => {
-  if (event.key !== 'Enter' || event.shiftKey || event.isComposing) return;
-  event.preventDefault();
-  desk.requestSubmit();
+const changes = new EventSource('changes');
+changes.addEventListener('message', () => void attempt(load));
+changes.addEventListener('error', () => {
+  trouble.textContent =
+    'The practice room does not answer. Start it again with npm start; this page finds it by itself.';
 });
-
-leave.addEventListener('click', () => {
-  thread = null;
-  draw();
-  line.focus();
-});
-
-new EventSource('changes').addEventListener('message', () => void load());
-await load();
