@@ -9,93 +9,118 @@ import type { ITokenConfig, TokenType } from 'chevrotain';
 const wordCharacters = '[^\\s!"#$%&()+,/:;<=>?\\[\\]^`{|}~\\u201c\\u201d\\u201e\\u00ab\\u00bb\\u2030\\u2192]';
 const wordEnd = `(?!${wordCharacters})`;
 
+/** Every code unit below 256, and one for each of the lexer's buckets above. */
+const anyStart = [
+  ...Array.from({ length: 256 }, (_, code) => code),
+  ...Array.from({ length: 257 }, (_, bucket) => Math.min(65_535, 256 + bucket * 255)),
+];
+const wordCharacter = new RegExp(wordCharacters);
+
 export const Word = createToken({
   name: 'Word',
   pattern: new RegExp(wordCharacters + '+'),
   line_breaks: false,
+  start_chars_hint: anyStart.filter((code) => code > 255 || wordCharacter.test(String.fromCharCode(code))),
 });
 
-/** A keyword: longest spelling first, ending where a word ends. */
-const keyword = (name: string, spellings: string): TokenType =>
+/** Characters that a token can start with, so that the lexer need not work them out from the pattern at every start. */
+const starts = (characters: string): string[] => [...characters];
+const eitherCase = (letters: string): string[] => starts(letters.toLowerCase() + letters.toUpperCase());
+const digits = starts('0123456789');
+
+/** A keyword: longest spelling first, ending where a word ends. `letters` are those that its spellings start with. */
+const keyword = (name: string, letters: string, spellings: string): TokenType =>
   createToken({
     name,
     pattern: new RegExp(`(?:${spellings})${wordEnd}`, 'i'),
     longer_alt: Word,
     line_breaks: false,
+    start_chars_hint: eitherCase(letters),
   });
-const sign = (name: string, pattern: RegExp, more: Partial<ITokenConfig> = {}): TokenType =>
-  createToken({ name, pattern, line_breaks: false, ...more });
+const sign = (
+  name: string,
+  pattern: RegExp,
+  first: (string | number)[],
+  more: Partial<ITokenConfig> = {},
+): TokenType => createToken({ name, pattern, line_breaks: false, start_chars_hint: first, ...more });
 
-export const Newline = sign('Newline', /\n/, { line_breaks: true });
-const Space = sign('Space', /[ \t]+/, { group: Lexer.SKIPPED });
-export const Address = sign('Address', /https?:\/\/[^\s|;"]+/i);
+export const Newline = sign('Newline', /\n/, ['\n'], { line_breaks: true });
+const Space = sign('Space', /[ \t]+/, [' ', '\t'], { group: Lexer.SKIPPED });
+export const Address = sign('Address', /https?:\/\/[^\s|;"]+/i, eitherCase('h'));
 export const Quoted = sign(
   'Quoted',
   /"[^"\n]*"|[\u201c\u201e][^\u201c\u201d\n]*[\u201c\u201d]|\u00ab[^\u00bb\n]*\u00bb/,
+  ['"', '\u201c', '\u201e', '\u00ab'],
 );
-export const YearPair = sign('YearPair', /(?:19|20)\d\d\/\d\d(?![\d,.])/);
-export const Range = sign('Range', new RegExp(`\\d+(?:\\.\\d+)?-\\d+(?:\\.\\d+)?${wordEnd}`));
+export const YearPair = sign('YearPair', /(?:19|20)\d\d\/\d\d(?![\d,.])/, ['1', '2']);
+export const Range = sign('Range', new RegExp(`\\d+(?:\\.\\d+)?-\\d+(?:\\.\\d+)?${wordEnd}`), digits);
 export const NumberToken = sign(
   'Number',
   new RegExp(`(?:\\d+(?:,\\d+)*(?:\\.\\d+)?|\\.\\d+)(?:k|m|bn)?(?:\\.(?!\\S))?${wordEnd}`, 'i'),
+  [...digits, '.'],
 );
 export const Percent = sign(
   'Percent',
   new RegExp(`%|per[ -]?cent${wordEnd}|p\\.c\\.|pct${wordEnd}|pc${wordEnd}`, 'i'),
+  ['%', 'p', 'P'],
 );
-export const PerMille = sign('PerMille', /\u2030/);
-export const Colon = sign('Colon', /:/);
-export const Semicolon = sign('Semicolon', /;/);
-export const Bar = sign('Bar', /\|/);
-export const Comma = sign('Comma', /,/);
-export const Slash = sign('Slash', /\//);
-export const Dash = sign('Dash', /-+(?=\s|$)/);
-export const Arrow = sign('Arrow', /\u2192|->|=>/);
-export const Less = sign('Less', /</);
-export const Open = sign('Open', /[([]/);
-export const Close = sign('Close', /[)\]]/);
-export const Equals = sign('Equals', /=/);
-export const Ampersand = sign('Ampersand', /&/);
-export const Question = sign('Question', /\?/);
+export const PerMille = sign('PerMille', /\u2030/, ['\u2030']);
+export const Colon = sign('Colon', /:/, [':']);
+export const Semicolon = sign('Semicolon', /;/, [';']);
+export const Bar = sign('Bar', /\|/, ['|']);
+export const Comma = sign('Comma', /,/, [',']);
+export const Slash = sign('Slash', /\//, ['/']);
+export const Dash = sign('Dash', /-+(?=\s|$)/, ['-']);
+export const Arrow = sign('Arrow', /\u2192|->|=>/, ['\u2192', '-', '=']);
+export const Less = sign('Less', /</, ['<']);
+export const Open = sign('Open', /[([]/, ['(', '[']);
+export const Close = sign('Close', /[)\]]/, [')', ']']);
+export const Equals = sign('Equals', /=/, ['=']);
+export const Ampersand = sign('Ampersand', /&/, ['&']);
+export const Question = sign('Question', /\?/, ['?']);
 
-export const Of = keyword('Of', 'out of(?: the| all| our)?|of(?: the| all| our)?');
-export const In = keyword('In', 'in');
-export const Per = keyword('Per', 'per');
-export const Versus = keyword('Versus', 'versus|vs\\.?|v\\.?');
+export const Of = keyword('Of', 'o', 'out of(?: the| all| our)?|of(?: the| all| our)?');
+export const In = keyword('In', 'i', 'in');
+export const Per = keyword('Per', 'p', 'per');
+export const Versus = keyword('Versus', 'v', 'versus|vs\\.?|v\\.?');
 export const Against = keyword(
   'Against',
+  'acwbhlt',
   'against|compared (?:with|to)|(?:worse |better |higher |lower )?than',
 );
-export const And = keyword('And', 'and|or');
-export const From = keyword('From', 'from');
-export const To = keyword('To', 'to');
-export const CasesWord = keyword('Cases', 'cases');
-export const CoverageWord = keyword('Coverage', 'coverage');
-export const Level = keyword('Level', 'level');
-export const Reference = keyword('Reference', 'reference');
-export const Population = keyword('Population', 'population');
-export const Among = keyword('Among', 'among');
-export const Period = keyword('Period', 'period');
-export const Source = keyword('Source', 'source');
-export const Note = keyword('Note', 'note');
-export const Exact = keyword('Exact', 'exact');
-export const OnlyMe = keyword('OnlyMe', 'only me');
-export const Says = keyword('Says', 'says');
-export const FewerThan = keyword('FewerThan', '(?:fewer|less) than|under');
+export const And = keyword('And', 'ao', 'and|or');
+export const From = keyword('From', 'f', 'from');
+export const To = keyword('To', 't', 'to');
+export const CasesWord = keyword('Cases', 'c', 'cases');
+export const CoverageWord = keyword('Coverage', 'c', 'coverage');
+export const Level = keyword('Level', 'l', 'level');
+export const Reference = keyword('Reference', 'r', 'reference');
+export const Population = keyword('Population', 'p', 'population');
+export const Among = keyword('Among', 'a', 'among');
+export const Period = keyword('Period', 'p', 'period');
+export const Source = keyword('Source', 's', 'source');
+export const Note = keyword('Note', 'n', 'note');
+export const Exact = keyword('Exact', 'e', 'exact');
+export const OnlyMe = keyword('OnlyMe', 'o', 'only me');
+export const Says = keyword('Says', 's', 'says');
+export const FewerThan = keyword('FewerThan', 'flu', '(?:fewer|less) than|under');
 export const About = keyword(
   'About',
+  'arcnos',
   'about|around|roughly|approximately|approx\\.?|ca\\.?|nearly|almost|over|some',
 );
-export const Magnitude = keyword('Magnitude', 'hundred|thousand|million|billion');
+export const Magnitude = keyword('Magnitude', 'htmb', 'hundred|thousand|million|billion');
 export const NumberWord = keyword(
   'NumberWord',
+  'otfsned',
   'one|two|three|four|five|six|seven|eight|nine|ten|eleven|twelve|twenty|thirty|forty|fifty|sixty|seventy|eighty|ninety|dozen',
 );
 export const FractionWord = keyword(
   'FractionWord',
+  'ahot',
   'a half|half|(?:a|one) third|two thirds|(?:a|one) quarter|three[ -]quarters|a fifth|a tenth',
 );
-export const Other = sign('Other', /[^]/, { line_breaks: true });
+export const Other = sign('Other', /[^]/, anyStart, { line_breaks: true });
 
 /** In the order in which they are tried. */
 export const fineTokens: readonly TokenType[] = [
@@ -157,7 +182,7 @@ export function fineTokensOf(text: string) {
   lexer ??= new Lexer([...fineTokens], {
     positionTracking: 'onlyOffset',
     skipValidations: true,
-    ensureOptimizations: false,
+    ensureOptimizations: true,
   });
   return lexer.tokenize(text).tokens;
 }
