@@ -61,8 +61,18 @@ const footnote = /[\u00b2\u00b3\u00b9\u2070\u2074-\u2079\u2020\u2021]/;
 const digit = /\d/;
 const threeDigits = /\d{3}(?!\d)/y;
 
+// Most lines hold nothing that has to be folded, and are their own map.
+const needsNoFolding = /^[A-Za-z0-9 ,.:;|%()/\n"+?@#=-]*$/;
+const bulletOrEmoji = /(?:^|\n)[ \t]*(?:-[ \t]|\d{1,2}[.)][ \t])|(?:^|\s):[a-z]/;
+
+function unfolded(typed: string): Folded {
+  const from = Array.from({ length: typed.length + 1 }, (_, at) => at);
+  return { text: typed, from, to: from.slice(1), remarks: [], typed };
+}
+
 /** Folds a typed line in one pass. Its cost is linear in the length of the line. */
 export function fold(typed: string): Folded {
+  if (needsNoFolding.test(typed) && !bulletOrEmoji.test(typed)) return unfolded(typed);
   const out: string[] = [];
   const from: number[] = [];
   const to: number[] = [];
