@@ -125,7 +125,7 @@ function withPieces(node, pieces, names) {
 function pieceNode(piece, names) {
   switch (piece.type) {
     case 'user':
-      return make('span', `@${names[piece.user_id] ?? piece.user_id}`, 'mention');
+      return document.createTextNode(names[piece.user_id] ?? piece.user_id);
     case 'link':
       return linkTo(piece.url, piece.text ?? piece.url);
     case 'emoji':

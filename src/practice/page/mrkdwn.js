@@ -26,7 +26,7 @@ export const decoded = (text) =>
 function tokenNode(token, names) {
   const [address, words] = token.split('|');
   if (address.startsWith('@'))
-    return make('span', `@${names[address.slice(1)] ?? words ?? address.slice(1)}`, 'mention');
+    return document.createTextNode(`@${names[address.slice(1)] ?? words ?? address.slice(1)}`);
   if (address.startsWith('#')) return document.createTextNode(words || address);
   if (address.startsWith('!')) return document.createTextNode(words ?? `@${address.slice(1)}`);
   return linkTo(decoded(address), decoded(words ?? address));
