@@ -2,6 +2,7 @@ import { checkCases, checkLevel, checkWhole } from './argument-error.ts';
 import { bracketedRoot } from './bracketed-root.ts';
 import type { Interval, TwoGroups } from './interval.ts';
 import { oddsRatioInterval } from './odds-ratio-interval.ts';
+import { pooledOddsRatio } from './pooled-odds-ratio.ts';
 import { swapped } from './score-factor.ts';
 
 /**
@@ -62,4 +63,15 @@ function outward(start: number, end: number, direction: 1 | -1, ratio: (u: numbe
     if (sum === Infinity) break;
   }
   return sum;
+}
+
+/**
+ * The conditional estimate of the odds ratio: the one at which the group's cases are as many as expected, all margins given.
+ *
+ * @returns 0 where the cases are the fewest that the margins allow, `null` where they are the most
+ *
+ * Cornfield 1956. Small tables: it lies nearer to 1 than the plain odds ratio.
+ */
+export function conditionalOddsRatio(groups: TwoGroups): number | null {
+  return pooledOddsRatio([groups]);
 }
