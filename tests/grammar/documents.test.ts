@@ -2,7 +2,7 @@ import { existsSync, readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { readLine } from '../../grammar/read-line.ts';
 import { tagTypes } from '../../grammar/tags.ts';
-import { commandLineLimits } from '../../src/answer/answer-line.ts';
+import { commandLineLimits, slackLimits } from '../../src/answer/answer-line.ts';
 import { linesToTry } from '../../src/practice/workspace.ts';
 import { helpTopics } from '../../src/render/words/help.ts';
 import packageFile from '../../package.json' with { type: 'json' };
@@ -13,15 +13,52 @@ const blocks = (text: string, kind: string) =>
   [...text.matchAll(new RegExp(`\`\`\`${kind}\n([\\s\\S]*?)\`\`\``, 'g'))].flatMap(([, lines = '']) =>
     lines.trimEnd().split('\n'),
   );
+const section = (text: string, heading: string) =>
+  text.split(/^## /m).find((each) => each.startsWith(`${heading}\n`)) ?? '';
+/** The kind of question, or the id of the diagnosis. */
+const kindOf = (line: string) => {
+  const reading = readLine(line, commandLineLimits);
+  if (reading.kind === 'question') return reading.question.kind;
+  return reading.kind === 'diagnosis' ? reading.diagnosis.id : reading.kind;
+};
 const readAs = (line: string) => readLine(line, commandLineLimits).kind;
 
 describe('grammar/GRAMMAR.md', () => {
   const text = read('grammar/GRAMMAR.md');
 
   it.each(blocks(text, 'divisor'))('%j is read', (line) => expect(readAs(line)).toBe('question'));
+  it.each([
+    ['Counts', 'counts'],
+    ['Shares', 'shares'],
+    ['Stated percentages and frequencies', 'stated'],
+    ['Bare counts', 'bare-counts'],
+    ['Clauses', 'counts'],
+    ['Names', 'counts'],
+  ])('every example under %s is read as %s', (heading, kind) => {
+    const lines = blocks(section(text, heading), 'divisor');
+    expect(lines).not.toEqual([]);
+    expect(lines.map((line) => [line, kindOf(line)])).toEqual(lines.map((line) => [line, kind]));
+  });
+  it('refuses each kind that is not read yet as such, not for another reason', () => {
+    const lines = blocks(section(text, 'Not read yet'), 'refused');
+    expect(lines).not.toEqual([]);
+    for (const line of lines) expect(kindOf(line), line).toMatch(/^(?:not-yet-|year-or-people$)/);
+  });
+  it('owns up to wordings that are still taken for bare counts', () => {
+    const lines = blocks(section(text, 'Not read yet'), 'bare-counts');
+    expect(lines).not.toEqual([]);
+    expect(lines.map((line) => [line, kindOf(line)])).toEqual(lines.map((line) => [line, 'bare-counts']));
+  });
   it.each(blocks(text, 'refused'))('%j is refused or asked about', (line) =>
     expect(readAs(line)).toBe('diagnosis'),
   );
+
+  it('states the limits that run', () => {
+    const words = (most: number) => most.toLocaleString('en');
+    expect(text).toContain(
+      `at most ${words(commandLineLimits.characters)} characters (${words(slackLimits.characters)} in Slack) and ${String(commandLineLimits.groups)} groups`,
+    );
+  });
 
   it('has the table of the tags that run', () => {
     const rows = tagTypes.map(({ name, LABEL }) => `| ${name} | ${LABEL ?? ''} |`);
