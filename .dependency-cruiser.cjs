@@ -44,7 +44,12 @@ module.exports = {
     ...layer('answer', at('answer'), [grammar, at('report')], []),
     ...layer('ledger', at('ledger'), [at('answer')], ['kysely', 'better-sqlite3', ...node]),
     ...layer('slack', at('slack'), [at('answer'), at('render')], ['@slack/[^/]+', 'undici', ...node]),
-    ...layer('practice', at('practice'), [at('slack'), at('answer'), at('render')], ['@slack/[^/]+', ...node]),
+    ...layer(
+      'practice',
+      at('practice'),
+      [at('slack'), at('answer'), at('render')],
+      ['@slack/[^/]+', ...node],
+    ),
     ...layer('cli', at('cli'), [grammar, '^src/'], ['dotenv', ...node]),
   ],
   options: {

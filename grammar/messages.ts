@@ -49,6 +49,7 @@ export const messages = {
   'one-share': (share: string) => `${share} of what, compared with what? I need a second group, or a count.`,
   'one-count': (count: string) => `${count} out of how many? Add the total, or a second group.`,
   'mixed-figures': () => 'Some groups have counts and others percentages. Write all of them the same way.',
+  'per-in-the-middle': (text: string) => `"${text}" belongs at the end, after the last group.`,
   'level-out-of-range': (text: string) => `A level of ${text} is outside 50% to 99.99%.`,
   'clause-without-value': (word: string, example: string) =>
     `"${word}" needs something after it, as in "${example}".`,
@@ -75,6 +76,8 @@ export const messages = {
     `I do not read "${word}" yet. Leave it out and I answer the figure itself.`,
   'not-yet-alarm': () =>
     'I do not read tests and alarms yet. I can compare how often they went off: how many, out of how many.',
+  'not-yet-whole': (name: string) =>
+    `${name} contains the other group. I compare a group with the rest, without those counted in it.`,
   'not-yet-layers': () => 'I do not read groups within layers yet. Send one layer at a time.',
 } satisfies Record<string, (...pieces: string[]) => string>;
 

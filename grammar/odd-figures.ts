@@ -21,6 +21,8 @@ interface Odd {
 
 const alarmWord = /^(?:sensitivity|specificity|prevalence|sens|spec|prev|tp|fp|tn|fn|ppv|npv|accurate)$/i;
 const measured = /^\d[\d.,]*(?:ms|s|sec|kg|g|km|m|cm|mm|mb|gb|px|ml|l|\u00b0c|db)$/i;
+const unitOfMeasure =
+  /^(?:ms|sec|seconds?|kg|km|cm|mm|mb|gb|px|ml|litres?|metres?|degrees?|days?|hours?|minutes?)$/i;
 const exponent = /^(?:\d+(?:\.\d+)?e[+-]?\d+|0x[\da-f]+)$/i;
 const changeExample = 'before: 41 of 1,000 vs after: 52 of 1,100';
 
@@ -67,7 +69,35 @@ function oddAt(tokens: Tokens, at: number, folded: Folded): Odd | null {
       ['over the budget: 18 of 1,204 vs ... of ...'],
     );
   }
+  if (is(at, token.Arrow) && hasNumber(tokens, at + 1))
+    return odd('not-yet-change', at + 2, [], ['later: 8.1% vs earlier: 4.2%']);
+  if (
+    is(at, token.CoverageWord) &&
+    (/^by$/i.test(image(at + 1)) || tokens.slice(at).some((_, place) => isOwnInterval(tokens, at + place)))
+  ) {
+    return odd('not-yet-coverage', at + 2, [], ['cases: no helmet 44, helmet 31; coverage: no helmet 38%']);
+  }
+  if (is(at, token.Of) && /^(?:them|which|whom|these|those)$/i.test(image(at + 1)))
+    return totalFirst(tokens, at, odd);
   if (is(at, token.Word)) {
+    if (/^caught$/i.test(each.image) && hasNumber(tokens, at + 1)) {
+      return odd('not-yet-alarm', at + 2, [], ['old filter: 18 of 1,204 vs new filter: 9 of 2,377']);
+    }
+    if (
+      /^a$/i.test(each.image) &&
+      is(at - 1, token.NumberToken) &&
+      /^(?:day|night|week|month|year|hour|shift)$/i.test(image(at + 1))
+    ) {
+      return odd('not-yet-rate', at + 2, [], ['depot A: 14 of 5,200 vs depot B: 9 of 8,800']);
+    }
+    if (unitOfMeasure.test(each.image) && is(at - 1, token.NumberToken) && !hasConnector(tokens)) {
+      return odd(
+        'measurement',
+        at + 1,
+        [`${image(at - 1)} ${each.image}`],
+        ['slower than 300 ms: 31 of 91,000 vs ... of ...'],
+      );
+    }
     if (/^[\u00a3\u20ac\u00a5]\.?\d/.test(each.image)) {
       return odd('money', at + 1, [each.image], ['over the budget: 18 of 1,204 vs ... of ...']);
     }
@@ -152,6 +182,33 @@ function oddAt(tokens: Tokens, at: number, folded: Folded): Odd | null {
       return odd('total-first', 2, [image(1)], [`${second.image} of ${image(1)} ${noun}`.trim()]);
   }
   return null;
+}
+
+/** `38% (34 to 42)`: coverage with an interval of its own. */
+const isOwnInterval = (tokens: Tokens, at: number) =>
+  tokens[at]?.tokenType === token.Open &&
+  tokens[at + 1]?.tokenType === token.NumberToken &&
+  tokens.slice(at + 2, at + 4).some(({ tokenType }) => tokenType === token.To);
+
+/** `75 injured, 44 of them no helmet`: the total is the first number, the count the one beside "of them". */
+function totalFirst(
+  tokens: Tokens,
+  at: number,
+  odd: (id: MessageId, to: number, pieces?: readonly string[], suggestions?: readonly string[]) => Odd,
+): Odd | null {
+  const numbers = tokens.filter(({ tokenType }) => tokenType === token.NumberToken);
+  const [total, count] = numbers;
+  if (total === undefined || count === undefined) return null;
+  const rest = tokens
+    .slice(at + 2)
+    .filter(({ tokenType }) => tokenType === token.Word)
+    .map(({ image: word }) => word);
+  return odd(
+    'total-first',
+    at + 2,
+    [total.image],
+    [`${rest.length === 0 ? '' : `${rest.join(' ')}: `}${count.image} of ${total.image}`],
+  );
 }
 
 const isPlainDigits = (text: string) => /^[\d,]+$/.test(text);

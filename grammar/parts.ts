@@ -36,7 +36,13 @@ export function partsOf(tokens: readonly IToken[], length: number): readonly Par
       close(each.startOffset);
       continue;
     }
-    if (seenFigure && current.length > 0 && startsLooseClause(tokens, at)) close(each.startOffset);
+    if (
+      seenFigure &&
+      current.length > 0 &&
+      (each.tokenType === token.CoverageWord || startsLooseClause(tokens, at))
+    ) {
+      close(each.startOffset);
+    }
     if (each.tokenType === token.NumberToken) seenFigure = true;
     current.push(each);
   }
@@ -60,6 +66,8 @@ function startsLooseClause(tokens: readonly IToken[], at: number): boolean {
   switch (type) {
     case token.Level:
       return next === token.NumberToken && tokens[at + 2]?.tokenType === token.Percent;
+    case token.Reference:
+      return next !== undefined && completeBefore(tokens, at);
     case token.OnlyMe:
     case token.Exact:
       return endsPart(tokens, at + 1);

@@ -3,6 +3,7 @@ import type { IRecognitionException, IToken } from 'chevrotain';
 import { diagnosis, linesToTry } from './diagnosis.ts';
 import { fold, typedSpan } from './fold.ts';
 import type { Folded } from './fold.ts';
+import { withoutAbout } from './about.ts';
 import { joinSpacedNumbers } from './odd-figures.ts';
 import { parseTags } from './parser.ts';
 import type { Diagnosis, HelpTopic, LineLimits, LineReading } from './question.ts';
@@ -25,7 +26,7 @@ export function readLine(line: string, limits: LineLimits): LineReading {
   const topic = helpTopicOf(line);
   if (topic !== null) return { kind: 'help', topic };
   const folded = fold(line);
-  const fine = joinSpacedNumbers(fineTokensOf(folded.text));
+  const { tokens: fine, remarks } = withoutAbout(joinSpacedNumbers(fineTokensOf(folded.text)), folded);
   if (/^[\s?]*$/.test(folded.text))
     return refusal(diagnosis('empty-line', { from: 0, to: line.length }, [], linesToTry));
   const { tags: tagged, fault, hasFigure } = tagLine(fine, folded);
@@ -39,7 +40,12 @@ export function readLine(line: string, limits: LineLimits): LineReading {
   const { tree, errors } = parseTags(tagged);
   const [error] = errors;
   if (error !== undefined) return refusal(faultOf(error, folded));
-  const question = settleLine(partsOfTree(tree, folded), line, folded.remarks, limits.groups);
+  const question = settleLine(
+    partsOfTree(tree, folded),
+    line,
+    [...folded.remarks, ...remarks],
+    limits.groups,
+  );
   return question.ok ? { kind: 'question', question: question.value } : refusal(question.fault);
 }
 

@@ -1,4 +1,5 @@
 import { diagnosis } from './diagnosis.ts';
+import { grouped } from './numbers.ts';
 import { chosenByOutcome, earlierOf, nameKey } from './labels.ts';
 import { countFromShare, countQuantity, refused, settled, shareQuantity } from './quantities.ts';
 import type { Settled } from './quantities.ts';
@@ -93,6 +94,8 @@ export function settleCounts(items: readonly Item[], setting: Setting): Settled<
   }
   const reference = referenceOf(naming.labels, setting);
   if (!reference.ok) return reference;
+  const whole = wholeAmong(groups);
+  if (whole !== null) return refused(whole);
   return settled({
     kind: 'counts',
     groups,
@@ -175,6 +178,19 @@ function countsGroup(item: Item, label: string | null, setting: Setting): Settle
   );
 }
 
+/** A part compared with the whole that contains it: refused, with the rest worked out and ready to send. */
+function wholeAmong(groups: readonly CountsGroup[]) {
+  const [part, whole] = groups;
+  if (part === undefined || whole === undefined || groups.length !== 2) return null;
+  if (!/^(?:all|total|overall|whole|everyone|everybody|altogether)$/.test((whole.label ?? '').toLowerCase()))
+    return null;
+  const [cases, total] = [whole.cases.value - part.cases.value, whole.total.value - part.total.value];
+  const possible = cases >= 0 && total > 0 && cases <= total && Number.isInteger(cases);
+  const name = part.label === null ? '' : `${part.label}: `;
+  const rest = `${name}${part.cases.text} of ${part.total.text} vs the rest: ${grouped(cases)} of ${grouped(total)}`;
+  return diagnosis('not-yet-whole', whole.span, [whole.label ?? ''], possible ? [rest] : []);
+}
+
 /** Percentages or frequencies without counts. One alone has nothing to be compared with. */
 export function settleStated(items: readonly Item[], setting: Setting): Settled<Question> {
   const nouns = items.map(({ figure }) => (figure.kind === 'share' ? (figure.noun?.text ?? null) : null));
@@ -246,6 +262,11 @@ export function settleBareCounts(items: readonly Item[], setting: Setting): Sett
   }
   const names = checkNames(items, naming.labels, setting);
   if (!names.ok) return names;
+  const [first, last] = [items[0], items.at(-1)];
+  if (earlierOf(naming.labels) !== null && first !== undefined && last !== undefined) {
+    const span = { from: first.span.from, to: last.span.to };
+    return refused(diagnosis('not-yet-change', span, [], ['before: 41 of 1,000 vs after: 52 of 1,100']));
+  }
   const reference = referenceOf(naming.labels, setting);
   if (!reference.ok) return reference;
   return settled({

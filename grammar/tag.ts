@@ -249,6 +249,16 @@ class TaggingPass {
     }
     while (from < to && (tokens[from]?.tokenType === token.Open || tokens[from]?.tokenType === token.Close))
       from += 1;
+    if (tokens[from]?.tokenType === token.Per && from < to && to < tokens.length) {
+      const [start, end] = [offset(tokens, from), endOffset(tokens, to)];
+      this.#refuse(
+        'per-in-the-middle',
+        start,
+        end,
+        [this.#folded.text.slice(start, end)],
+        [`${this.#repaired(start, end, '').replace(/ {2,}/g, ' ')}; ${this.#folded.text.slice(start, end)}`],
+      );
+    }
     this.#words(tags.AfterTag, tokens, from, to);
   }
 

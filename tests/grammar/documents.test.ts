@@ -44,11 +44,6 @@ describe('grammar/GRAMMAR.md', () => {
     expect(lines).not.toEqual([]);
     for (const line of lines) expect(kindOf(line), line).toMatch(/^(?:not-yet-|year-or-people$)/);
   });
-  it('owns up to wordings that are still taken for bare counts', () => {
-    const lines = blocks(section(text, 'Not read yet'), 'bare-counts');
-    expect(lines).not.toEqual([]);
-    expect(lines.map((line) => [line, kindOf(line)])).toEqual(lines.map((line) => [line, 'bare-counts']));
-  });
   it.each(blocks(text, 'refused'))('%j is refused or asked about', (line) =>
     expect(readAs(line)).toBe('diagnosis'),
   );

@@ -79,6 +79,18 @@ const refused: readonly (readonly [string, string, string])[] = [
     'by age: under 40',
   ],
   ['of 75 injured, 44 wore no helmet', 'total-first', 'of 75'],
+  ['75 injured, 44 of them no helmet', 'total-first', 'of them'],
+  ['1,204 staff, of which 18 sick', 'total-first', 'of which'],
+  ['18 of 1,204 per 1,000 vs 9 of 2,377', 'per-in-the-middle', 'per 1,000'],
+  ['2023: 412 vs 2024: 530', 'not-yet-change', '2023: 412 vs 2024: 530'],
+  ['4.2% \u2192 8.1%', 'not-yet-change', '\u2192 8.1'],
+  ['caught 46, missed 4, false alarms 30, quiet 920', 'not-yet-alarm', 'caught 46'],
+  ['5 a week vs 3 a week', 'not-yet-rate', 'a week'],
+  ['240 ms vs 310 ms', 'measurement', 'ms'],
+  ['4.2 days vs 3.1 days', 'measurement', 'days'],
+  ['coverage by month: Jan 20%, Feb 30%; cases by month: 30, 25', 'not-yet-coverage', 'coverage by'],
+  ['cases: no helmet 44, helmet 31; coverage: helmet 38% (34 to 42)', 'not-yet-coverage', 'coverage:'],
+  ['harbour ward: 31 of 9,240 vs all: 210 of 88,000', 'not-yet-whole', 'all: 210 of 88,000'],
 ];
 
 describe('a line that cannot be read', () => {
