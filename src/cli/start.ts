@@ -28,7 +28,14 @@ if (!result.ok) {
   process.stderr.write(`Divisor cannot start:\n${result.faults.map((fault) => `- ${fault}`).join('\n')}\n`);
   process.exitCode = 2;
 } else {
-  await run(result.configuration);
+  const { port } = result.configuration;
+  await run(result.configuration).catch((error: unknown) => {
+    if (!(error instanceof Error && 'code' in error && error.code === 'EADDRINUSE')) throw error;
+    process.stderr.write(
+      `Divisor cannot start:\n- port ${port} is taken; end what listens there, or set PORT to another\n`,
+    );
+    process.exit(1);
+  });
 }
 
 async function run(configuration: Configuration): Promise<void> {
