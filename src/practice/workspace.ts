@@ -30,6 +30,8 @@ export const appId = 'ADIVISOR';
 export const linesToTry: readonly string[] = [
   'cases: no helmet 44, helmet 31; coverage: no helmet 38%',
   'night shift: 18 of 1,204 vs day shift: 9 of 2,377',
+  'harbour ferry: 31 of 9,240 (3.4%)',
   '71% of the injured vs 38% of riders',
   '18 of 12',
+  'help',
 ];
