@@ -1,12 +1,11 @@
-import type { IToken, TokenType } from 'chevrotain';
+import type { IToken } from 'chevrotain';
 import { clauseOf } from './clauses.ts';
-import { diagnosis } from './diagnosis.ts';
 import { figureAt } from './figures.ts';
 import { oddFigureIn } from './odd-figures.ts';
 import type { Figure } from './figures.ts';
-import { typedSpan } from './fold.ts';
 import type { Folded } from './fold.ts';
 import { partsOf } from './parts.ts';
+import { TagWriter } from './tag-writer.ts';
 import { withoutStated } from './stated-beside.ts';
 import type { StatedShare } from './stated-beside.ts';
 import type { Part } from './parts.ts';
@@ -27,7 +26,7 @@ import {
   wordsText,
 } from './tag-words.ts';
 import * as tags from './tags.ts';
-import type { Tagged, TagPayload } from './tags.ts';
+import type { Tagged } from './tags.ts';
 import * as token from './tokens.ts';
 
 /** The tagged line, or the first thing in it that cannot be. */
@@ -66,17 +65,9 @@ function headOf({ tokens }: Part): 'cases' | 'coverage' | null {
   return first === token.CasesWord && tokens[1]?.tokenType === token.Colon ? 'cases' : null;
 }
 
-class TaggingPass {
-  readonly tags: Tagged[] = [];
-  fault: Diagnosis | null = null;
-  readonly #folded: Folded;
-
-  constructor(folded: Folded) {
-    this.#folded = folded;
-  }
-
+class TaggingPass extends TagWriter {
   part(part: Part, head: 'cases' | 'coverage' | null, hasCoverage: boolean): void {
-    const clause = head === null ? clauseOf(part, this.#folded.text) : null;
+    const clause = head === null ? clauseOf(part, this.folded.text) : null;
     const [first] = part.tokens;
     if (first === undefined) return;
     if (clause !== null) {
@@ -85,16 +76,16 @@ class TaggingPass {
           this.push(tags.ClauseTag, first.startOffset, part.end, clause);
           return;
         case 'no-value':
-          this.#refuse('clause-without-value', first.startOffset, part.end, [clause.word, clause.example]);
+          this.refuse('clause-without-value', first.startOffset, part.end, [clause.word, clause.example]);
           return;
         case 'not-yet':
-          this.#refuse('not-yet-clause', first.startOffset, first.startOffset + first.image.length, [
+          this.refuse('not-yet-clause', first.startOffset, first.startOffset + first.image.length, [
             clause.word,
           ]);
           return;
       }
     }
-    this.fault ??= oddFigureIn(part.tokens, this.#folded);
+    this.fault ??= oddFigureIn(part.tokens, this.folded);
     const { tokens, stated } = withoutStated(part.tokens);
     const { figures, used } = this.#figuresOf(tokens);
     const isHead =
@@ -145,7 +136,7 @@ class TaggingPass {
   ): void {
     const [firstFigure] = figures;
     if (firstFigure === undefined) {
-      this.#words(tags.AfterTag, tokens, start, tokens.length);
+      this.words(tags.AfterTag, tokens, start, tokens.length);
       return;
     }
     if (connected) this.#looseTotal(tokens, figures);
@@ -180,25 +171,19 @@ class TaggingPass {
     const [from, to] = [offset(tokens, separator), endOffset(tokens, end)];
     const word = tokens[separator]?.image ?? '';
     if (number === -1) {
-      this.#refuse(
-        'group-missing',
-        from,
-        to,
-        [`"${word}"`],
-        [`${this.#repaired(from, to, word)} ... of ...`],
-      );
+      this.refuse('group-missing', from, to, [`"${word}"`], [`${this.repaired(from, to, word)} ... of ...`]);
       return;
     }
-    const name = textOf(this.#folded.text, tokens, separator + 1, number)
+    const name = textOf(this.folded.text, tokens, separator + 1, number)
       .replace(/:$/, '')
       .trim();
     const place = offset(tokens, number);
-    this.#refuse(
+    this.refuse(
       'second-total-missing',
       place,
       to,
       [name === '' ? 'The second group' : name],
-      [`${this.#repaired(to, to, '')} of ...`],
+      [`${this.repaired(to, to, '')} of ...`],
     );
   }
 
@@ -206,14 +191,14 @@ class TaggingPass {
   #lead(tokens: readonly IToken[], from: number, to: number): void {
     const colon = lastIndexOf(tokens, from, to, token.Colon);
     if (colon === -1) {
-      this.#words(tags.NameTag, tokens, from, withoutDash(tokens, from, to));
+      this.words(tags.NameTag, tokens, from, withoutDash(tokens, from, to));
       return;
     }
     const earlier = lastIndexOf(tokens, from, colon, token.Colon);
-    if (earlier !== -1) this.#refuse('not-yet-layers', offset(tokens, from), endOffset(tokens, colon));
-    this.#words(tags.NameTag, tokens, from, colon);
-    this.#push(tags.NameColonTag, tokens, colon, colon + 1);
-    this.#words(tags.CaseNounTag, tokens, colon + 1, to);
+    if (earlier !== -1) this.refuse('not-yet-layers', offset(tokens, from), endOffset(tokens, colon));
+    this.words(tags.NameTag, tokens, from, colon);
+    this.pushTokens(tags.NameColonTag, tokens, colon, colon + 1);
+    this.words(tags.CaseNounTag, tokens, colon + 1, to);
   }
 
   /** What stands between two figures: the words after the one, a separator, and the name of the next. */
@@ -222,7 +207,7 @@ class TaggingPass {
     const split = separatorIn(tokens, from, to);
     if (split !== -1) {
       this.#after(tokens, previous, split);
-      this.#push(tags.SeparatorTag, tokens, split, split + 1);
+      this.pushTokens(tags.SeparatorTag, tokens, split, split + 1);
       this.#lead(tokens, split + 1, to);
       return;
     }
@@ -244,73 +229,79 @@ class TaggingPass {
     let from = figure.end;
     if (figure.kind === 'share' && figure.ofNoun) {
       from += 1;
-      this.#words(tags.ShareNounTag, tokens, from, to);
+      this.words(tags.ShareNounTag, tokens, from, to);
       return;
     }
     while (from < to && (tokens[from]?.tokenType === token.Open || tokens[from]?.tokenType === token.Close))
       from += 1;
     if (tokens[from]?.tokenType === token.Per && from < to && to < tokens.length) {
       const [start, end] = [offset(tokens, from), endOffset(tokens, to)];
-      this.#refuse(
+      this.refuse(
         'per-in-the-middle',
         start,
         end,
-        [this.#folded.text.slice(start, end)],
-        [`${this.#repaired(start, end, '').replace(/ {2,}/g, ' ')}; ${this.#folded.text.slice(start, end)}`],
+        [this.folded.text.slice(start, end)],
+        [`${this.repaired(start, end, '').replace(/ {2,}/g, ' ')}; ${this.folded.text.slice(start, end)}`],
       );
     }
-    this.#words(tags.AfterTag, tokens, from, to);
+    this.words(tags.AfterTag, tokens, from, to);
   }
 
   #figure(tokens: readonly IToken[], figure: Figure): void {
     switch (figure.kind) {
       case 'bare':
-        this.#push(tags.CasesTag, tokens, figure.start, figure.end, { kind: 'count', count: figure.count });
-        return;
-      case 'dangling':
-        this.#push(tags.CasesTag, tokens, figure.start, figure.connector, {
+        this.pushTokens(tags.CasesTag, tokens, figure.start, figure.end, {
           kind: 'count',
           count: figure.count,
         });
-        this.#push(tags.OfTag, tokens, figure.connector, figure.connector + 1);
+        return;
+      case 'dangling':
+        this.pushTokens(tags.CasesTag, tokens, figure.start, figure.connector, {
+          kind: 'count',
+          count: figure.count,
+        });
+        this.pushTokens(tags.OfTag, tokens, figure.connector, figure.connector + 1);
         return;
       case 'counts':
-        this.#push(
+        this.pushTokens(
           tags.CasesTag,
           tokens,
           figure.start,
           figure.noun === null ? figure.connector : figure.noun[0],
           { kind: 'count', count: figure.count },
         );
-        if (figure.noun !== null) this.#words(tags.CaseNounTag, tokens, ...figure.noun);
-        this.#push(
+        if (figure.noun !== null) this.words(tags.CaseNounTag, tokens, ...figure.noun);
+        this.pushTokens(
           tags.OfTag,
           tokens,
           figure.connector,
           figure.connector + 1,
           figure.eachCountedOnce ? { kind: 'text', text: 'in' } : { kind: 'none' },
         );
-        this.#push(tags.TotalTag, tokens, ...figure.totalAt, {
+        this.pushTokens(tags.TotalTag, tokens, ...figure.totalAt, {
           kind: 'count',
           count: { written: figure.total, suppressed: false },
         });
         return;
       case 'share-of':
-        this.#push(tags.ShareTag, tokens, figure.start, figure.totalAt[0] - 1, {
+        this.pushTokens(tags.ShareTag, tokens, figure.start, figure.totalAt[0] - 1, {
           kind: 'share',
           share: figure.share,
         });
-        this.#push(tags.OfTag, tokens, figure.totalAt[0] - 1, figure.totalAt[0]);
-        this.#push(tags.TotalTag, tokens, ...figure.totalAt, {
+        this.pushTokens(tags.OfTag, tokens, figure.totalAt[0] - 1, figure.totalAt[0]);
+        this.pushTokens(tags.TotalTag, tokens, ...figure.totalAt, {
           kind: 'count',
           count: { written: figure.total, suppressed: false },
         });
         return;
       case 'share':
-        this.#push(tags.ShareTag, tokens, figure.start, figure.end, { kind: 'share', share: figure.share });
+        this.pushTokens(tags.ShareTag, tokens, figure.start, figure.end, {
+          kind: 'share',
+          share: figure.share,
+        });
         return;
       case 'rate':
-        this.#refuse(
+        this.refuse(
           'not-yet-rate',
           offset(tokens, figure.start),
           endOffset(tokens, figure.end),
@@ -320,7 +311,7 @@ class TaggingPass {
         return;
       case 'year': {
         const [from, to] = [offset(tokens, figure.start), endOffset(tokens, figure.end)];
-        this.#refuse(
+        this.refuse(
           'year-or-people',
           from,
           to,
@@ -352,65 +343,7 @@ class TaggingPass {
       const from = offset(tokens, figure.totalAt[0]);
       const joined = `${figure.total.text},${rest.image}`;
       const to = endOffset(tokens, figure.end + 2);
-      this.#refuse('joined-number', from, to, [joined], [this.#repaired(from, to, joined)]);
+      this.refuse('joined-number', from, to, [joined], [this.repaired(from, to, joined)]);
     }
-  }
-
-  #words(type: TokenType, tokens: readonly IToken[], from: number, to: number): void {
-    let start = from;
-    let end = to;
-    const loose = (at: number) => {
-      const kind = tokens[at]?.tokenType;
-      return (
-        kind === token.Comma ||
-        kind === token.Open ||
-        kind === token.Close ||
-        kind === token.Question ||
-        kind === token.Dash
-      );
-    };
-    while (start < end && loose(start)) start += 1;
-    while (end > start && loose(end - 1)) end -= 1;
-    if (start >= end) return;
-    const text = textOf(this.#folded.text, tokens, start, end);
-    if (text !== '') this.#push(type, tokens, start, end, { kind: 'text', text });
-  }
-
-  #push(
-    type: TokenType,
-    tokens: readonly IToken[],
-    from: number,
-    to: number,
-    payload: TagPayload = { kind: 'none' },
-  ): void {
-    this.push(type, offset(tokens, from), endOffset(tokens, to), payload);
-  }
-
-  push(type: TokenType, startOffset: number, end: number, payload: TagPayload): void {
-    this.tags.push({
-      image: this.#folded.text.slice(startOffset, end),
-      startOffset,
-      endOffset: Math.max(startOffset, end - 1),
-      tokenType: type,
-      tokenTypeIdx: type.tokenTypeIdx ?? 0,
-      payload,
-    });
-  }
-
-  #refuse(
-    id: Parameters<typeof diagnosis>[0],
-    from: number,
-    to: number,
-    pieces: readonly string[] = [],
-    suggestions: Parameters<typeof diagnosis>[3] = [],
-  ): void {
-    this.fault ??= diagnosis(id, typedSpan(this.#folded, from, to), pieces, suggestions);
-  }
-
-  /** The typed line with one stretch written differently. */
-  #repaired(from: number, to: number, instead: string): string {
-    const { typed } = this.#folded;
-    const span = typedSpan(this.#folded, from, to);
-    return `${typed.slice(0, span.from)}${instead}${typed.slice(span.to)}`.trim();
   }
 }

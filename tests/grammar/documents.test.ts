@@ -91,8 +91,10 @@ describe('the help', () => {
 });
 
 describe('the practice room', () => {
-  it('offers lines that lead somewhere: three answers or questions and one diagnosis', () => {
-    expect(linesToTry.map(readAs)).toEqual(['question', 'question', 'diagnosis', 'diagnosis']);
+  it('offers lines that lead somewhere: answers first, then a question back and a diagnosis', () => {
+    const kinds = linesToTry.map(readAs);
+    expect(kinds.slice(0, 2)).toEqual(['question', 'question']);
+    expect(kinds.filter((kind) => kind === 'diagnosis').length).toBeGreaterThanOrEqual(2);
   });
 });
 
