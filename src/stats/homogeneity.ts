@@ -1,10 +1,10 @@
-import { ArgumentError } from './argument-error.ts';
 import type { RatePair } from './rate-ratio.ts';
 import type { SharePair } from './share-ratio.ts';
 import { constrainedRatio } from './constrained-ratio.ts';
 import { chiSquaredUpperTail } from './gamma-tail.ts';
 import { pooledRateRatio, pooledShareRatio } from './pooled-share-ratio.ts';
 import { pooledRiskRatio } from './pooled-risk-ratio.ts';
+import { deviance } from './saddle-point.ts';
 import { sumOver, usableStrata, varianceFactor } from './strata.ts';
 import type { Strata } from './strata.ts';
 
@@ -81,12 +81,10 @@ function devianceTest(
   return testOf(statistic, usable.length - 1);
 }
 
+// x ln(x/e) + e - x; what is added sums to 0 over a layer, and without it the parts of a rare and a common count would cancel.
 const part = (observed: number, expected: number) =>
-  observed === 0 ? 0 : observed * Math.log(observed / expected);
+  observed === 0 ? expected : deviance(observed, expected);
 
 function testOf(statistic: number, degrees: number): ChiSquaredTest {
-  if (Number.isNaN(statistic)) throw new ArgumentError('undefined-value', 'the test is undefined');
-  // Rounding may leave a hair below 0 where all layers are alike.
-  const value = statistic < 0 ? 0 : statistic;
-  return { statistic: value, degrees, pValue: chiSquaredUpperTail(value, degrees) };
+  return { statistic, degrees, pValue: chiSquaredUpperTail(statistic, degrees) };
 }

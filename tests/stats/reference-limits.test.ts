@@ -3,15 +3,16 @@ import { describe, expect, it } from 'vitest';
 import { clopperPearsonInterval } from '../../src/stats/clopper-pearson-interval.ts';
 import { conditionalOddsRatioInterval } from '../../src/stats/conditional-odds-ratio-interval.ts';
 import { criticalValue } from '../../src/stats/critical-value.ts';
-import type { Interval, TwoGroups } from '../../src/stats/interval.ts';
+import type { TwoGroups } from '../../src/stats/interval.ts';
 import { oddsRatioInterval } from '../../src/stats/odds-ratio-interval.ts';
 import { riskDifferenceInterval } from '../../src/stats/risk-difference-interval.ts';
 import { riskRatioInterval } from '../../src/stats/risk-ratio-interval.ts';
 import { exactShareRatioInterval, shareRatioInterval } from '../../src/stats/share-ratio.ts';
 import { wilsonInterval } from '../../src/stats/wilson-interval.ts';
+import { both, errorOf, worst } from './error-of.ts';
+import type { Pair } from './error-of.ts';
 
 /** Values from direct inversion at 120 digits; see tests/fixtures/reference/make-score-limits.py, which records its versions. */
-type Pair = readonly [string | null, string | null];
 interface Fixture {
   readonly criticalValues: readonly { readonly level: string; readonly z: string }[];
   readonly tables: readonly {
@@ -50,28 +51,6 @@ const groupsOf = ([cases, total, referenceCases, referenceTotal]: readonly [
   referenceTotal,
 });
 
-/** The error of a limit relative to `scale`; infinite where one of the two has a limit and the other none. */
-function errorOf(limit: number | null, expected: string | null, scale = Math.abs(Number(expected))): number {
-  if (limit === null || expected === null) return limit === expected ? 0 : Infinity;
-  const gap = Math.abs(limit - Number(expected));
-  return gap === 0 ? 0 : gap / scale;
-}
-
-/** The row with the largest error, so that a failure names its table. */
-function worst<T>(
-  rows: readonly T[],
-  error: (row: T) => number,
-): { readonly row: T | undefined; readonly error: number } {
-  let found: { row: T | undefined; error: number } = { row: rows[0], error: -1 };
-  for (const row of rows) {
-    const at = error(row);
-    if (!(at <= found.error)) found = { row, error: at };
-  }
-  return found;
-}
-
-const both = (interval: Interval, [low, high]: Pair) =>
-  Math.max(errorOf(interval.low, low), errorOf(interval.high, high));
 /** Issue's bar; the measured errors lie well below it. */
 const bar = 1e-9;
 const measured = 1e-12;
