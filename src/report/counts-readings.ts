@@ -1,7 +1,7 @@
 import type { Quantity } from '../../grammar/question.ts';
 import { clopperPearsonInterval } from '../stats/clopper-pearson-interval.ts';
 import { conditionalOddsRatioInterval } from '../stats/conditional-odds-ratio-interval.ts';
-import type { TwoGroups } from '../stats/interval.ts';
+import type { Interval, TwoGroups } from '../stats/interval.ts';
 import { oddsRatioInterval } from '../stats/odds-ratio-interval.ts';
 import { oneExtraPer } from '../stats/one-extra-per.ts';
 import { riskDifferenceInterval } from '../stats/risk-difference-interval.ts';
@@ -57,15 +57,15 @@ export function pairReadings(
     against,
     quantities: [group.cases, group.total, reference.cases, reference.total],
   };
-  const ratio = riskRatio(pair, options);
-  const difference = riskDifference(pair, options);
+  const ratio = measured(riskRatio, pair, options);
+  const difference = measured(riskDifference, pair, options);
   return [
     ratio,
     relativeChange(ratio),
     difference,
     extraCases(difference, group, reference, options),
     ...oneExtra(difference),
-    oddsRatio(pair, options),
+    measured(oddsRatio, pair, options),
     ...ratioFollowers(ratio),
   ];
 }
@@ -81,7 +81,8 @@ export function oddsRatioReading(
   const reference = rows[against];
   if (group === undefined || reference === undefined) return [];
   return [
-    oddsRatio(
+    measured(
+      oddsRatio,
       { of, against, quantities: [group.cases, group.total, reference.cases, reference.total] },
       options,
     ),
@@ -113,51 +114,44 @@ const riskDifferenceOf = ({ cases, total, referenceCases, referenceTotal }: TwoG
 const oddsRatioOf = ({ cases, total, referenceCases, referenceTotal }: TwoGroups) =>
   (cases * (referenceTotal - referenceCases)) / (referenceCases * (total - cases));
 
-function riskRatio({ of, against, quantities }: Pair, { level, exact }: CountsOptions): Reading {
-  const values = quantities.map(({ value }) => value);
-  return reading({
-    id: 'risk-ratio',
-    of,
-    against,
-    ...estimateOf(riskRatioOf(asGroups(values))),
-    interval: exact
-      ? null
-      : intervalOver(quantities, level, 'miettinen-nurminen', (at) => riskRatioInterval(asGroups(at), level)),
-    whyNoInterval: exact ? 'no-exact-form' : null,
-    roundingRange: rangeOverCorners(quantities, (at) => riskRatioOf(asGroups(at))),
-  });
+/** One measure of a pair: its estimate, the score interval or the exact one, and what rounding allows. */
+interface Measure {
+  readonly id: 'risk-ratio' | 'risk-difference' | 'odds-ratio';
+  readonly estimate: (groups: TwoGroups) => number;
+  readonly score: (groups: TwoGroups, level: number) => Interval;
+  /** `null`: there is no exact interval of the same family. */
+  readonly exact: ((groups: TwoGroups, level: number) => Interval) | null;
 }
 
-function riskDifference({ of, against, quantities }: Pair, { level, exact }: CountsOptions): Reading {
-  const values = quantities.map(({ value }) => value);
-  return reading({
-    id: 'risk-difference',
-    of,
-    against,
-    estimate: riskDifferenceOf(asGroups(values)),
-    interval: exact
-      ? null
-      : intervalOver(quantities, level, 'miettinen-nurminen', (at) =>
-          riskDifferenceInterval(asGroups(at), level),
-        ),
-    whyNoInterval: exact ? 'no-exact-form' : null,
-    roundingRange: rangeOverCorners(quantities, (at) => riskDifferenceOf(asGroups(at))),
-  });
-}
+const riskRatio: Measure = { id: 'risk-ratio', estimate: riskRatioOf, score: riskRatioInterval, exact: null };
+const riskDifference: Measure = {
+  id: 'risk-difference',
+  estimate: riskDifferenceOf,
+  score: riskDifferenceInterval,
+  exact: null,
+};
+const oddsRatio: Measure = {
+  id: 'odds-ratio',
+  estimate: oddsRatioOf,
+  score: oddsRatioInterval,
+  exact: conditionalOddsRatioInterval,
+};
 
-function oddsRatio({ of, against, quantities }: Pair, { level, exact }: CountsOptions): Reading {
-  const values = quantities.map(({ value }) => value);
+function measured(
+  measure: Measure,
+  { of, against, quantities }: Pair,
+  { level, exact }: CountsOptions,
+): Reading {
+  const interval = exact ? measure.exact : measure.score;
+  const method = exact ? 'conditional-exact' : 'miettinen-nurminen';
   return reading({
-    id: 'odds-ratio',
+    id: measure.id,
     of,
     against,
-    ...estimateOf(oddsRatioOf(asGroups(values))),
-    interval: exact
-      ? intervalOver(quantities, level, 'conditional-exact', (at) =>
-          conditionalOddsRatioInterval(asGroups(at), level),
-        )
-      : intervalOver(quantities, level, 'miettinen-nurminen', (at) => oddsRatioInterval(asGroups(at), level)),
-    roundingRange: rangeOverCorners(quantities, (at) => oddsRatioOf(asGroups(at))),
+    ...estimateOf(measure.estimate(asGroups(quantities.map(({ value }) => value)))),
+    interval: interval && intervalOver(quantities, level, method, (at) => interval(asGroups(at), level)),
+    whyNoInterval: interval === null ? 'no-exact-form' : null,
+    roundingRange: rangeOverCorners(quantities, (at) => measure.estimate(asGroups(at))),
   });
 }
 

@@ -190,36 +190,30 @@ function json200(response: ServerResponse, body: object): void {
 }
 
 /** Posts a signed form as Slack does; resolves with the status. */
-export async function postSigned(
+export const postSigned = (
   url: string,
   fields: Readonly<Record<string, string>>,
   secret: string,
-  at = Math.floor(Date.now() / 1000),
-): Promise<number> {
-  const body = new URLSearchParams(fields).toString();
-  const signature = `v0=${createHmac('sha256', secret).update(`v0:${at}:${body}`).digest('hex')}`;
-  const answer = await fetch(url, {
-    method: 'POST',
-    headers: {
-      'content-type': 'application/x-www-form-urlencoded',
-      'x-slack-request-timestamp': String(at),
-      'x-slack-signature': signature,
-    },
-    body,
-  });
-  await answer.arrayBuffer();
-  return answer.status;
-}
+  at?: number,
+): Promise<number> =>
+  post(url, new URLSearchParams(fields).toString(), 'application/x-www-form-urlencoded', secret, at);
 
 /** Posts a signed JSON body (an event). */
-export async function postSignedJson(url: string, payload: object, secret: string): Promise<number> {
-  const at = Math.floor(Date.now() / 1000);
-  const body = JSON.stringify(payload);
+export const postSignedJson = (url: string, payload: object, secret: string): Promise<number> =>
+  post(url, JSON.stringify(payload), 'application/json', secret);
+
+async function post(
+  url: string,
+  body: string,
+  type: string,
+  secret: string,
+  at = Math.floor(Date.now() / 1000),
+): Promise<number> {
   const signature = `v0=${createHmac('sha256', secret).update(`v0:${at}:${body}`).digest('hex')}`;
   const answer = await fetch(url, {
     method: 'POST',
     headers: {
-      'content-type': 'application/json',
+      'content-type': type,
       'x-slack-request-timestamp': String(at),
       'x-slack-signature': signature,
     },
