@@ -1,4 +1,5 @@
 import { deviance, stirlingError } from './saddle-point.ts';
+import { smoothAbove, smoothTailSum } from './smooth-tail.ts';
 
 /**
  * Upper tail of the binomial distribution in relative accuracy: P(X >= x) for X of n with probability p, as the probability
@@ -9,11 +10,21 @@ import { deviance, stirlingError } from './saddle-point.ts';
  * @param p in (0, 1); `q` is 1 - p, passed so that neither is formed by a subtraction
  *
  * The probability of the count by the saddle point of Loader 2000 (Fast and accurate computation of binomial probabilities).
- * Quick where p is below x/n, as it is for limits; above, the sum runs over the bulk of the distribution.
+ * Meant for p below x/n, as it is for limits: the terms then fall. Where both x and n - x pass 1e8 an integral takes the sum's place.
  * Accuracy: about 1e-14 relative.
  */
 export function binomialUpperTail(x: number, n: number, p: number, q: number): number {
-  const odds = p / q;
+  return binomialProbability(x, n, p, q) * tailInUnits(x, n, p / q);
+}
+
+/** P(X >= x) in units of P(X = x). */
+function tailInUnits(x: number, n: number, odds: number): number {
+  if (Math.min(x, n - x) > smoothAbove) {
+    return smoothTailSum(odds, [
+      { at: x, step: 1 },
+      { at: n - x, step: -1 },
+    ]);
+  }
   let sum = 1;
   let term = 1;
   for (let i = x; i < n; i += 1) {
@@ -21,7 +32,7 @@ export function binomialUpperTail(x: number, n: number, p: number, q: number): n
     sum += term;
     if (term < sum * 1e-18) break;
   }
-  return binomialProbability(x, n, p, q) * sum;
+  return sum;
 }
 
 /** P(X = x), with p and q as above; x in [0, n]. */

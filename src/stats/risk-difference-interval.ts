@@ -1,5 +1,4 @@
 import { bracketedRoot } from './bracketed-root.ts';
-import { spread } from './constrained-difference.ts';
 import type { Interval, TwoGroups } from './interval.ts';
 import { crossDifference } from './null-test.ts';
 import { scoreThreshold, swapped } from './score-factor.ts';
@@ -44,4 +43,16 @@ function lowerLimit(groups: TwoGroups, threshold: number): number {
   const d = bracketedRoot(from, 0, high);
   const estimate = crossDifference(groups) / total / referenceTotal;
   return estimate - (corner + d) * variance(corner, d);
+}
+
+/**
+ * q(1 - q) for the root q in [0, 1] of a group's quadratic under a constrained difference, with the multiplier l >= 0. `few` is x
+ * for the reference group and y for the other (their quadratics are mirror images) and `beyond` is l - n, formed by the caller
+ * without a subtraction.
+ */
+function spread(l: number, beyond: number, total: number, few: number): number {
+  const root = Math.sqrt(beyond * beyond + 4 * l * few);
+  const small = beyond < 0 ? (2 * few) / (root - beyond) : l === 0 ? few / total : (root + beyond) / (2 * l);
+  const large = (2 * (total - few)) / (l + total + root);
+  return small * large;
 }

@@ -1,4 +1,4 @@
-import { checkCases } from './argument-error.ts';
+import { ArgumentError, checkCases } from './argument-error.ts';
 import { criticalValue } from './critical-value.ts';
 import type { TwoGroups } from './interval.ts';
 
@@ -11,6 +11,9 @@ export function scoreThreshold(groups: TwoGroups, level: number): number {
   checkCases(groups.referenceCases, groups.referenceTotal);
   const z = criticalValue(level);
   const all = groups.total + groups.referenceTotal;
+  if (!(all > 1)) {
+    throw new ArgumentError('total-out-of-range', `two groups must hold more than one person, not ${all}`);
+  }
   return (z * z * all) / (all - 1);
 }
 

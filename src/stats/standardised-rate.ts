@@ -1,7 +1,6 @@
 import { ArgumentError, checkExposure, checkLevel } from './argument-error.ts';
 import { gammaLowerQuantile, gammaUpperQuantile } from './gamma-tail.ts';
 import type { Interval } from './interval.ts';
-import { sumOver } from './strata.ts';
 
 /** Events over exposure in a layer, and the layer's size in the standard population. */
 export interface WeightedLayer {
@@ -59,3 +58,6 @@ function partsOf(
   if (!(weights > 0)) throw new ArgumentError('weight-out-of-range', 'a layer must have a weight');
   return layers.map(({ cases, exposure, weight }) => ({ cases, part: weight / weights / exposure }));
 }
+
+const sumOver = <T>(items: readonly T[], value: (item: T) => number) =>
+  items.reduce((sum, item) => sum + value(item), 0);

@@ -254,6 +254,10 @@ describe('arguments that nobody may pass', () => {
       () => riskRatioInterval({ cases: -1, total: 4, referenceCases: 1, referenceTotal: 4 }, 0.95),
     ],
     ['total-out-of-range', () => wilsonInterval(0, 0, 0.95)],
+    [
+      'total-out-of-range',
+      () => riskRatioInterval({ cases: 0, total: 0.38, referenceCases: 0, referenceTotal: 0.62 }, 0.95),
+    ],
     ['not-whole', () => clopperPearsonInterval(1.5, 4, 0.95)],
     [
       'coverage-out-of-range',

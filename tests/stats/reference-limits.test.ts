@@ -1,4 +1,3 @@
-import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { clopperPearsonInterval } from '../../src/stats/clopper-pearson-interval.ts';
 import { conditionalOddsRatioInterval } from '../../src/stats/conditional-odds-ratio-interval.ts';
@@ -9,7 +8,7 @@ import { riskDifferenceInterval } from '../../src/stats/risk-difference-interval
 import { riskRatioInterval } from '../../src/stats/risk-ratio-interval.ts';
 import { exactShareRatioInterval, shareRatioInterval } from '../../src/stats/share-ratio.ts';
 import { wilsonInterval } from '../../src/stats/wilson-interval.ts';
-import { both, errorOf, worst } from './error-of.ts';
+import { both, errorOf, fixture as readFixture, worst } from './error-of.ts';
 import type { Pair } from './error-of.ts';
 
 /** Values from direct inversion at 120 digits; see tests/fixtures/reference/make-score-limits.py, which records its versions. */
@@ -35,9 +34,13 @@ interface Fixture {
     readonly limits: Pair;
   }[];
 }
-const fixture = JSON.parse(
-  readFileSync(new URL('../fixtures/reference/score-limits.json', import.meta.url), 'utf8'),
-) as Fixture;
+interface LargeSingle {
+  readonly cases: number;
+  readonly total: number;
+  readonly level: string;
+  readonly limits: Pair;
+}
+const fixture = readFixture<Fixture>('score-limits.json');
 
 const groupsOf = ([cases, total, referenceCases, referenceTotal]: readonly [
   number,
@@ -126,6 +129,20 @@ describe('limits against 120-digit arithmetic (mpmath)', () => {
       both(conditionalOddsRatioInterval(groupsOf(table), Number(level)), limits),
     );
     expect(found.error, JSON.stringify(found.row)).toBeLessThan(1e-11);
+  });
+
+  it('are right, and there at once, for exact limits of counts up to 1e15, whose tails have millions of terms', () => {
+    const large = readFixture<Pick<Fixture, 'conditional'> & { readonly single: readonly LargeSingle[] }>(
+      'large-exact-limits.json',
+    );
+    const single = worst(large.single, ({ cases, total, level, limits }) =>
+      both(clopperPearsonInterval(cases, total, Number(level)), limits),
+    );
+    expect(single.error, JSON.stringify(single.row)).toBeLessThan(measured);
+    const conditional = worst(large.conditional, ({ table, level, limits }) =>
+      both(conditionalOddsRatioInterval(groupsOf(table), Number(level)), limits),
+    );
+    expect(conditional.error, JSON.stringify(conditional.row)).toBeLessThan(measured);
   });
 
   it('are right for shares: the odds of the Wilson and of the exact limits, carried over in 120 digits', () => {
