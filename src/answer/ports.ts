@@ -127,8 +127,11 @@ export interface Ledger {
   ): Promise<void>;
   /** Marks a request as one that could not be answered through our own fault, with the messages that say so. */
   failRequest(request: StoredRequest, code: string, messages: readonly PlannedMessage[]): Promise<void>;
-  /** Takes an offer under a refusal. False: somebody took it before. */
-  takeOffer(requestId: string): Promise<boolean>;
+  /**
+   * Takes an offer under a refusal for the request `takenBy`. False: another request took it before. True again for the same
+   * one, which comes twice where the process was stopped before it was answered.
+   */
+  takeOffer(requestId: string, takenBy: string): Promise<boolean>;
   /** Unsettled messages in the order in which they were planned. */
   openMessages(): Promise<readonly OutgoingMessage[]>;
   /** Marks a message as being sent. False: it was no longer waiting. */

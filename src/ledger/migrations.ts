@@ -65,8 +65,18 @@ const first: Migration = {
   },
 };
 
+/** An offer knows who took it, so that a request that is worked on again after a stop finds its own offer. */
+const offerTaker: Migration = {
+  async up(db: Kysely<unknown>) {
+    await db.schema.alterTable('offers_taken').addColumn('taken_by', 'text').execute();
+  },
+};
+
 /** Every change of the tables, oldest first. A migration that has landed is never edited. */
-const migrations: Readonly<Record<string, Migration>> = { '0001-first': first };
+const migrations: Readonly<Record<string, Migration>> = {
+  '0001-first': first,
+  '0002-offer-taker': offerTaker,
+};
 
 /** Brings a database to the newest tables. */
 export async function migrateToLatest(db: Kysely<Tables>): Promise<void> {

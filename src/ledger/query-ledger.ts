@@ -12,11 +12,14 @@ export function queryLedger(db: Kysely<Tables>, clock: Clock, ids: Ids): Ledger 
   return {
     storeRequest: (keys, request, responseUrl) =>
       db.transaction().execute(async (transaction) => {
-        const seen = await transaction
-          .selectFrom('request_keys')
-          .select('key')
-          .where('key', 'in', [...keys])
-          .executeTakeFirst();
+        const seen =
+          keys.length === 0
+            ? undefined
+            : await transaction
+                .selectFrom('request_keys')
+                .select('key')
+                .where('key', 'in', [...keys])
+                .executeTakeFirst();
         if (seen !== undefined) return false;
         const id = ids.next();
         await transaction
@@ -31,6 +34,7 @@ export function queryLedger(db: Kysely<Tables>, clock: Clock, ids: Ids): Ledger 
             received_at: clock.now(),
           })
           .execute();
+        if (keys.length === 0) return true;
         await transaction
           .insertInto('request_keys')
           .values(keys.map((key) => ({ key, request_id: id })))
@@ -125,14 +129,20 @@ export function queryLedger(db: Kysely<Tables>, clock: Clock, ids: Ids): Ledger 
           .execute();
       }),
 
-    async takeOffer(requestId) {
-      const { numInsertedOrUpdatedRows } = await db
-        .insertInto('offers_taken')
-        .values({ request_id: requestId, taken_at: clock.now() })
-        .onConflict((conflict) => conflict.doNothing())
-        .executeTakeFirst();
-      return Number(numInsertedOrUpdatedRows ?? 0) === 1;
-    },
+    takeOffer: (requestId, takenBy) =>
+      db.transaction().execute(async (transaction) => {
+        await transaction
+          .insertInto('offers_taken')
+          .values({ request_id: requestId, taken_at: clock.now(), taken_by: takenBy })
+          .onConflict((conflict) => conflict.doNothing())
+          .execute();
+        const { taken_by } = await transaction
+          .selectFrom('offers_taken')
+          .select('taken_by')
+          .where('request_id', '=', requestId)
+          .executeTakeFirstOrThrow();
+        return taken_by === takenBy;
+      }),
 
     openMessages: () => openMessages(db),
 

@@ -56,6 +56,8 @@ export interface OutgoingTable {
 export interface OffersTakenTable {
   request_id: string;
   taken_at: number;
+  /** The request that took it. */
+  taken_by: string | null;
 }
 
 export interface Tables {

@@ -15,6 +15,7 @@ export interface BotParts {
   /** How to start and stop each receiver. */
   readonly start: (receiver: Receiver) => Promise<unknown>;
   readonly stop: (receiver: Receiver) => Promise<unknown>;
+  readonly linked?: () => boolean;
   readonly token: string;
   readonly slackApiUrl?: string;
   /** Replaces the network, as in the practice room. */
@@ -96,6 +97,6 @@ export async function createBot(parts: BotParts): Promise<Bot> {
       log.write('info', 'bot-stopped');
     },
     idle: () => worker.idle(),
-    ready: () => up,
+    ready: () => up && (parts.linked?.() ?? true),
   };
 }

@@ -24,6 +24,12 @@ export function incomingOf(body: Body, envelopeId: string | null): Incoming | nu
   return { ...found, keys: keys.map((key) => createHash('sha256').update(key).digest('hex')) };
 }
 
+/** The key of one gesture of a person; none without a trigger id, since an empty one would make all of them the same. */
+function gesture(kind: string, teamId: string, body: Body): readonly string[] {
+  const trigger = text(body['trigger_id']);
+  return trigger === '' ? [] : [`${kind} ${teamId} ${trigger}`];
+}
+
 function commandOf(body: Body): Incoming | null {
   if (text(body['command']) === '') return null;
   return {
@@ -34,7 +40,7 @@ function commandOf(body: Body): Incoming | null {
       userId: text(body['user_id']),
       text: text(body['text']),
     },
-    keys: [`command ${text(body['team_id'])} ${text(body['trigger_id'])}`],
+    keys: gesture('command', text(body['team_id']), body),
     responseUrl: text(body['response_url']) || null,
   };
 }
@@ -76,7 +82,7 @@ function buttonOf(body: Body): Incoming | null {
       value: text(action['value']),
       threadTs: text(container['thread_ts']) || text(message['thread_ts']) || null,
     },
-    keys: [`button ${teamId} ${text(body['trigger_id'])}`],
+    keys: gesture('button', teamId, body),
     responseUrl: text(body['response_url']) || null,
   };
 }

@@ -147,7 +147,7 @@ async function planOffer(
 ): Promise<AnswerPlan> {
   const route = privately({ request, threadTs: request.threadTs, responseUrl: stored.responseUrl });
   const line = await offeredLine(request, ledger, botUserId);
-  if (line === null || !(await ledger.takeOffer(request.value)))
+  if (line === null || !(await ledger.takeOffer(request.value, stored.id)))
     return only(planned(route, renderNotice('gone')));
   const plan = planLine({
     request,

@@ -95,18 +95,23 @@ export type LookUp =
   | { readonly kind: 'cannot-look' }
   | { readonly kind: 'try-later' };
 
+/** How long after the start of an attempt its post may be dated, in seconds: the attempt itself and clocks that differ. */
+const lookUpSpan = 60;
+
 /** Looks a message up by the operation id in its metadata. Needs membership and a history scope. */
 export async function lookUp(message: OutgoingMessage, client: Client): Promise<LookUp> {
-  const oldest = ((message.startedAt ?? message.dueAt) / 1000 - 5).toFixed(6);
+  const started = (message.startedAt ?? message.dueAt) / 1000;
   const common = {
     channel: message.channelId,
-    oldest,
+    // Slack lists the newest first: without an end, what came later would push the post off the page.
+    oldest: (started - 5).toFixed(6),
+    latest: (started + lookUpSpan).toFixed(6),
     inclusive: true,
-    limit: 200,
+    limit: 999,
     include_all_metadata: true,
   } as const;
   try {
-    const { messages = [] } =
+    const { messages = [], has_more: more } =
       message.threadTs === null
         ? await client.conversations.history(common)
         : await client.conversations.replies({ ...common, ts: message.threadTs });
@@ -114,7 +119,8 @@ export async function lookUp(message: OutgoingMessage, client: Client): Promise<
       const payload: unknown = metadata?.event_payload;
       return typeof payload === 'object' && payload !== null && 'op' in payload && payload.op === message.op;
     });
-    return found?.ts === undefined ? { kind: 'not-there' } : { kind: 'found', ts: found.ts };
+    if (found?.ts !== undefined) return { kind: 'found', ts: found.ts };
+    return more === true ? { kind: 'cannot-look' } : { kind: 'not-there' };
   } catch (fault) {
     return outcomeOfFault(fault).kind === 'refused' ? { kind: 'cannot-look' } : { kind: 'try-later' };
   }

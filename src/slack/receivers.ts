@@ -7,6 +7,8 @@ export interface Intake {
   readonly receivers: readonly [Receiver, ...Receiver[]];
   readonly start: (receiver: Receiver) => Promise<unknown>;
   readonly stop: (receiver: Receiver) => Promise<unknown>;
+  /** Whether requests can come in at this moment; with Socket Mode, whether a link is open. */
+  readonly linked: () => boolean;
 }
 
 /** How long to wait for the first word on a new link. */
@@ -28,11 +30,13 @@ export function socketIntake(options: { readonly appToken: string; readonly slac
         clientOptions: options.slackApiUrl === undefined ? {} : { slackApiUrl: options.slackApiUrl },
       },
     });
+  const receivers = [receiver(), receiver()] as const;
   return {
-    receivers: [receiver(), receiver()],
+    receivers,
     start: (each) => withinTime(each.start(), helloTime),
     // stop() would return before the link is closed.
     stop: (each) => (each instanceof SocketModeReceiver ? each.client.disconnect() : each.stop()),
+    linked: () => receivers.some(({ client }) => client.websocket?.isActive() === true),
   };
 }
 
@@ -53,6 +57,7 @@ export function httpIntake(options: {
     receivers: [receiver],
     start: () => receiver.start({ port: options.port, host: options.host }),
     stop: () => receiver.stop(),
+    linked: () => true,
   };
 }
 

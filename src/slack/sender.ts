@@ -24,7 +24,9 @@ const notWelcome: ReadonlySet<string> = new Set([
   'cant_post_in_channel',
   'no_permission',
 ]);
-const mostAttempts = 10;
+/** With the growing waits about half an hour, after which the asker's address has run out too. */
+const mostAttempts = 40;
+const longestWait = 60_000;
 
 /** Sends what is planned, once each, in the order of each channel. `step` does what is due and says when to come again. */
 export class Sender {
@@ -63,8 +65,9 @@ export class Sender {
         if (message.kind === 'post') blocked.add(channel);
         continue;
       }
+      // One worker sends: what is still marked as being sent was left so by a fault of the database, and is in doubt.
       const settled =
-        message.state === 'ambiguous' ? await this.#settleDoubt(message) : await this.#attempt(message, open);
+        message.state === 'pending' ? await this.#attempt(message, open) : await this.#settleDoubt(message);
       if (!settled && message.kind === 'post') blocked.add(channel);
       next = 0;
     }
@@ -81,11 +84,13 @@ export class Sender {
       case 'sent':
         await ledger.markSent(message.id, outcome.ts);
         return true;
-      case 'wait':
-        log.write('info', 'message-postponed', { message: message.id, wait: outcome.milliseconds });
+      case 'wait': {
+        const wait = Math.max(outcome.milliseconds, Math.min(longestWait, 1_000 * 2 ** message.attempts));
+        log.write('info', 'message-postponed', { message: message.id, wait });
         if (message.attempts + 1 >= mostAttempts) await this.#giveUp(message, open, 'too_many_attempts');
-        else await ledger.postpone(message.id, clock.now() + outcome.milliseconds);
+        else await ledger.postpone(message.id, clock.now() + wait);
         return false;
+      }
       case 'refused':
         await this.#giveUp(message, open, outcome.code);
         return true;

@@ -138,6 +138,38 @@ describe.each(['socket', 'http'] as const)('the bot over %s', (transport) => {
     expect(running.slack.callsOf('conversations.history').length).toBeGreaterThan(0);
   });
 
+  it('posts once when the answer is lost and 250 other messages follow before it looks', async () => {
+    const stop = running.slack.store.onChange(() => {
+      stop();
+      for (let other = 0; other < 250; other += 1) {
+        running.slack.store.add({
+          channel: 'C1',
+          threadTs: null,
+          user: 'U3',
+          text: 'chatter',
+          blocks: [],
+          metadata: null,
+          onlyFor: null,
+        });
+      }
+    });
+    running.slack.fault('chat.postMessage', { kind: 'lose-answer' });
+    await running.command(shifts);
+    expect(posts().filter(({ user }) => user !== 'U3')).toHaveLength(2);
+  });
+
+  it('goes on, and posts once, when writing a sent message down fails', async () => {
+    const { markSent } = running.ledger;
+    let failures = 0;
+    running.ledger.markSent = (id, ts) => {
+      failures += 1;
+      return failures === 1 ? Promise.reject(new Error('disk full')) : markSent(id, ts);
+    };
+    await running.command(shifts);
+    expect(failures).toBeGreaterThan(1);
+    expect(posts()).toHaveLength(2);
+  });
+
   it('posts once when Slack answers 500 without having taken the post', async () => {
     running.slack.fault('chat.postMessage', { kind: 'status', status: 500 });
     await running.command(shifts);

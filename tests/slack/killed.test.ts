@@ -117,9 +117,8 @@ describe.each(['socket', 'http'] as const)('a bot over %s that is killed without
 
   it('after Slack took the post and before that was written down finds it again and posts only the rest', async () => {
     const first = await settings();
-    // The root is taken, and the answer to the reply never comes: the kill falls between the two.
-    slack.fault('chat.postMessage', { kind: 'lose-answer' });
-    slack.fault('conversations.history', { kind: 'hold' });
+    // The root is taken and its answer never comes: the row still says that it is being sent.
+    slack.fault('chat.postMessage', { kind: 'take-and-hold' });
     const before = await start(first);
     const fields = slack.commandFields(shifts);
     await send(fields, first.PORT);

@@ -21,7 +21,9 @@ export type Fault =
   /** The message is accepted, and the answer is lost. */
   | { readonly kind: 'lose-answer' }
   /** The call is taken and nothing happens until the server is closed. */
-  | { readonly kind: 'hold' };
+  | { readonly kind: 'hold' }
+  /** The message is accepted, and no answer comes until the server is closed. */
+  | { readonly kind: 'take-and-hold' };
 
 /**
  * The practice room's stand-in for Slack behind a real HTTP and WebSocket server on loopback, with faults to order. It keeps to
@@ -159,6 +161,9 @@ export class StandInServer {
       case 'refuse':
         return json200(response, { ok: false, error: fault.code });
       case 'hold':
+        return;
+      case 'take-and-hold':
+        await this.#usual(request, body);
         return;
       case 'lose-answer':
         await this.#usual(request, body);
