@@ -24,7 +24,7 @@ export const safety = {
 
 /** Serves a file of the page; `false` where the path is none. */
 export async function servePageFile(path: string, response: ServerResponse): Promise<boolean> {
-  const file = Object.hasOwn(files, path) ? files[path] : undefined;
+  const file = files[path];
   if (file === undefined) return false;
   const [name, type] = file;
   const content = await readFile(new URL(`./page/${name}`, import.meta.url));

@@ -181,8 +181,8 @@ describe('mrkdwn', () => {
     ['<@UADA> and <@UX|dora> of <#C1|ferries>', '<p>@Ada and @dora of ferries</p>'],
     ['<!here> <!date^1^{date}|May>', '<p>@here May</p>'],
     [
-      '<https://harrowmere.example/?a=1&amp;b=2|the list>',
-      '<p><a href="https://harrowmere.example/?a=1&amp;b=2" target="_blank" rel="noreferrer">the list</a></p>',
+      '<https://harrowmere.example/?a=1&amp;b=2|R&amp;D>',
+      '<p><a href="https://harrowmere.example/?a=1&amp;b=2" target="_blank" rel="noreferrer">R&amp;D</a></p>',
     ],
     ['<javascript:alert(1)|the list>', '<p>the list</p>'],
     ['said:\n&gt; 18 of\n> 12\nso', '<p>said:</p><blockquote>18 of\n12</blockquote><p>so</p>'],

@@ -1,4 +1,6 @@
 import { randomUUID } from 'node:crypto';
+import { setTimeout as wait } from 'node:timers/promises';
+import type { Ledger } from '../../src/answer/ports.ts';
 import { openSqliteLedger } from '../../src/ledger/sqlite-ledger.ts';
 import { startPracticeRoom } from '../../src/practice/start.ts';
 import { healthRoutes } from '../../src/slack/health.ts';
@@ -11,7 +13,8 @@ export interface OpenRoom {
   close(): Promise<void>;
 }
 
-export async function openRoom(port = 0): Promise<OpenRoom> {
+/** `slowness`: how many milliseconds the ledger takes before it hands out a request. */
+export async function openRoom(port = 0, slowness = 0): Promise<OpenRoom> {
   const clock = { now: () => Date.now() };
   const ids = { next: () => randomUUID() };
   const ledger = await openSqliteLedger(':memory:', clock, ids);
@@ -19,7 +22,7 @@ export async function openRoom(port = 0): Promise<OpenRoom> {
   const room = await startPracticeRoom({
     host: '127.0.0.1',
     port,
-    ledger,
+    ledger: slowness === 0 ? ledger : slowed(ledger, slowness),
     clock,
     ids,
     log: {
@@ -38,3 +41,8 @@ export async function openRoom(port = 0): Promise<OpenRoom> {
     },
   };
 }
+
+const slowed = (ledger: Ledger, milliseconds: number): Ledger => ({
+  ...ledger,
+  nextRequest: () => wait(milliseconds).then(() => ledger.nextRequest()),
+});

@@ -84,8 +84,8 @@ describe('a line that is typed', () => {
   });
 
   it('reaches the bot with the three characters escaped that Slack escapes, and comes back as it was typed', async () => {
-    await type('"R&D <night>": 18 of 1,204 vs "R&D <day>": 9 of 2,377');
-    expect(room.store.messages[0]?.text).toContain('"R&amp;D &lt;night&gt;": 18 of 1,204');
+    await type('"R&lt;D <night>": 18 of 1,204 vs "R&D <day>": 9 of 2,377');
+    expect(room.store.messages[0]?.text).toContain('"R&amp;lt;D &lt;night&gt;": 18 of 1,204');
   });
 });
 

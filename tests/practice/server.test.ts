@@ -100,7 +100,9 @@ describe('what is wrong with a request is said, and nothing comes of it', () => 
   });
 
   it.each(['', '{', '[]', '"x"', 'null', '{"person":"UADA"'])('%j is no JSON object', async (body) => {
-    expect((await call('POST', '/type', json, body)).status).toBe(400);
+    const answer = await call('POST', '/type', json, body);
+    expect(answer.status).toBe(400);
+    expect(answer.body).toContain('no JSON object');
   });
 
   it.each([
@@ -167,7 +169,9 @@ describe('what is wrong with a request is said, and nothing comes of it', () => 
 });
 
 describe('what is typed and pressed', () => {
-  it('is answered by the time that the request is', async () => {
+  it('is answered by the time that the request is, even where the bot takes its time', async () => {
+    await room.close();
+    room = await openRoom(0, 100);
     expect((await type({ line: shifts })).status).toBe(200);
     const { messages } = await state();
     expect(messages).toHaveLength(2);
