@@ -159,7 +159,7 @@ describe.each(['socket', 'http'] as const)('the bot over %s', (transport) => {
   });
 
   it('goes on, and posts once, when writing a sent message down fails', async () => {
-    const { markSent } = running.ledger;
+    const markSent = running.ledger.markSent.bind(running.ledger);
     let failures = 0;
     running.ledger.markSent = (id, ts) => {
       failures += 1;
