@@ -1,147 +1,222 @@
-import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
+import {
+  attributableFraction,
+  populationAttributableFraction,
+  preventedFraction,
+} from '../../src/stats/attributable-fraction.ts';
 import { clopperPearsonInterval } from '../../src/stats/clopper-pearson-interval.ts';
 import { conditionalOddsRatioInterval } from '../../src/stats/conditional-odds-ratio-interval.ts';
+import { chiSquaredUpperTail } from '../../src/stats/gamma-tail.ts';
+import { garwoodInterval } from '../../src/stats/garwood-interval.ts';
+import { hiddenCauseStrength, hiddenCauseStrengthAtLimit } from '../../src/stats/hidden-cause-strength.ts';
 import type { Interval } from '../../src/stats/interval.ts';
+import { nMinusOneChiSquared } from '../../src/stats/null-test.ts';
 import { oddsRatioInterval } from '../../src/stats/odds-ratio-interval.ts';
+import { rateDifference } from '../../src/stats/rate-difference-interval.ts';
+import { exactRateRatioInterval, rateRatio } from '../../src/stats/rate-ratio.ts';
 import { riskDifferenceInterval } from '../../src/stats/risk-difference-interval.ts';
 import { riskRatioInterval } from '../../src/stats/risk-ratio-interval.ts';
-import { exactShareRatioInterval, shareRatioInterval } from '../../src/stats/share-ratio.ts';
+import { exactShareRatioInterval, shareRatio } from '../../src/stats/share-ratio.ts';
+import { fayFeuerInterval, standardisedRate } from '../../src/stats/standardised-rate.ts';
 import { wilsonInterval } from '../../src/stats/wilson-interval.ts';
+import { fixture } from './error-of.ts';
 
-interface Row {
-  readonly method:
-    | 'wilson'
-    | 'clopperPearson'
-    | 'riskRatio'
-    | 'riskDifference'
-    | 'oddsRatio'
-    | 'conditionalOddsRatio'
-    | 'exactRateRatio';
-  readonly input: readonly number[];
-  readonly printed: readonly [string | null, string | null];
+/** How a figure was seen: in the source itself, quoted from it elsewhere, or not at all. */
+interface Sourced {
+  readonly id: string;
   readonly source: string;
+  readonly seen: 'primary' | 'secondary' | 'memory';
+  readonly note?: string;
 }
-const rows = JSON.parse(
-  readFileSync(new URL('../fixtures/reference/published.json', import.meta.url), 'utf8'),
-) as readonly Row[];
+type Printed = readonly (string | null)[];
+type Values = readonly (number | null)[];
 
-function limitsOf({ method, input }: Row): Interval {
-  const [a = NaN, b = NaN, c = NaN, d = NaN] = input;
-  const groups = { cases: a, total: b, referenceCases: c, referenceTotal: d };
-  switch (method) {
-    case 'wilson':
-      return wilsonInterval(a, b, 0.95);
-    case 'clopperPearson':
-      return clopperPearsonInterval(a, b, 0.95);
-    case 'riskRatio':
-      return riskRatioInterval(groups, 0.95);
-    case 'riskDifference':
-      return riskDifferenceInterval(groups, 0.95);
-    case 'oddsRatio':
-      return oddsRatioInterval(groups, 0.95);
-    case 'conditionalOddsRatio':
-      return conditionalOddsRatioInterval(groups, 0.95);
-    case 'exactRateRatio':
-      return exactShareRatioInterval(
-        { cases: a, referenceCases: c, coverage: b / (b + d), referenceCoverage: d / (b + d) },
-        0.95,
-      );
-  }
+/** What each method makes of the numbers of a row and its level. */
+const methods = {
+  wilson: ([x, n], level) => limits(wilsonInterval(x, n, level)),
+  clopperPearson: ([x, n], level) => limits(clopperPearsonInterval(x, n, level)),
+  riskRatio: (input, level) => limits(riskRatioInterval(groupsOf(input), level)),
+  riskDifference: (input, level) => limits(riskDifferenceInterval(groupsOf(input), level)),
+  oddsRatio: (input, level) => limits(oddsRatioInterval(groupsOf(input), level)),
+  conditionalOddsRatio: (input, level) => limits(conditionalOddsRatioInterval(groupsOf(input), level)),
+  pearsonChiSquared: (input) => [pearson(input)],
+  pearsonP: (input) => [chiSquaredUpperTail(pearson(input), 1)],
+  garwood: ([events, exposure], level) => limits(garwoodInterval(events, exposure, level)),
+  rateRatio: (input) => [rateRatio(ratesOf(input))],
+  exactRateRatio: (input, level) => limits(exactRateRatioInterval(ratesOf(input), level)),
+  rateDifference: (input) => [rateDifference(ratesOf(input))],
+  attributableFraction: (input) => [attributableFraction(ratioOf(input))],
+  exactAttributableFraction: (input, level) =>
+    limits(exactRateRatioInterval(ratesOf(input), level)).map((limit) => attributableFraction(limit ?? NaN)),
+  populationAttributableFraction: (input) => [
+    populationAttributableFraction(ratioOf(input), input[1] / (input[1] + input[3])),
+  ],
+  preventedFraction: (input) => [preventedFraction(ratioOf(input))],
+  hiddenCauseStrength: ([ratio]) => [hiddenCauseStrength(ratio)],
+  hiddenCauseStrengthAtLimit: ([low, high]) => [hiddenCauseStrengthAtLimit({ low, high })],
+} satisfies Record<string, (input: Four, level: number) => Values>;
+
+/** A row has as many numbers as its method reads; the rest are NaN and would show. */
+type Four = readonly [number, number, number, number];
+
+const published = fixture<{
+  readonly rows: readonly (Sourced & {
+    readonly method: keyof typeof methods;
+    readonly input: readonly number[];
+    readonly level?: number;
+    readonly printed: Printed;
+  })[];
+  readonly standardised: readonly (Sourced & {
+    readonly layer: string;
+    readonly per: number;
+    readonly cases: readonly number[];
+    readonly exposures: readonly number[];
+    readonly weights: readonly number[];
+    readonly printed: Printed;
+  })[];
+  readonly screening: readonly (Sourced & {
+    readonly vaccinated: number;
+    readonly cases: number;
+    readonly effectiveness: string;
+    readonly printed: readonly [string, string];
+  })[];
+  readonly curves: readonly (Sourced & {
+    readonly coverage: number;
+    readonly effectiveness: number;
+    readonly share: string;
+  })[];
+  readonly mortalityRatios: readonly (Sourced & {
+    readonly deaths: number;
+    readonly smr: string;
+    readonly printed: readonly [string, string];
+  })[];
+}>('published.json');
+
+function limits({ low, high }: Interval): Values {
+  return [low, high];
 }
 
-/** Right to the digits printed: within half a unit in the last place (and a hair for figures that end in a 5). */
-function asPrinted(limit: number | null, printed: string | null): void {
-  if (printed === null) return expect(limit).toBeNull();
-  const decimals = printed.split('.')[1]?.length ?? 0;
-  expect(Math.abs((limit ?? NaN) - Number(printed)), `${limit} for ${printed}`).toBeLessThanOrEqual(
-    0.5000001 * 10 ** -decimals,
-  );
+function groupsOf([cases, total, referenceCases, referenceTotal]: Four) {
+  return { cases, total, referenceCases, referenceTotal };
 }
 
-describe('printed intervals come out to the digits printed', () => {
-  it.each(rows)('$method of $input: $printed ($source)', (row) => {
-    const { low, high } = limitsOf(row);
-    asPrinted(low, row.printed[0]);
-    asPrinted(high, row.printed[1]);
+function ratesOf([cases, exposure, referenceCases, referenceExposure]: Four) {
+  return { cases, exposure, referenceCases, referenceExposure };
+}
+
+function ratioOf([cases, total, referenceCases, referenceTotal]: Four): number {
+  return cases / total / (referenceCases / referenceTotal);
+}
+
+/** Pearson's chi-squared is the (N-1) chi-squared with N in the place of N - 1. */
+function pearson(input: Four): number {
+  const all = input[1] + input[3];
+  return (nMinusOneChiSquared(groupsOf(input)) * all) / (all - 1);
+}
+
+/** Half a unit in the last printed place. */
+const halfUnit = (printed: string) => 0.5 * 10 ** -(printed.split('.')[1]?.length ?? 0);
+
+/** Right to the digits printed, and a hair more for figures that end in a 5. */
+function asPrinted(values: Values, printed: Printed): void {
+  expect(values.length).toBe(printed.length);
+  values.forEach((value, at) => {
+    const figure = printed[at] ?? null;
+    if (value === null || figure === null) return expect(value).toBe(figure);
+    expect(Math.abs(value - Number(figure)), `${value} for ${figure}`).toBeLessThanOrEqual(
+      halfUnit(figure) * 1.0000002,
+    );
   });
+}
+
+/** Right where an input was itself rounded in print: within what its two ends give, and half a unit of the figure's own. */
+function betweenEnds(printed: string, values: readonly number[]): void {
+  expect(Number(printed)).toBeGreaterThanOrEqual(Math.min(...values) - halfUnit(printed));
+  expect(Number(printed)).toBeLessThanOrEqual(Math.max(...values) + halfUnit(printed));
+}
+
+const ends = (printed: string) => [Number(printed) - halfUnit(printed), Number(printed) + halfUnit(printed)];
+
+/** The source as a title names it. */
+const named = <T extends Sourced>(rows: readonly T[]) =>
+  rows.map((row) => ({
+    ...row,
+    named: `${row.source}, ${{ primary: 'seen', secondary: 'seen quoted', memory: 'from memory' }[row.seen]}${row.note === undefined ? '' : `; ${row.note}`}`,
+  }));
+
+describe('printed figures come out to the digits printed', () => {
+  it.each(named(published.rows))(
+    '$method of $input: $printed ($named)',
+    ({ method, input, level, printed }) => {
+      const [a = NaN, b = NaN, c = NaN, d = NaN] = input;
+      asPrinted(methods[method]([a, b, c, d], level ?? 0.95), printed);
+    },
+  );
+
+  it.each(named(published.standardised))(
+    'standardised rate, $layer, per $per: $printed ($named)',
+    ({ per, cases, exposures, weights, printed }) => {
+      const layers = cases.map((count, at) => ({
+        cases: count,
+        exposure: exposures[at] ?? NaN,
+        weight: weights[at] ?? NaN,
+      }));
+      const { low, high } = fayFeuerInterval(layers, 0.95);
+      const values = [standardisedRate(layers), low ?? NaN, high ?? NaN].map((value) => value * per);
+      asPrinted(values.slice(0, printed.length), printed);
+    },
+  );
 });
 
 describe('the screening method against print', () => {
-  /** Campbell et al. 2012, Emerging Infectious Diseases, Table 5: VE from exact limits of vaccinated cases of all cases. Coverage is not printed; it follows from the printed VE. */
-  const campbell = [
-    [28, 29, -41.3, -5679, 76.6],
-    [88, 108, 90.4, 83.4, 94.1],
-    [463, 500, 72.1, 59.9, 80.1],
-    [26, 33, 91.0, 75.4, 96.2],
-    [2, 4, 97.7, 67.6, 99.8],
-    [118, 146, 90.5, 85.1, 93.8],
-    [491, 529, 69.3, 56.1, 78.0],
-  ] as const;
-
-  it.each(campbell)(
-    '%i of %i cases vaccinated: VE %d%% (%d to %d), Campbell 2012',
-    (vaccinated, all, effectiveness, low, high) => {
-      const cases = { cases: vaccinated, referenceCases: all - vaccinated };
-      // The printed VE was rounded to 0.05 points either way; a printed limit must lie between those of its two ends.
-      const ends = [effectiveness - 0.05, effectiveness + 0.05].map((percent) => {
-        const ratio = 1 - percent / 100;
-        const coverageOdds = vaccinated / (all - vaccinated) / ratio;
-        const coverage = coverageOdds / (1 + coverageOdds);
-        return exactShareRatioInterval({ ...cases, coverage, referenceCoverage: 1 - coverage }, 0.95);
+  // Coverage is not printed; it follows from the printed effectiveness, which was rounded.
+  it.each(named(published.screening))(
+    '$vaccinated of $cases cases vaccinated: effectiveness $effectiveness% ($printed) ($named)',
+    ({ vaccinated, cases, effectiveness, printed: [low, high] }) => {
+      const counts = { cases: vaccinated, referenceCases: cases - vaccinated };
+      const intervals = ends(effectiveness).map((percent) => {
+        const odds = vaccinated / (cases - vaccinated) / (1 - percent / 100);
+        const coverage = odds / (1 + odds);
+        return exactShareRatioInterval({ ...counts, coverage, referenceCoverage: 1 - coverage }, 0.95);
       });
-      const between = (printed: number, limits: readonly (number | null)[], decimals: number) => {
-        const values = limits.map((limit) => 100 * (1 - (limit ?? NaN)));
-        const half = 0.5 * 10 ** -decimals;
-        expect(printed).toBeGreaterThanOrEqual(Math.min(...values) - half);
-        expect(printed).toBeLessThanOrEqual(Math.max(...values) + half);
-      };
-      between(
+      const percentOf = (limit: number | null) => 100 * (1 - (limit ?? NaN));
+      betweenEnds(
         low,
-        ends.map(({ high: limit }) => limit),
-        Number.isInteger(low) ? 0 : 1,
+        intervals.map((interval) => percentOf(interval.high)),
       );
-      between(
+      betweenEnds(
         high,
-        ends.map(({ low: limit }) => limit),
-        1,
+        intervals.map((interval) => percentOf(interval.low)),
       );
     },
   );
 
-  it('at coverage c and VE v has the share of cases c(1-v)/(1-cv): 0.09, 0.29, 0.47, 0.66, 0.31, 0.32 (Orenstein 1985, from memory)', () => {
-    const pairs = [
-      [0.5, 0.9],
-      [0.8, 0.9],
-      [0.9, 0.9],
-      [0.95, 0.9],
-      [0.9, 0.95],
-      [0.7, 0.8],
-    ] as const;
-    const printed = [0.09, 0.29, 0.47, 0.66, 0.31, 0.32];
-    pairs.forEach(([coverage, effectiveness], at) => {
-      const share = printed[at] ?? NaN;
-      const { low, high } = shareRatioInterval(
-        {
-          cases: (share - 0.005) * 1e6,
-          referenceCases: (1 - share + 0.005) * 1e6,
-          coverage,
-          referenceCoverage: 1 - coverage,
-        },
-        0.5,
+  it.each(named(published.curves))(
+    'coverage $coverage and effectiveness $effectiveness: $share of the cases are vaccinated ($named)',
+    ({ coverage, effectiveness, share }) => {
+      const [least, most] = ends(share).map((cases) =>
+        shareRatio({ cases, referenceCases: 1 - cases, coverage, referenceCoverage: 1 - coverage }),
       );
-      const upper = shareRatioInterval(
-        {
-          cases: (share + 0.005) * 1e6,
-          referenceCases: (1 - share - 0.005) * 1e6,
-          coverage,
-          referenceCoverage: 1 - coverage,
-        },
-        0.5,
+      expect(1 - effectiveness).toBeGreaterThanOrEqual(least ?? NaN);
+      expect(1 - effectiveness).toBeLessThanOrEqual(most ?? NaN);
+    },
+  );
+});
+
+describe('standardised mortality ratios against print', () => {
+  // Expected deaths are not printed; they follow from the printed ratio, which was rounded.
+  it.each(named(published.mortalityRatios))(
+    '$deaths deaths, ratio $smr: $printed ($named)',
+    ({ deaths, smr, printed: [low, high] }) => {
+      const intervals = ends(smr).map((ratio) => garwoodInterval(deaths, deaths / ratio, 0.95));
+      betweenEnds(
+        low,
+        intervals.map((interval) => interval.low ?? NaN),
       );
-      expect(1 - effectiveness).toBeGreaterThanOrEqual(low ?? NaN);
-      expect(1 - effectiveness).toBeLessThanOrEqual(upper.high ?? NaN);
-      expect(high).not.toBeNull();
-    });
-  });
+      betweenEnds(
+        high,
+        intervals.map((interval) => interval.high ?? NaN),
+      );
+    },
+  );
 });
