@@ -1,5 +1,5 @@
-import { bracketedRoot } from './bracketed-root.ts';
 import type { Interval, TwoGroups } from './interval.ts';
+import { multiplierRoot } from './multiplier-root.ts';
 import { scoreThreshold, swapped } from './score-factor.ts';
 
 /**
@@ -26,12 +26,14 @@ function lowerLimit({ cases, total, referenceCases, referenceTotal }: TwoGroups,
   const referenceOthers = referenceTotal - referenceCases;
   const most = Math.min(cases, referenceOthers);
   if (most === 0) return 0;
-  const excess = (m: number) =>
+  // What each cell leaves is what the smaller one leaves, plus what the larger one has more.
+  const [more, referenceMore] = [cases - most, referenceOthers - most];
+  const excess = (m: number, rest: number) =>
     m *
       m *
-      (total / ((cases - m) * (others + m)) +
-        referenceTotal / ((referenceCases + m) * (referenceOthers - m))) -
+      (total / ((more + rest) * (others + m)) +
+        referenceTotal / ((referenceCases + m) * (referenceMore + rest))) -
     threshold;
-  const m = bracketedRoot(excess, 0, most, -threshold, Infinity);
-  return ((cases - m) / (others + m)) * ((referenceOthers - m) / (referenceCases + m));
+  const { multiplier: m, rest } = multiplierRoot(excess, most, -threshold);
+  return ((more + rest) / (others + m)) * ((referenceMore + rest) / (referenceCases + m));
 }

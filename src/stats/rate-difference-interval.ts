@@ -8,7 +8,12 @@ import type { RatePair } from './rate-ratio.ts';
 export function rateDifference({ cases, exposure, referenceCases, referenceExposure }: RatePair): number {
   checkExposure(cases, exposure);
   checkExposure(referenceCases, referenceExposure);
-  return (cases * referenceExposure - referenceCases * exposure) / exposure / referenceExposure;
+  // Divided in an order that does not change with the groups' roles, so that swapping them changes the sign and no digit.
+  return (
+    (cases * referenceExposure - referenceCases * exposure) /
+    Math.max(exposure, referenceExposure) /
+    Math.min(exposure, referenceExposure)
+  );
 }
 
 /**

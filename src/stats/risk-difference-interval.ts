@@ -14,8 +14,8 @@ import { scoreThreshold, swapped } from './score-factor.ts';
  * Miettinen & Nurminen 1985 (Statistics in Medicine 4:213). The cubic as printed loses all digits for rare risks, so the
  * limit is found through the multiplier l of the constrained maximum: the root of l^2 V(l) = k with
  * V = q1(1 - q1)/n1 + q2(1 - q2)/n2, each q the root of a quadratic written without a subtraction; the limit is then
- * the estimate minus l V(l). Where a group is full (or the reference empty) V has a corner at l = n1 (or n2), and the
- * distance from the corner is the unknown, since forming l - n from l would lose half of the digits. The upper limit is
+ * the estimate minus l V(l). Where a group is full or the reference empty, or all but so, V bends sharply at l = n1 (or n2); a
+ * root beyond it is found as the distance from there, since forming l - n from l would lose half of the digits. The upper limit is
  * minus the lower limit of the swapped groups, to the last bit.
  * Accuracy: 1e-12 of the larger of the limit and the interval's width, against 40-digit values.
  */
@@ -34,8 +34,7 @@ function lowerLimit(groups: TwoGroups, threshold: number): number {
     spread(corner + d, corner - total + d, total, others) / total +
     spread(corner + d, corner - referenceTotal + d, referenceTotal, referenceCases) / referenceTotal;
   const excess = (corner: number) => (d: number) => (corner + d) ** 2 * variance(corner, d) - threshold;
-  const corners = [...(others === 0 ? [total] : []), ...(referenceCases === 0 ? [referenceTotal] : [])];
-  const corner = Math.max(0, ...corners.filter((at) => excess(at)(0) < 0));
+  const corner = Math.max(0, ...[total, referenceTotal].filter((at) => excess(at)(0) < 0));
   const from = excess(corner);
   let high = corner === 0 ? Math.sqrt(threshold / Math.max(variance(0, 0), Number.MIN_VALUE)) : 1;
   if (!Number.isFinite(high) || high === 0) high = 1;

@@ -1,5 +1,6 @@
 import { bracketedRoot } from './bracketed-root.ts';
 import type { Interval, TwoGroups } from './interval.ts';
+import { multiplierRoot } from './multiplier-root.ts';
 import { scoreThreshold, swapped } from './score-factor.ts';
 
 /**
@@ -28,19 +29,19 @@ function lowerLimit(groups: TwoGroups, threshold: number): number {
   if (cases === 0) return 0;
   const others = total - cases;
   const referenceOthers = referenceTotal - referenceCases;
-  const excess = (m: number) =>
+  const excess = (m: number, rest: number) =>
     m *
       m *
-      ((others === 0 ? 0 : others / (total * (cases - m))) +
+      ((others === 0 ? 0 : others / (total * rest)) +
         referenceOthers / (referenceTotal * (referenceCases + m))) -
     threshold;
   if (others === 0) {
-    const atEnd = excess(cases);
+    const atEnd = excess(cases, 0);
     // Everybody in the group is a case, and so many are still allowed at the limit: the group's own risk is then below 1.
     if (atEnd <= 0) return (total / (total - atEnd)) * ((referenceTotal + total) / (referenceCases + total));
-    const m = bracketedRoot(excess, 0, cases, -threshold, atEnd);
+    const m = bracketedRoot((each) => excess(each, 0), 0, cases, -threshold, atEnd);
     return (referenceTotal + m) / (referenceCases + m);
   }
-  const m = bracketedRoot(excess, 0, cases, -threshold, Infinity);
-  return ((cases - m) / (total - m)) * ((referenceTotal + m) / (referenceCases + m));
+  const { multiplier, rest } = multiplierRoot(excess, cases, -threshold);
+  return (rest / (others + rest)) * ((referenceTotal + multiplier) / (referenceCases + multiplier));
 }
