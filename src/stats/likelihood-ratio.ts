@@ -1,0 +1,55 @@
+import type { Interval, TwoGroups } from './interval.ts';
+import { riskRatioInterval } from './risk-ratio-interval.ts';
+
+/** An alarm's four counts: alarms among those with the condition and among those without it. */
+export interface AlarmCounts {
+  /** Alarms among the affected, in [0, affected]. */
+  readonly truePositives: number;
+  readonly affected: number;
+  /** Alarms among the unaffected, in [0, unaffected]. */
+  readonly falsePositives: number;
+  readonly unaffected: number;
+}
+
+/** How much an alarm multiplies the odds of the condition: sensitivity/(1 - specificity); `null` without a false alarm. */
+export function positiveLikelihoodRatio(counts: AlarmCounts): number | null {
+  return ratioOf(alarms(counts));
+}
+
+/** How much silence multiplies them: (1 - sensitivity)/specificity; `null` where every unaffected one set off the alarm. */
+export function negativeLikelihoodRatio(counts: AlarmCounts): number | null {
+  return ratioOf(silences(counts));
+}
+
+/**
+ * Score intervals of the likelihood ratios: they are risk ratios, of alarms (or silences) among the affected against the unaffected.
+ *
+ * @param level confidence level as a share, in [0.5, 0.9999]
+ * @throws ArgumentError for counts out of range
+ *
+ * Miettinen & Nurminen 1985 (Statistics in Medicine 4:213). Simel 1991 has the log interval of the same ratios.
+ */
+export function positiveLikelihoodRatioInterval(counts: AlarmCounts, level: number): Interval {
+  return riskRatioInterval(alarms(counts), level);
+}
+
+export function negativeLikelihoodRatioInterval(counts: AlarmCounts, level: number): Interval {
+  return riskRatioInterval(silences(counts), level);
+}
+
+const alarms = ({ truePositives, affected, falsePositives, unaffected }: AlarmCounts): TwoGroups => ({
+  cases: truePositives,
+  total: affected,
+  referenceCases: falsePositives,
+  referenceTotal: unaffected,
+});
+
+const silences = ({ truePositives, affected, falsePositives, unaffected }: AlarmCounts): TwoGroups => ({
+  cases: affected - truePositives,
+  total: affected,
+  referenceCases: unaffected - falsePositives,
+  referenceTotal: unaffected,
+});
+
+const ratioOf = ({ cases, total, referenceCases, referenceTotal }: TwoGroups) =>
+  referenceCases === 0 ? null : (cases / total) * (referenceTotal / referenceCases);

@@ -1,0 +1,133 @@
+import { checkWhole } from './argument-error.ts';
+import { bracketedRoot } from './bracketed-root.ts';
+import { lowerTailLimit } from './convolution-tail.ts';
+import { criticalValue } from './critical-value.ts';
+import { fittedTable } from './fitted-table.ts';
+import { hypergeometricMoments, supportOf } from './hypergeometric-moments.ts';
+import type { Interval, TwoGroups } from './interval.ts';
+import { oddsRatioInterval } from './odds-ratio-interval.ts';
+import { outermostRoot, upTo } from './outermost-root.ts';
+import { swapped } from './score-factor.ts';
+import { sumOver, usableStrata, varianceFactor } from './strata.ts';
+import type { Strata } from './strata.ts';
+
+/**
+ * The odds ratio pooled over layers: the conditional estimate, at which the cases of the group are as many as the non-central
+ * hypergeometric distribution expects in all layers together.
+ *
+ * A layer with more than 10,000 possible tables, or with counts that are not whole, counts with Gart's fitted count instead.
+ *
+ * @returns `null` where it is undefined or has no upper end
+ * @throws ArgumentError for counts out of range, or where no layer has people in both groups
+ *
+ * Gart 1970 (Biometrika 57:471); the estimate that R's exact mantelhaen.test prints.
+ */
+export function pooledOddsRatio(strata: Strata): number | null {
+  const usable = usableStrata(strata);
+  if (!bounded(usable.map(swapped))) return null;
+  if (!bounded(usable)) return 0;
+  return Math.exp(estimateOf(usable));
+}
+
+/**
+ * Score interval of the pooled odds ratio: the excess of the group's cases over their conditional mean, over the root of the
+ * conditional variance. At 1 it is the Cochran-Mantel-Haenszel statistic without correction, whichever way a layer counts, so
+ * that it never contradicts the pooled risk ratio. One layer gives the plain interval, which is not conditional.
+ *
+ * @param level confidence level as a share, in [0.5, 0.9999]
+ * @returns lower limit 0 where all layers have as few cases in the group as their margins allow, no upper limit where as many;
+ *   the outermost roots where the statistic is not monotone
+ * @throws ArgumentError for counts out of range, or where no layer has people in both groups
+ *
+ * Gart 1970; Mehta, Patel & Gray 1985 (JASA 80:969). Large layers: Gart's fitted counts with the factor N/(N - 1), within 0.2% of
+ * the conditional limits once all margins pass 500. Accuracy: 1e-11 relative for either form.
+ */
+export function pooledOddsRatioInterval(strata: Strata, level: number): Interval {
+  const usable = usableStrata(strata);
+  const [only] = usable;
+  if (only !== undefined && usable.length === 1) return oddsRatioInterval(only, level);
+  const z = criticalValue(level);
+  const mirrored = lowerLimit(usable.map(swapped), z);
+  return { low: lowerLimit(usable, z), high: mirrored === 0 ? null : 1 / mirrored };
+}
+
+function lowerLimit(strata: Strata, z: number): number {
+  if (!bounded(strata)) return 0;
+  const excess = (logRatio: number) => {
+    const { gap, variance } = totals(strata, Math.exp(logRatio));
+    return gap - z * Math.sqrt(variance);
+  };
+  const centre = bounded(strata.map(swapped)) ? estimateOf(strata) : 0;
+  const root = outermostRoot(excess, upTo(centre));
+  return root === null ? 0 : Math.exp(root);
+}
+
+/** True where the group has more cases than the margins allow at least, in some layer: the ratio then is above 0. */
+const bounded = (strata: Strata) => strata.some((groups) => groups.cases > supportOf(groups).fewest);
+
+/** The log of the conditional estimate, which must be neither 0 nor without end. */
+function estimateOf(strata: Strata): number {
+  const gap = (logRatio: number) => -totals(strata, Math.exp(logRatio)).gap;
+  let low = -0.5;
+  let high = 0.5;
+  for (let step = 0.5; gap(low) > 0; step *= 2) low -= step;
+  for (let step = 0.5; gap(high) < 0; step *= 2) high += step;
+  return bracketedRoot(gap, low, high);
+}
+
+function totals(strata: Strata, t: number): { readonly gap: number; readonly variance: number } {
+  const each = strata.map((groups) =>
+    countable(groups) ? hypergeometricMoments(groups, t) : fitted(groups, t),
+  );
+  return { gap: sumOver(each, ({ excess }) => excess), variance: sumOver(each, ({ variance }) => variance) };
+}
+
+function fitted(groups: TwoGroups, t: number): { readonly excess: number; readonly variance: number } {
+  const { cases, variance } = fittedTable(groups, t);
+  return { excess: groups.cases - cases, variance: variance * varianceFactor(groups) };
+}
+
+/** Whether a layer's possible tables are counted one by one. */
+function countable(groups: TwoGroups): boolean {
+  const { cases, total, referenceCases, referenceTotal } = groups;
+  const { fewest, most } = supportOf(groups);
+  return most - fewest < 10_000 && [cases, total, referenceCases, referenceTotal].every(Number.isSafeInteger);
+}
+
+/**
+ * Exact interval of the pooled odds ratio, central: the tails of the sum of the layers' non-central hypergeometric counts.
+ *
+ * @throws ArgumentError for counts that are not whole or out of range
+ *
+ * Gart 1970; Mehta, Patel & Gray 1985. With one layer it is the interval of conditional-odds-ratio-interval.ts.
+ */
+export function exactPooledOddsRatioInterval(strata: Strata, level: number): Interval {
+  const usable = usableStrata(strata);
+  usable.forEach(({ cases, total, referenceCases, referenceTotal }) => {
+    checkWhole(cases, total, referenceCases, referenceTotal);
+  });
+  const mirrored = exactLowerLimit(usable.map(swapped), level);
+  return { low: exactLowerLimit(usable, level), high: mirrored === 0 ? null : 1 / mirrored };
+}
+
+function exactLowerLimit(strata: Strata, level: number): number {
+  if (!bounded(strata)) return 0;
+  const near = lowerLimit(strata, criticalValue(level));
+  const counts = strata.map((groups) => {
+    const { cases, total, referenceCases, referenceTotal } = groups;
+    const { fewest, most } = supportOf(groups);
+    const all = cases + referenceCases;
+    return {
+      fewest,
+      most,
+      start: Math.min(most, Math.max(fewest, Math.round(fittedTable(groups, near).cases))),
+      up: (u: number) => ((total - u) / (u + 1)) * ((all - u) / (referenceTotal - all + u + 1)),
+    };
+  });
+  return lowerTailLimit(
+    counts,
+    sumOver(strata, ({ cases }) => cases),
+    near,
+    level,
+  );
+}
