@@ -31,6 +31,12 @@ await Promise.all([
     outfile: at('dist/bench.js'),
     packages: 'external',
   }),
+  build({
+    ...common,
+    entryPoints: [at('tests/bench/calibration.ts')],
+    outfile: at('dist/calibration.js'),
+    packages: 'external',
+  }),
 ]);
 await cp(at('src/practice/page'), at('dist/page'), { recursive: true });
 await chmod(at('dist/divisor.js'), 0o755);
