@@ -1,6 +1,9 @@
 import type { IToken } from 'chevrotain';
-import { fractionOf, group, wordDigits, writtenNumber } from './numbers.ts';
+import { is, numberAt, numberOrWordAt, roundBase } from './number-tokens.ts';
+import { fractionOf, group, writtenNumber } from './numbers.ts';
 import type { WrittenNumber } from './numbers.ts';
+import { eachFigure, isEach, rateAt } from './rate-figures.ts';
+import type { RateFigure } from './rate-figures.ts';
 import type { CountValue, ShareValue } from './tags.ts';
 import * as token from './tokens.ts';
 
@@ -42,50 +45,19 @@ export type Figure =
       readonly count: CountValue;
       readonly connector: number;
     }
-  | { readonly kind: 'rate'; readonly start: number; readonly end: number }
+  | RateFigure
   | {
       readonly kind: 'year';
       readonly start: number;
       readonly end: number;
       readonly count: WrittenNumber;
+      readonly noun: readonly [number, number] | null;
       readonly year: string;
     };
 
 type Tokens = readonly IToken[];
 
-const is = (tokens: Tokens, at: number, type: IToken['tokenType']) => tokens[at]?.tokenType === type;
-
-/** Units of time and distance: a number of these after `in` is an exposure, not a number of people. */
-const exposure =
-  /^(?:.*-)?(?:seconds?|secs?|minutes?|mins?|hours?|hrs?|h|days?|nights?|weeks?|months?|quarters?|years?|yrs?|km|kilomet(?:re|er)s?|miles?|mi)$/i;
-const roundBase = (value: number) => value >= 10 && value <= 1e6 && Number.isInteger(Math.log10(value));
 const mostNounWords = 6;
-
-/** A number with its magnitude word, at this place. */
-function numberAt(
-  tokens: Tokens,
-  at: number,
-): { readonly number: WrittenNumber; readonly end: number } | null {
-  const first = tokens[at];
-  if (first === undefined || !is(tokens, at, token.NumberToken)) return null;
-  const magnitude = is(tokens, at + 1, token.Magnitude) ? (tokens[at + 1]?.image ?? null) : null;
-  return { number: writtenNumber(first.image, magnitude), end: magnitude === null ? at + 1 : at + 2 };
-}
-
-/** A number, or a number word beside a connector: `one in four`, `three of nine`. */
-function numberOrWordAt(tokens: Tokens, at: number) {
-  const plain = numberAt(tokens, at);
-  if (plain !== null) return plain;
-  const first = tokens[at];
-  if (first === undefined || !is(tokens, at, token.NumberWord)) return null;
-  const digits = wordDigits(first.image);
-  const magnitude = is(tokens, at + 1, token.Magnitude) ? (tokens[at + 1]?.image ?? null) : null;
-  if (digits === null) return null;
-  return {
-    number: writtenNumber(String(Number(digits)), magnitude),
-    end: magnitude === null ? at + 1 : at + 2,
-  };
-}
 
 /** The figure that starts at this token, or `null`. Looks ahead at most a fixed number of tokens. */
 export function figureAt(tokens: Tokens, at: number): Figure | null {
@@ -120,26 +92,29 @@ export function figureAt(tokens: Tokens, at: number): Figure | null {
 /** A count and what follows it: its total, a base, an exposure, a year, or nothing. */
 function connectedFigure(tokens: Tokens, start: number, count: CountValue, after: number): Figure {
   let at = after;
-  while (at < after + mostNounWords && nounWord(tokens, at)) at += 1;
+  while (at < after + mostNounWords && nounWord(tokens, at) && !isEach(tokens, at)) at += 1;
+  if (isEach(tokens, at)) {
+    const noun = at > after ? ([after, at] as const) : null;
+    return eachFigure({ start, count, noun, connector: at }, tokens);
+  }
   const connector = connectorAt(tokens, at);
   if (connector === null) return danglingOrBare(tokens, start, count, after);
   const noun = at > after ? ([after, at] as const) : null;
+  const rate = rateAt(tokens, { start, count, noun, connector: at }, connector);
+  if (rate !== null) return rate;
   const total = numberOrWordAt(tokens, at + 1);
   if (total === null) return danglingOrBare(tokens, start, count, after);
   const { number: base, end } = total;
   const pair = { start, end, count, noun, connector: at, total: base, totalAt: [at + 1, end] as const };
   if (connector === 'of') return { kind: 'counts', ...pair, eachCountedOnce: false };
-  const measured = exposureAt(tokens, end);
   if (connector === 'in') {
-    if (measured) return { kind: 'rate', start, end: end + 1 };
     if (count.written.value === 1 || roundBase(base.value))
       return frequency(start, end, count.written, base, 'in');
     if (isYear(tokens[at + 1]?.image ?? '') && !nounWord(tokens, end)) {
-      return { kind: 'year', start, end, count: count.written, year: tokens[at + 1]?.image ?? '' };
+      return { kind: 'year', start, end, count: count.written, noun, year: tokens[at + 1]?.image ?? '' };
     }
     return { kind: 'counts', ...pair, eachCountedOnce: true };
   }
-  if (!roundBase(base.value) || measured || is(tokens, end, token.Per)) return { kind: 'rate', start, end };
   return frequency(start, end, count.written, base, 'per');
 }
 
@@ -155,12 +130,6 @@ function connectorAt(tokens: Tokens, at: number): 'of' | 'in' | 'per' | null {
 }
 
 const isYear = (image: string) => /^(?:19|20)\d\d$/.test(image);
-
-/** Whether a unit of time or distance comes next, also as the last of two words (`bus days`). */
-function exposureAt(tokens: Tokens, at: number): boolean {
-  const word = (place: number) => (is(tokens, place, token.Word) ? (tokens[place]?.image ?? '') : '');
-  return exposure.test(word(at)) || (word(at) !== '' && exposure.test(word(at + 1)));
-}
 
 function danglingOrBare(tokens: Tokens, start: number, count: CountValue, after: number): Figure {
   const next = tokens[after + 1];

@@ -30,9 +30,16 @@ function timeOf(name: string): { readonly scale: string; readonly at: number } |
   return later.includes(first) ? { scale: 'order', at: 1 } : null;
 }
 
+/** Whether a name says a time: `last year`, `2023`, `before`. */
+export const isTimeName = (name: string) => timeOf(name) !== null;
+
 /** The index of the earlier of two groups whose names are ordered in time (before/after, old/new, years, months), else `null`. */
 export function earlierOf(names: readonly (string | null)[]): number | null {
   if (names.length !== 2) return null;
+  const lone = names.map(
+    (name) => name !== null && /^(?:before|earlier|previously|last (?:year|month|week))$/i.test(name),
+  );
+  if (lone[0] !== lone[1] && names.every((name) => name !== null)) return lone[0] === true ? 0 : 1;
   const [first, second] = names.map((name) => (name === null ? null : timeOf(name)));
   if (first == null || second == null || first.scale !== second.scale || first.at === second.at) return null;
   return first.at < second.at ? 0 : 1;

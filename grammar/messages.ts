@@ -66,10 +66,14 @@ export const messages = {
   'year-or-people': (text: string) => `${text}: a year, or that many people?`,
   'unread-part': (text: string) =>
     `I cannot place "${text}" here. Groups stand as "name: count of total", with "vs" between them.`,
-  'not-yet-rate': () =>
-    'This is a rate over time or distance. I read counts of people or events so far: how many, out of how many?',
-  'not-yet-change': () =>
-    'This is a change over time. I read it so far as two groups: how many of how many before, and after.',
+  'change-of-two': () => 'A change has two figures, the earlier and the later. Send one change at a time.',
+  'years-or-counts': (one: string, other: string) =>
+    `${one.replace(',', '')} and ${other.replace(',', '')}: years, or counts? Years belong after "period"; counts of that size take a comma.`,
+  'different-times': (one: string, other: string) =>
+    `Watched for different times, ${one} and ${other}: shares cannot be compared then, but rates per person and time can.`,
+  'units-differ': (one: string, other: string) =>
+    `One is over ${one}, the other over ${other}. Give both in one unit.`,
+  'exposure-zero': (text: string) => `${text}: over nothing. A time or distance has to be above 0.`,
   'not-yet-coverage': () =>
     'I read coverage as one number so far, not as a range or as something that grew. Send the line once for each end.',
   'not-yet-clause': (word: string) =>

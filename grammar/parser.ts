@@ -27,7 +27,7 @@ export class LineParser extends CstParser {
     });
   });
 
-  /** part: Clause | [ CasesHead | CoverageHead ] list */
+  /** part: Clause | [ CasesHead | CoverageHead | ChangeHead ] list */
   readonly part = this.RULE('part', () => {
     this.OR([
       { ALT: () => this.CONSUME(tags.ClauseTag) },
@@ -43,7 +43,13 @@ export class LineParser extends CstParser {
           this.SUBRULE2(this.list);
         },
       },
-      { ALT: () => this.SUBRULE3(this.list) },
+      {
+        ALT: () => {
+          this.CONSUME(tags.ChangeHeadTag);
+          this.SUBRULE3(this.list);
+        },
+      },
+      { ALT: () => this.SUBRULE4(this.list) },
     ]);
   });
 
@@ -66,7 +72,7 @@ export class LineParser extends CstParser {
     this.OPTION4(() => this.CONSUME(tags.AfterTag));
   });
 
-  /** figure: Cases [ CaseNoun ] [ Of Total ] | Share [ Of Total ] [ ShareNoun ] */
+  /** figure: Cases [ CaseNoun ] [ Of Total | PerSign Exposure ] | Share [ Of Total ] [ ShareNoun ] */
   readonly figure = this.RULE('figure', () => {
     this.OR([
       {
@@ -74,8 +80,20 @@ export class LineParser extends CstParser {
           this.CONSUME(tags.CasesTag);
           this.OPTION(() => this.CONSUME(tags.CaseNounTag));
           this.OPTION2(() => {
-            this.CONSUME(tags.OfTag);
-            this.CONSUME(tags.TotalTag);
+            this.OR2([
+              {
+                ALT: () => {
+                  this.CONSUME(tags.OfTag);
+                  this.CONSUME(tags.TotalTag);
+                },
+              },
+              {
+                ALT: () => {
+                  this.CONSUME(tags.PerSignTag);
+                  this.CONSUME(tags.ExposureTag);
+                },
+              },
+            ]);
           });
         },
       },

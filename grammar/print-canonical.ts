@@ -1,5 +1,6 @@
+import { unitOfOne } from './exposures.ts';
 import { grouped } from './numbers.ts';
-import type { Question, Quantity } from './question.ts';
+import type { Question, Quantity, RatesGroup } from './question.ts';
 
 /** The canonical spelling of a question. Reading it again gives the same question. */
 export function printCanonical(question: Question): string {
@@ -7,7 +8,13 @@ export function printCanonical(question: Question): string {
 }
 
 function figurePart(question: Question): string {
+  const change = changePart(question);
+  if (change !== null) return change;
   switch (question.kind) {
+    case 'rates':
+      return question.groups
+        .map((group, index) => `${named(group.label)}${rate(question, group, index)}`)
+        .join(' vs ');
     case 'counts': {
       const groups = question.groups.map(({ label, cases, total, stated }, index) => {
         const noun = index === 0 && question.caseNoun !== null ? ` ${question.caseNoun}` : '';
@@ -29,12 +36,46 @@ function figurePart(question: Question): string {
     }
     case 'bare-counts':
       return question.groups
-        .map(
-          ({ label, cases }) =>
-            `${named(label)}${cases.text}${question.unit === null ? '' : ` ${question.unit}`}`,
-        )
+        .map(({ label, cases }, index) => {
+          const noun = index === 0 && question.caseNoun !== null ? ` ${question.caseNoun}` : '';
+          return `${named(label)}${cases.text}${noun}`;
+        })
         .join(' vs ');
   }
+}
+
+/** `from 412 to 530`: a change whose times have no names of their own. */
+function changePart(question: Question): string | null {
+  if (!question.overTime || question.kind === 'shares' || question.groups.length !== 2) return null;
+  if (question.groups.map(({ label }) => label?.toLowerCase()).join() !== 'before,after') return null;
+  const unit = question.unit === null ? '' : ` ${question.unit}`;
+  const noun = question.caseNoun === null ? '' : `${named(question.caseNoun).replace(/: $/, '')} `;
+  switch (question.kind) {
+    case 'rates':
+      return `from ${question.groups.map((group, index) => rate(question, group, index)).join(' to ')}`;
+    case 'counts':
+      if (question.groups.some(({ stated, cases }) => stated !== null || / of /.test(cases.text)))
+        return null;
+      return `${noun}from ${question.groups.map(({ cases, total }) => `${cases.text} of ${total.text}`).join(' to ')}${unit}`;
+    case 'stated':
+      if (question.unit !== null) return null;
+      return `from ${question.groups.map(({ share }) => share.text).join(' to ')}`;
+    case 'bare-counts':
+      return `${noun}from ${question.groups.map(({ cases }) => cases.text).join(' to ')}`;
+  }
+}
+
+/** `14 incidents in 5,200 bus-days`, `3 per 1,000 bus-days`. */
+function rate(
+  { caseNoun, unit }: Question,
+  { cases, exposure, connector }: RatesGroup,
+  index: number,
+): string {
+  const noun = index === 0 && caseNoun !== null ? ` ${caseNoun}` : '';
+  const one = exposure.value === 1 && unit !== null;
+  const base = one && connector === 'per' ? '' : `${exposure.text} `;
+  const over = `${base}${one ? unitOfOne(unit) : (unit ?? '')}`;
+  return `${cases.text}${noun} ${connector} ${over}`.trimEnd();
 }
 
 function sharesPart(question: Extract<Question, { kind: 'shares' }>): string {

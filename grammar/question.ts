@@ -57,7 +57,6 @@ export interface ReadingRemark {
     | 'emoji-dropped'
     | 'number-in-label' // route 14 200 of 5,200: 14 is part of the label
     | 'count-from-percentage' // 1.5% of 1,204 is 18
-    | 'time-order' // the labels are ordered in time: the earlier is the reference
     | 'each-counted-once' // 14 in 5,200 crossings: each counted once
     | 'about-taken-as-given' // about 38% was taken as 38%
     | 'different-times'; // watched for different lengths of time
@@ -72,6 +71,8 @@ interface QuestionBase {
   readonly unit: string | null;
   /** What a case is called, as typed (`incidents`, `injured`); `null` where the line does not say. */
   readonly caseNoun: string | null;
+  /** The groups are two times of one thing: the reference is the earlier. */
+  readonly overTime: boolean;
   readonly remarks: readonly ReadingRemark[];
 }
 
@@ -149,7 +150,25 @@ export interface BareCountsGroup {
   readonly span: Span;
 }
 
-export type Question = CountsQuestion | SharesQuestion | StatedQuestion | BareCountsQuestion;
+/** `depot A: 14 in 5,200 bus-days vs depot B: 9 in 8,800 bus-days`: events over exposure, all in one unit (`unit`). */
+export interface RatesQuestion extends QuestionBase {
+  readonly kind: 'rates';
+  readonly groups: readonly RatesGroup[];
+  readonly reference: number;
+}
+
+export interface RatesGroup {
+  readonly label: string | null;
+  readonly cases: Quantity;
+  /** How long, how far or how much was watched, above 0. */
+  readonly exposure: Quantity;
+  /** `per` a round base (`3 per 1,000 bus-days`): a stated rate, without counts behind it. */
+  readonly asStated: boolean;
+  readonly connector: 'in' | 'per';
+  readonly span: Span;
+}
+
+export type Question = CountsQuestion | SharesQuestion | StatedQuestion | BareCountsQuestion | RatesQuestion;
 export type QuestionKind = Question['kind'];
 
 /** A line that would work, ready to send. `label` is what a button says where several are offered. */
@@ -170,7 +189,7 @@ export interface Diagnosis {
 }
 
 /** The help topics: the whole guide, or one kind of question. */
-export type HelpTopic = 'overview' | QuestionKind;
+export type HelpTopic = 'overview' | QuestionKind | 'change';
 
 /** What a typed line turned out to be. */
 export type LineReading =

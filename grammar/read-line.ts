@@ -13,7 +13,15 @@ import * as tags from './tags.ts';
 import { fineTokensOf } from './tokens.ts';
 import { partsOfTree } from './tree.ts';
 
-const topics: readonly HelpTopic[] = ['overview', 'counts', 'shares', 'stated', 'bare-counts'];
+const topics: readonly HelpTopic[] = [
+  'overview',
+  'counts',
+  'shares',
+  'rates',
+  'change',
+  'stated',
+  'bare-counts',
+];
 
 /** Reads one typed line. Pure, linear in the length of the line, and never throws whatever the line holds. */
 export function readLine(line: string, limits: LineLimits): LineReading {

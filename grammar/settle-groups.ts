@@ -13,6 +13,7 @@ import type {
 } from './question.ts';
 import type { Setting } from './setting.ts';
 import type { Item } from './tree.ts';
+import { sameWatched, withoutWatched } from './watched.ts';
 
 /** What the words around the figures mean: names, the unit, and what a case is called. */
 interface Naming {
@@ -30,6 +31,9 @@ export function namingOf(items: readonly Item[]): Naming {
     .map(({ figure }) => (figure.kind === 'count' ? figure.noun?.text : null) ?? null)
     .filter((noun) => noun !== null);
   const afters = items.map(({ after }) => after?.text ?? null);
+  // `ferry delays 412 last year 530 this year`: the words behind name the times, those in front what is counted.
+  if (earlierOf(afters) !== null && items[1]?.name === null)
+    return { labels: afters, unit: null, caseNoun: items[0]?.name?.text ?? nouns[0] ?? null };
   const named = items.some(({ name }) => name !== null);
   const present = afters.filter((after) => after !== null);
   const same = present.length > 0 && present.every((after) => nameKey(after) === nameKey(present[0] ?? ''));
@@ -54,8 +58,7 @@ export function referenceOf(labels: readonly (string | null)[], setting: Setting
   }
   const earlier = earlierOf(labels);
   if (earlier === null || earlier === labels.length - 1) return settled(labels.length - 1);
-  const text = labels[earlier] ?? '';
-  return settled(earlier, [{ id: 'time-order', text, readAs: text, span: { from: 0, to: 0 } }]);
+  return settled(earlier);
 }
 
 /** The same name twice is refused, and so are too many groups and a person as a name. */
@@ -80,7 +83,12 @@ export function checkNames(
 }
 
 /** Counts: every group has its cases and its total. */
-export function settleCounts(items: readonly Item[], setting: Setting): Settled<Question> {
+export function settleCounts(typedItems: readonly Item[], typedSetting: Setting): Settled<Question> {
+  const times = typedItems.map(withoutWatched);
+  const apart = times.find(({ watched }) => !sameWatched(watched, times[0]?.watched ?? null));
+  if (apart !== undefined) return refused(differentTimes(times, apart.item));
+  const items = times.map(({ item }) => item);
+  const setting = withPeriod(typedSetting, times[0]?.watched?.text ?? null);
   const naming = namingOf(items);
   const names = checkNames(items, naming.labels, setting);
   if (!names.ok) return names;
@@ -104,12 +112,33 @@ export function settleCounts(items: readonly Item[], setting: Setting): Settled<
     clauses: setting.given.clauses,
     unit: naming.unit,
     caseNoun: naming.caseNoun,
-    remarks: [...remarks, ...placed(reference.remarks, items)],
+    overTime: earlierOf(naming.labels) !== null,
+    remarks: remarks,
   });
 }
 
-const placed = (remarks: readonly ReadingRemark[], items: readonly Item[]) =>
-  remarks.map((remark) => ({ ...remark, span: items[0]?.span ?? remark.span }));
+/** The time that all groups were watched for stands with the check as its period, unless one was given. */
+function withPeriod(setting: Setting, text: string | null): Setting {
+  const { given } = setting;
+  if (text === null || given.clauses.period !== null) return setting;
+  return { ...setting, given: { ...given, clauses: { ...given.clauses, period: text } } };
+}
+
+/** Groups watched for different times cannot be compared as shares; as rates per person and time they can. */
+function differentTimes(times: readonly ReturnType<typeof withoutWatched>[], apart: Item) {
+  const rows = times.map(({ item: { name, figure }, watched }) => {
+    if (watched === null || figure.kind !== 'count' || figure.total === null) return null;
+    const label = name === null ? '' : `${name.text}: `;
+    return `${label}${figure.count.written.text} in ${grouped(figure.total.written.value * watched.amount)} person-${watched.unit}`;
+  });
+  const known = rows.filter((row) => row !== null);
+  return diagnosis(
+    'different-times',
+    apart.span,
+    times.map(({ watched }) => watched?.text ?? 'a time not said'),
+    known.length === rows.length ? [known.join(' vs ')] : [],
+  );
+}
 
 function countsGroup(item: Item, label: string | null, setting: Setting): Settled<CountsGroup> {
   const { figure, stated } = item;
@@ -232,7 +261,8 @@ export function settleStated(items: readonly Item[], setting: Setting): Settled<
     clauses: setting.given.clauses,
     unit: differ ? null : (naming.unit ?? nouns[0] ?? null),
     caseNoun: null,
-    remarks: [...setting.remarks, ...placed(reference.remarks, items)],
+    overTime: earlierOf(labels) !== null,
+    remarks: setting.remarks,
   });
 }
 
@@ -262,11 +292,6 @@ export function settleBareCounts(items: readonly Item[], setting: Setting): Sett
   }
   const names = checkNames(items, naming.labels, setting);
   if (!names.ok) return names;
-  const [first, last] = [items[0], items.at(-1)];
-  if (earlierOf(naming.labels) !== null && first !== undefined && last !== undefined) {
-    const span = { from: first.span.from, to: last.span.to };
-    return refused(diagnosis('not-yet-change', span, [], ['before: 41 of 1,000 vs after: 52 of 1,100']));
-  }
   const reference = referenceOf(naming.labels, setting);
   if (!reference.ok) return reference;
   return settled({
@@ -274,8 +299,10 @@ export function settleBareCounts(items: readonly Item[], setting: Setting): Sett
     groups,
     reference: reference.value,
     clauses: setting.given.clauses,
-    unit: naming.unit,
-    caseNoun: null,
-    remarks: [...remarks, ...placed(reference.remarks, items)],
+    // Without totals the words behind a count can only say what is counted.
+    unit: null,
+    caseNoun: naming.caseNoun ?? naming.unit,
+    overTime: earlierOf(naming.labels) !== null,
+    remarks: remarks,
   });
 }

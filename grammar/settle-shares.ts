@@ -58,6 +58,7 @@ export function settleShares(parts: SharesParts, setting: Setting): Settled<Ques
     unit: coverages.value.unit,
     // "cases" is what they are called where nobody says.
     caseNoun: /^cases?$/i.test(rows.value.caseNoun ?? '') ? null : rows.value.caseNoun,
+    overTime: false,
     remarks: [...setting.remarks, ...rows.remarks],
   });
 }

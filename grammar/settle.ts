@@ -1,11 +1,13 @@
 import { diagnosis, plainSuggestion } from './diagnosis.ts';
 import { printCanonical } from './print-canonical.ts';
-import { refused } from './quantities.ts';
+import { refused, settled } from './quantities.ts';
 import type { Settled } from './quantities.ts';
 import type { Question, ReadingRemark } from './question.ts';
 import { settleBareCounts, settleCounts, settleStated } from './settle-groups.ts';
+import { changeItems } from './settle-change.ts';
 import { settleClauses } from './settle-clauses.ts';
 import type { Setting } from './setting.ts';
+import { areRates, settleRates } from './settle-rates.ts';
 import { settleShares } from './settle-shares.ts';
 import type { SharesParts } from './settle-shares.ts';
 import type { Item, ItemFigureShare, TreePart } from './tree.ts';
@@ -34,9 +36,20 @@ export function settleLine(
   return settleItems(lists, items, setting);
 }
 
-function settleItems(lists: readonly List[], items: readonly Item[], setting: Setting): Settled<Question> {
+function settleItems(
+  lists: readonly List[],
+  typedItems: readonly Item[],
+  setting: Setting,
+): Settled<Question> {
+  const change = lists.find(({ head }) => head === 'change' || head === 'change-back');
+  if (change !== undefined && lists.length > 1)
+    return refused(diagnosis('change-of-two', change.span, [], ['from 412 to 530']));
+  const changed = change === undefined ? settled(typedItems) : changeItems(change);
+  if (!changed.ok) return changed;
+  const items = changed.value;
   const shares = sharesParts(lists, items, setting);
   if (shares !== null) return settleShares(shares, setting);
+  if (areRates(items)) return settleRates(items, setting);
   const everyCount = items.every(({ figure }) => figure.kind === 'count');
   const everyShare = items.every(({ figure }) => figure.kind === 'share' && figure.total === null);
   if (everyShare) return stated(items, setting);

@@ -88,6 +88,17 @@ export function separatorIn(tokens: readonly IToken[], from: number, to: number)
   return weak;
 }
 
+/** `412 last year 530 this year`: the words between two counts name the time of the first. */
+export const isTimeWords = (between: readonly IToken[]) =>
+  between.length === 2 &&
+  /^(?:last|this|previous) (?:year|month|week|quarter|season|summer|winter)$/i.test(
+    between.map(({ image }) => image).join(' '),
+  );
+
+/** `before 412 after 530`: the word in front of a count names its time. */
+const isTime = ({ start }: Figure, tokens: readonly IToken[]) =>
+  /^(?:before|earlier|previously)$/i.test(tokens[start - 1]?.image ?? '');
+
 /**
  * In a list of bare counts (`no helmet 44, two doses 31`) the last number of an item is its figure, unless only words follow
  * the first (`44 no helmet`).
@@ -97,6 +108,10 @@ export function lastOfEachItem(figures: readonly Figure[], tokens: readonly ITok
     const next = figures[index + 1];
     if (next === undefined) return true;
     const between = tokens.slice(figure.end, next.start);
-    return between.some(({ tokenType }) => separators.has(tokenType));
+    return (
+      isTimeWords(between) ||
+      isTime(figure, tokens) ||
+      between.some(({ tokenType }) => separators.has(tokenType))
+    );
   });
 }

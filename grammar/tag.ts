@@ -1,10 +1,12 @@
 import type { IToken } from 'chevrotain';
+import { changeIn } from './change.ts';
 import { clauseOf } from './clauses.ts';
 import { figureAt } from './figures.ts';
 import { oddFigureIn } from './odd-figures.ts';
 import type { Figure } from './figures.ts';
 import type { Folded } from './fold.ts';
 import { partsOf } from './parts.ts';
+import { writeFigure } from './tag-figure.ts';
 import { TagWriter } from './tag-writer.ts';
 import { withoutStated } from './stated-beside.ts';
 import type { StatedShare } from './stated-beside.ts';
@@ -14,6 +16,7 @@ import {
   endOffset,
   hasColon,
   hasWords,
+  isTimeWords,
   lastIndexOf,
   lastOfEachItem,
   leadStart,
@@ -86,7 +89,18 @@ class TaggingPass extends TagWriter {
       }
     }
     this.fault ??= oddFigureIn(part.tokens, this.folded);
-    const { tokens, stated } = withoutStated(part.tokens);
+    const change = head === null ? changeIn(part.tokens) : null;
+    if (change !== null) {
+      if (change.further !== null) {
+        const { startOffset, image } = change.further;
+        this.refuse('change-of-two', startOffset, startOffset + image.length, [], ['from 412 to 530']);
+      }
+      const from = change.sign.startOffset;
+      const payload =
+        change.order === 'back' ? ({ kind: 'text', text: 'back' } as const) : ({ kind: 'none' } as const);
+      this.push(tags.ChangeHeadTag, from, from + change.sign.image.length, payload);
+    }
+    const { tokens, stated } = withoutStated(change?.tokens ?? part.tokens);
     const { figures, used } = this.#figuresOf(tokens);
     const isHead =
       head === 'coverage' ||
@@ -140,6 +154,7 @@ class TaggingPass extends TagWriter {
       return;
     }
     if (connected) this.#looseTotal(tokens, figures);
+    this.#loneYears(tokens, figures);
     const before =
       hasWords(tokens, leadStart(tokens, start), firstFigure.start) ||
       hasColon(tokens, start, firstFigure.start);
@@ -148,7 +163,7 @@ class TaggingPass extends TagWriter {
     figures.forEach((figure, index) => {
       const previous = figures[index - 1];
       if (previous !== undefined) this.#gap(tokens, previous, figure, before, trailing);
-      this.#figure(tokens, figure);
+      writeFigure(this, tokens, figure);
       const beside = stated.get(offset(tokens, figure.start));
       if (beside !== undefined)
         this.push(tags.StatedTag, beside.from, beside.to, { kind: 'share', share: beside.share });
@@ -211,6 +226,10 @@ class TaggingPass extends TagWriter {
       this.#lead(tokens, split + 1, to);
       return;
     }
+    if (isTimeWords(tokens.slice(from, to))) {
+      this.#after(tokens, previous, to);
+      return;
+    }
     if (hasColon(tokens, from, to) || before) {
       const unit =
         trailing !== '' &&
@@ -247,80 +266,22 @@ class TaggingPass extends TagWriter {
     this.words(tags.AfterTag, tokens, from, to);
   }
 
-  #figure(tokens: readonly IToken[], figure: Figure): void {
-    switch (figure.kind) {
-      case 'bare':
-        this.pushTokens(tags.CasesTag, tokens, figure.start, figure.end, {
-          kind: 'count',
-          count: figure.count,
-        });
-        return;
-      case 'dangling':
-        this.pushTokens(tags.CasesTag, tokens, figure.start, figure.connector, {
-          kind: 'count',
-          count: figure.count,
-        });
-        this.pushTokens(tags.OfTag, tokens, figure.connector, figure.connector + 1);
-        return;
-      case 'counts':
-        this.pushTokens(
-          tags.CasesTag,
-          tokens,
-          figure.start,
-          figure.noun === null ? figure.connector : figure.noun[0],
-          { kind: 'count', count: figure.count },
-        );
-        if (figure.noun !== null) this.words(tags.CaseNounTag, tokens, ...figure.noun);
-        this.pushTokens(
-          tags.OfTag,
-          tokens,
-          figure.connector,
-          figure.connector + 1,
-          figure.eachCountedOnce ? { kind: 'text', text: 'in' } : { kind: 'none' },
-        );
-        this.pushTokens(tags.TotalTag, tokens, ...figure.totalAt, {
-          kind: 'count',
-          count: { written: figure.total, suppressed: false },
-        });
-        return;
-      case 'share-of':
-        this.pushTokens(tags.ShareTag, tokens, figure.start, figure.totalAt[0] - 1, {
-          kind: 'share',
-          share: figure.share,
-        });
-        this.pushTokens(tags.OfTag, tokens, figure.totalAt[0] - 1, figure.totalAt[0]);
-        this.pushTokens(tags.TotalTag, tokens, ...figure.totalAt, {
-          kind: 'count',
-          count: { written: figure.total, suppressed: false },
-        });
-        return;
-      case 'share':
-        this.pushTokens(tags.ShareTag, tokens, figure.start, figure.end, {
-          kind: 'share',
-          share: figure.share,
-        });
-        return;
-      case 'rate':
-        this.refuse(
-          'not-yet-rate',
-          offset(tokens, figure.start),
-          endOffset(tokens, figure.end),
-          [],
-          ['depot A: 14 of 5,200 vs depot B: 9 of 8,800'],
-        );
-        return;
-      case 'year': {
-        const [from, to] = [offset(tokens, figure.start), endOffset(tokens, figure.end)];
-        this.refuse(
-          'year-or-people',
-          from,
-          to,
-          [figure.year],
-          [`${figure.year}: ${figure.count.text} of ... vs ...: ... of ...`],
-        );
-        return;
-      }
-    }
+  /** `412 in 2023 vs 530 in 2024` names two times; one year alone, or twice the same, may as well be that many people. */
+  #loneYears(tokens: readonly IToken[], figures: readonly Figure[]): void {
+    const [first, ...others] = figures.filter((figure) => figure.kind === 'year');
+    if (first === undefined || new Set([first, ...others].map(({ year }) => year)).size > 1) return;
+    const [from, to] = [offset(tokens, first.start), endOffset(tokens, first.end)];
+    const count = first.count.text;
+    this.refuse(
+      'year-or-people',
+      from,
+      to,
+      [first.year],
+      [
+        `${first.year}: ${count} vs ...: ...`,
+        `${count} of ${first.year.replace(/^(\d)/, '$1,')} vs ... of ...`,
+      ],
+    );
   }
 
   /** A total that was cut by a space after its comma: `18 of 1, 204`. */

@@ -14,6 +14,8 @@ export const CasesTag = tag('Cases', 'a count');
 export const CaseNounTag = tag('CaseNoun', 'what a case is called');
 export const OfTag = tag('OfSign', '"of"');
 export const TotalTag = tag('Total', 'a total');
+export const PerSignTag = tag('PerSign', '"per", or "in" before a time or distance');
+export const ExposureTag = tag('Exposure', 'a time, a distance or another exposure');
 export const ShareTag = tag('Share', 'a percentage or a frequency');
 export const ShareNounTag = tag('ShareNoun', 'what a percentage is of');
 export const StatedTag = tag('Stated', 'a percentage beside a count');
@@ -22,6 +24,10 @@ export const SeparatorTag = tag('Separator', 'what stands between two groups');
 export const BreakTag = tag('Break', 'a semicolon, a bar or a new line');
 export const CasesHeadTag = tag('CasesHead', '"cases:"');
 export const CoverageHeadTag = tag('CoverageHead', '"coverage:"');
+export const ChangeHeadTag = tag(
+  'ChangeHead',
+  '"from ... to ...", "up from" or an arrow between two figures',
+);
 export const ClauseTag = tag('Clause', 'a clause');
 
 export const tagTypes: readonly TokenType[] = [
@@ -31,6 +37,8 @@ export const tagTypes: readonly TokenType[] = [
   CaseNounTag,
   OfTag,
   TotalTag,
+  PerSignTag,
+  ExposureTag,
   ShareTag,
   ShareNounTag,
   StatedTag,
@@ -39,6 +47,7 @@ export const tagTypes: readonly TokenType[] = [
   BreakTag,
   CasesHeadTag,
   CoverageHeadTag,
+  ChangeHeadTag,
   ClauseTag,
 ];
 
@@ -75,6 +84,7 @@ export type TagPayload =
   | { readonly kind: 'text'; readonly text: string }
   | { readonly kind: 'count'; readonly count: CountValue }
   | { readonly kind: 'share'; readonly share: ShareValue }
+  | { readonly kind: 'exposure'; readonly number: WrittenNumber; readonly unit: string | null }
   | {
       readonly kind: 'clause';
       readonly name: ClauseName;

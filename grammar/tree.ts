@@ -20,6 +20,14 @@ export interface ItemFigureCount {
   readonly noun: Words | null;
   readonly total: { readonly written: WrittenNumber; readonly span: Span } | null;
   readonly eachCountedOnce: boolean;
+  readonly exposure: ItemExposure | null;
+}
+
+export interface ItemExposure {
+  readonly written: WrittenNumber;
+  readonly unit: string | null;
+  readonly connector: 'in' | 'per';
+  readonly span: Span;
 }
 
 export interface ItemFigureShare {
@@ -42,7 +50,8 @@ export interface Item {
 export type TreePart =
   | {
       readonly kind: 'list';
-      readonly head: 'cases' | 'coverage' | null;
+      /** `change`: from the first figure to the second; `change-back`: the later figure stands first. */
+      readonly head: 'cases' | 'coverage' | 'change' | 'change-back' | null;
       readonly items: readonly Item[];
       readonly span: Span;
     }
@@ -83,7 +92,12 @@ function partOf(node: CstNode, folded: Folded): TreePart {
       span: spanOf(clause, folded),
     };
   }
-  const heads = [...tokens(node, 'CasesHead'), ...tokens(node, 'CoverageHead')];
+  const [change] = tokens(node, 'ChangeHead');
+  const heads = [
+    ...tokens(node, 'CasesHead'),
+    ...tokens(node, 'CoverageHead'),
+    ...(change === undefined ? [] : [change]),
+  ];
   const items = nodes(node, 'list')
     .flatMap((list) => nodes(list, 'item'))
     .map((item) => itemOf(item, folded));
@@ -94,7 +108,11 @@ function partOf(node: CstNode, folded: Folded): TreePart {
         ? 'cases'
         : node.children['CoverageHead'] !== undefined
           ? 'coverage'
-          : null,
+          : change === undefined
+            ? null
+            : payloadOf(change).kind === 'text'
+              ? 'change-back'
+              : 'change',
     items,
     span: joined([...heads.map((head) => spanOf(head, folded)), ...items.map(({ span }) => span)]),
   };
@@ -139,6 +157,9 @@ function figureOf(node: CstNode, folded: Folded): ItemFigureCount | ItemFigureSh
     const payload = payloadOf(cases);
     if (payload.kind !== 'count') throw new Error('a count tag carries no count');
     const [of] = tokens(node, 'OfSign');
+    const [per] = tokens(node, 'PerSign');
+    const [exposureToken] = tokens(node, 'Exposure');
+    const exposure = exposureToken === undefined ? null : payloadOf(exposureToken);
     return {
       kind: 'count',
       count: payload.count,
@@ -146,6 +167,15 @@ function figureOf(node: CstNode, folded: Folded): ItemFigureCount | ItemFigureSh
       noun: wordsOf(tokens(node, 'CaseNoun')[0], folded),
       total,
       eachCountedOnce: of !== undefined && payloadOf(of).kind === 'text',
+      exposure:
+        exposureToken === undefined || exposure?.kind !== 'exposure'
+          ? null
+          : {
+              written: exposure.number,
+              unit: exposure.unit,
+              connector: per !== undefined && payloadOf(per).kind === 'text' ? 'in' : 'per',
+              span: spanOf(exposureToken, folded),
+            },
     };
   }
   if (share === undefined) throw new Error('a figure without a number');

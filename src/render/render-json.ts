@@ -17,7 +17,7 @@ export function renderJson(line: string, report: Report): string {
     schema,
     line,
     question: {
-      kind: question.kind,
+      kind: question.overTime ? 'change' : question.kind,
       canonical: printCanonical(question),
       unit: question.unit,
       clauses: clausesOf(question),
@@ -82,6 +82,14 @@ function groupsOf(question: Question) {
         label: plainLabel(question, index),
         share: share.value,
       }));
+    case 'rates':
+      return question.groups.map(({ cases, exposure }, index) => ({
+        label: plainLabel(question, index),
+        cases: cases.value,
+        exposure: exposure.value,
+        ...rangeOf('cases', cases),
+        ...rangeOf('exposure', exposure),
+      }));
     case 'bare-counts':
       return question.groups.map(({ cases }, index) => ({
         label: plainLabel(question, index),
@@ -137,7 +145,7 @@ function readingOf(question: Question, reading: Reading, formula: string) {
         : { low: interval.low, high: interval.high, level: interval.level, method: methodId(reading) },
     whyNoInterval: whyNoInterval === null ? null : whyText(whyNoInterval),
     roundingRange,
-    ...(per === null ? {} : { per }),
+    ...(per === null || id !== 'extra-cases' ? {} : { per }),
     ...(ranges === null ? {} : { ranges }),
     ...(id === 'hidden-cause-strength' ? { atLimit } : {}),
     ...(exactBeside === null ? {} : { exact: { low: exactBeside.low, high: exactBeside.high } }),

@@ -1,4 +1,10 @@
-import type { CountsQuestion, Question, SharesQuestion } from '../../grammar/question.ts';
+import type {
+  CountsQuestion,
+  Quantity,
+  Question,
+  RatesQuestion,
+  SharesQuestion,
+} from '../../grammar/question.ts';
 import type { Reading } from './reading.ts';
 
 /**
@@ -18,7 +24,10 @@ export const cautionIds = [
   'small-risk',
   'odds-ratio-far',
   'coverage-as-given',
+  'divisor-may-have-changed',
+  'events-singly',
   'as-stated',
+  'picked-starting-point',
   'one-group',
   'groups-may-differ',
 ] as const;
@@ -40,10 +49,36 @@ function applying(question: Question, readings: readonly Reading[]): readonly Ca
     case 'shares':
       return sharesCautions(question);
     case 'stated':
-      return ['as-stated', 'groups-may-differ', ...smallRisk(readings)];
+      return [
+        'as-stated',
+        ...(question.overTime ? (['picked-starting-point'] as const) : []),
+        'groups-may-differ',
+        ...smallRisk(readings),
+      ];
+    case 'rates':
+      return ratesCautions(question);
     case 'bare-counts':
+      if (question.overTime)
+        return ['divisor-may-have-changed', ...fewOf(question.groups), 'picked-starting-point'];
       return ['totals-missing', ...(question.groups.length > 2 ? (['picked-comparison'] as const) : [])];
   }
+}
+
+/** Fewer than five in a group. */
+const fewOf = (groups: readonly { readonly cases: Quantity }[]): readonly CautionId[] =>
+  groups.some(({ cases }) => cases.high < 5) ? ['few-cases'] : [];
+
+function ratesCautions({ groups, overTime }: RatesQuestion): readonly CautionId[] {
+  const stated = groups.some(({ asStated }) => asStated);
+  return [
+    ...(stated ? (['as-stated'] as const) : []),
+    ...(groups.every(({ cases }) => cases.value === 0) ? (['no-cases'] as const) : []),
+    ...(groups.length > 2 ? (['picked-comparison'] as const) : []),
+    ...(stated ? [] : fewOf(groups)),
+    ...(stated ? [] : (['events-singly'] as const)),
+    ...(overTime ? (['picked-starting-point'] as const) : []),
+    groups.length === 1 ? 'one-group' : 'groups-may-differ',
+  ];
 }
 
 function countsCautions(question: CountsQuestion, readings: readonly Reading[]): readonly CautionId[] {
@@ -61,6 +96,7 @@ function countsCautions(question: CountsQuestion, readings: readonly Reading[]):
       : []),
     ...smallRisk(readings),
     ...(oddsRatioFar(readings) ? (['odds-ratio-far'] as const) : []),
+    ...(question.overTime ? (['picked-starting-point'] as const) : []),
     groups.length === 1 ? 'one-group' : 'groups-may-differ',
   ];
 }

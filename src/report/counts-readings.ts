@@ -161,9 +161,12 @@ function extraCases(
   reference: CountsRow,
   options: CountsOptions,
 ): Reading {
-  const per =
-    options.per ??
-    perFor([group.cases.value / group.total.value, reference.cases.value / reference.total.value]);
+  const risks = [group, reference].map(({ cases, total }) => cases.value / total.value);
+  return scaledCases(difference, options.per ?? perFor(risks));
+}
+
+/** The difference as extra cases per `per` people, or per so much exposure. */
+export function scaledCases(difference: Reading, per: number): Reading {
   const scale = (share: number) => share * per;
   return {
     ...difference,
@@ -183,7 +186,8 @@ export function perFor(risks: readonly number[]): number {
   return per;
 }
 
-function oneExtra(difference: Reading): Reading[] {
+/** One extra case for every K, in the form that stays honest when the interval spans zero (Altman 1998). */
+export function oneExtra(difference: Reading): Reading[] {
   if (difference.estimate === null || difference.estimate === 0) return [];
   const { interval, ranges } = oneExtraPer(difference.estimate, difference.interval);
   return [

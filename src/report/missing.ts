@@ -10,6 +10,9 @@ export type MissingId =
   | 'everybody' // rows chosen by outcome: how many in all, ill and well, in each group
   | 'same-people' // shares: do cases and coverage belong to the same people, place and time
   | 'same-time' // counts: were the groups watched equally long, and could one be counted twice
+  | 'counted-twice' // rates: did events come singly, or several at once or to the same people
+  | 'divisor-over-time' // a change of counts: did the number that it is out of change too
+  | 'equally-long' // a change of counts: how long is each of the two times
   | 'who-is-counted';
 
 /** What to ask whoever gave the figure, most useful first. */
@@ -28,7 +31,15 @@ export function missingFor(question: Question): readonly MissingId[] {
       ];
     case 'stated':
       return ['counts-behind', 'same-time', ...who];
+    case 'rates':
+      return [
+        ...(question.groups.length === 1 ? (['second-group'] as const) : []),
+        ...(question.groups.some(({ asStated }) => asStated) ? (['counts-behind'] as const) : []),
+        'counted-twice',
+        ...who,
+      ];
     case 'bare-counts':
+      if (question.overTime) return ['divisor-over-time', 'equally-long', ...who];
       return ['totals', 'same-time', ...who];
   }
 }

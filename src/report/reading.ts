@@ -18,6 +18,9 @@ export type ReadingId =
   | 'attributable-fraction'
   | 'prevented-fraction'
   | 'population-attributable-fraction'
+  | 'rate'
+  | 'rate-ratio'
+  | 'rate-difference'
   | 'count-ratio'
   | 'percentage-ratio'
   | 'percentage-difference'
@@ -30,7 +33,13 @@ export type IntervalMethod =
   | 'miettinen-nurminen'
   | 'conditional-exact'
   | 'wilson-share-odds'
-  | 'clopper-pearson-share-odds';
+  | 'clopper-pearson-share-odds'
+  | 'rate-score'
+  | 'garwood'
+  | 'rate-ratio-score'
+  | 'exact-rate-ratio'
+  | 'rate-difference-score'
+  | 'equal-times-score';
 
 /** Why a reading has no interval. */
 export type NoInterval =
@@ -68,7 +77,7 @@ export interface Reading {
   readonly whyNoInterval: NoInterval | null;
   /** What the rounding of the inputs alone allows; `null` where nothing was rounded. */
   readonly roundingRange: Interval | null;
-  /** The M of `extra-cases`, else `null`. */
+  /** The M of `extra-cases`; for rates and their differences, the exposure that they are shown for; else `null`. */
   readonly per: number | null;
   readonly ranges: OneExtraRanges | null;
   /** `hidden-cause-strength` at the limit nearer to no difference. */

@@ -2,6 +2,7 @@ import type { Question } from '../../grammar/question.ts';
 import { bareCountsReport } from './bare-counts-report.ts';
 import { countsReport } from './counts-report.ts';
 import type { Report } from './report.ts';
+import { ratesReport } from './rates-report.ts';
 import { sharesReport } from './shares-report.ts';
 import { statedReport } from './stated-report.ts';
 
@@ -14,6 +15,8 @@ export function reportOf(question: Question): Report {
       return sharesReport(question);
     case 'stated':
       return statedReport(question);
+    case 'rates':
+      return ratesReport(question);
     case 'bare-counts':
       return bareCountsReport(question);
   }

@@ -1,8 +1,8 @@
 import type { StatedQuestion } from '../../grammar/question.ts';
 import { cautionsFor } from './cautions.ts';
 import { rangeOverCorners } from './corners.ts';
-import { perFor } from './counts-readings.ts';
-import { estimateOf, mapInterval } from './estimates.ts';
+import { perFor, scaledCases } from './counts-readings.ts';
+import { estimateOf } from './estimates.ts';
 import { missingFor } from './missing.ts';
 import { relativeChange } from './ratio-followers.ts';
 import { reading } from './reading.ts';
@@ -56,17 +56,5 @@ function pair({ groups, reference, clauses }: StatedQuestion, of: number): Readi
     roundingRange: rangeOverCorners(shares, ([p = NaN, q = NaN]) => p - q),
   });
   const per = clauses.per ?? perFor(shares.map(({ value }) => value));
-  const scale = (share: number) => share * per;
-  return [
-    ratio,
-    relativeChange(ratio),
-    difference,
-    {
-      ...difference,
-      id: 'extra-cases',
-      estimate: difference.estimate === null ? null : scale(difference.estimate),
-      roundingRange: difference.roundingRange && mapInterval(difference.roundingRange, scale),
-      per,
-    },
-  ];
+  return [ratio, relativeChange(ratio), difference, scaledCases(difference, per)];
 }

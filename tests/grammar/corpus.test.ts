@@ -1,23 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { printCanonical } from '../../grammar/print-canonical.ts';
-import type { LineReading, Question } from '../../grammar/question.ts';
-import { readLine } from '../../grammar/read-line.ts';
-import { commandLineLimits } from '../../src/answer/answer-line.ts';
-
-const read = (line: string): LineReading => readLine(line, commandLineLimits);
-function question(line: string): Question {
-  const reading = read(line);
-  if (reading.kind === 'question') return reading.question;
-  throw new Error(
-    `${line}: ${reading.kind === 'diagnosis' ? `${reading.diagnosis.id}: ${reading.diagnosis.message}` : reading.kind}`,
-  );
-}
-
-/** A question without places and remarks, for comparing two spellings of one figure. */
-const bare = (value: Question): unknown =>
-  JSON.parse(
-    JSON.stringify(value, (key, each: unknown) => (key === 'span' || key === 'remarks' ? undefined : each)),
-  );
+import { bare, questionFor as question, read } from '../support/question-for.ts';
 
 const shifts = 'night shift: 18 of 1,204 vs day shift: 9 of 2,377';
 const plain = '18 of 1,204 vs 9 of 2,377';

@@ -3,22 +3,11 @@ import { describe, expect, it } from 'vitest';
 import { fineTokens, fineTokensOf } from '../../grammar/tokens.ts';
 import { LineParser } from '../../grammar/parser.ts';
 import { printCanonical } from '../../grammar/print-canonical.ts';
-import type { Question } from '../../grammar/question.ts';
 import { readLine } from '../../grammar/read-line.ts';
 import { commandLineLimits } from '../../src/answer/answer-line.ts';
 import { reportOf } from '../../src/report/report-of.ts';
 import { scenarios } from '../scenarios/scenarios.ts';
-
-const bare = (value: Question): unknown =>
-  JSON.parse(
-    JSON.stringify(value, (key, each: unknown) => (key === 'span' || key === 'remarks' ? undefined : each)),
-  );
-
-function question(line: string): Question {
-  const reading = readLine(line, commandLineLimits);
-  if (reading.kind === 'question') return reading.question;
-  throw new Error(`${line}: ${JSON.stringify(reading)}`);
-}
+import { bare, questionFor as question } from '../support/question-for.ts';
 
 const words = [
   'night',
@@ -105,12 +94,55 @@ const bareLine = fc
     [labels.map((label, at) => `"${label}": ${grouped(cases[at] ?? 0)}`).join(' vs '), ...tail].join('; '),
   );
 
+const ratesLine = fc
+  .tuple(
+    names,
+    fc.array(fc.tuple(counts, totals, fc.constantFrom('in', 'per')), { minLength: 5, maxLength: 5 }),
+    fc.constantFrom('bus-days', 'hours', 'km', 'person-years'),
+    clauses,
+  )
+  .map(([labels, figures, unit, tail]) =>
+    [
+      labels
+        .map((label, at) => {
+          const [cases, exposure, sign] = figures[at] ?? [0, 900, 'in'];
+          return `"${label}": ${grouped(cases)} ${sign} ${grouped(exposure)} ${unit}`;
+        })
+        .join(' vs '),
+      ...tail,
+    ].join('; '),
+  );
+const changeLine = fc
+  .tuple(counts, counts, totals, totals, fc.constantFrom('bare', 'counts', 'percentages', 'lengths'), clauses)
+  .map(([one, other, first, second, form, tail]) => {
+    const figure = (count: number, total: number) =>
+      ({
+        bare: grouped(count + 3_000),
+        counts: `${count} of ${grouped(total)}`,
+        percentages: `${(count / 10).toFixed(1)}%`,
+        lengths: `${count} in ${grouped(total)} days`,
+      })[form];
+    return [`from ${figure(one, first)} to ${figure(other, second)}`, ...tail].join('; ');
+  });
+
 describe('generated questions', () => {
+  it('of a change survive printing and reading', () => {
+    fc.assert(
+      fc.property(changeLine, (line) => {
+        const first = question(line);
+        expect(first.overTime).toBe(true);
+        expect(bare(question(printCanonical(first)))).toEqual(bare(first));
+      }),
+      { numRuns: 1_500 },
+    );
+  });
+
   it.each([
     ['counts', countsLine],
     ['shares', sharesLine],
     ['stated', statedLine],
     ['bare-counts', bareLine],
+    ['rates', ratesLine],
   ] as const)('of the kind %s survive printing and reading', (kind, lines) => {
     fc.assert(
       fc.property(lines, (line) => {

@@ -1,6 +1,5 @@
-import { readingsOf } from '../../report/report.ts';
+import { readingsOf, shownDirection } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
-import { shownDirection } from './headline.ts';
 import { capital, cases, Label, label, one } from './labels.ts';
 import { percent, ratio } from './numbers.ts';
 import { quantityText } from './read-as.ts';
@@ -18,8 +17,10 @@ export function avoidFor(report: Report): readonly Avoid[] {
     case 'shares':
       return [shareAsRisk(report), ...difference(report), causal(report)];
     case 'stated':
+    case 'rates':
       return [...difference(report), causal(report)];
     case 'bare-counts':
+      if (question.overTime) return [countsAsRisk(report), ...difference(report), causal(report)];
       return [
         {
           because: 'Without the totals nobody can tell how often it happened.',
@@ -49,6 +50,13 @@ function countsAlone(report: Report): Avoid[] {
   ];
 }
 
+function countsAsRisk({ question }: Report): Avoid {
+  return {
+    because: 'A count can change because more are counted; the risk need not have changed.',
+    text: `The risk of ${cases(question)} has changed.`,
+  };
+}
+
 function shareAsRisk(report: Report): Avoid {
   const { question } = report;
   const of = readingsOf(report, 'risk-ratio')[0]?.of ?? 0;
@@ -70,7 +78,9 @@ function difference(report: Report): Avoid[] {
       { because: 'These figures are too few to tell.', text: 'There is no difference.' },
       {
         because: 'The interval includes no difference.',
-        text: `${Label(question, reading.of)} is ${reading.estimate > 1 ? 'higher' : 'lower'}.`,
+        text: question.overTime
+          ? `It has ${reading.estimate > 1 ? 'risen' : 'fallen'}.`
+          : `${Label(question, reading.of)} is ${reading.estimate > 1 ? 'higher' : 'lower'}.`,
       },
     ];
   }
@@ -94,6 +104,11 @@ function oddsAsRisk(report: Report): Avoid {
 
 function causal(report: Report): Avoid {
   const of = readingsOf(report, report.headline)[0]?.of ?? 0;
+  if (report.question.overTime)
+    return {
+      because: 'The figures compare two times; they do not say why they differ.',
+      text: 'What came in between is the cause.',
+    };
   return {
     because: 'The figures compare groups; they do not say why the groups differ.',
     text: `${Label(report.question, of)} is the cause.`,

@@ -57,10 +57,24 @@ export const cautionCatalogue = {
     source: 'Deeks et al. 2011 (coverage error in the screening method); common practice',
     text: coverageAsGiven,
   },
+  'divisor-may-have-changed': {
+    source: 'common practice',
+    text: () =>
+      'A count also grows when more are counted: without the totals nothing follows about the risk. Both times are taken as equally long.',
+  },
+  'events-singly': {
+    source: 'Glynn & Buring 1996, BMJ 312:364',
+    text: () =>
+      'The limits take cases as coming one by one; several at once, or the same people again, make them too narrow.',
+  },
+  'picked-starting-point': {
+    source: 'Barnett et al. 2005, Int. J. Epidemiol. 34:215',
+    text: () => 'A first figure that was picked because it stood out falls back by itself.',
+  },
   'as-stated': {
     source: 'common practice',
     text: () =>
-      'Percentages alone do not show how many stand behind them: a small number may have moved them by chance.',
+      'Without counts nobody sees how many stand behind a figure: a few may have moved it by chance.',
   },
   'one-group': {
     source: 'common practice',

@@ -3,7 +3,7 @@ import type { Report } from '../../report/report.ts';
 import { limitsText } from './interval-text.ts';
 import { plainLabel } from './labels.ts';
 import { percent, ratio } from './numbers.ts';
-import { quantityText } from './read-as.ts';
+import { quantityText, rateText } from './read-as.ts';
 
 /** With three or more groups: what was counted in each, and its ratio against the reference, the header first. */
 export function tableFor(report: Report): readonly (readonly string[])[] | null {
@@ -46,6 +46,8 @@ function given({ question }: Report, index: number): string {
     }
     case 'stated':
       return question.groups[index]?.share.text ?? '';
+    case 'rates':
+      return rateText(question, index);
     case 'bare-counts': {
       const group = question.groups[index];
       return group === undefined ? '' : quantityText(group.cases);

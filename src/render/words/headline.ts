@@ -1,10 +1,13 @@
+import type { Question } from '../../../grammar/question.ts';
 import type { Reading } from '../../report/reading.ts';
-import { directionOf, readingsOf } from '../../report/report.ts';
-import type { Direction, Report } from '../../report/report.ts';
-import { limitsText } from './interval-text.ts';
+import { readingsOf, shownDirection } from '../../report/report.ts';
+import type { Report } from '../../report/report.ts';
+import { changeText, countedMore, estimateText, levelText, limitsText } from './interval-text.ts';
 import { cases, Label, label, perOne, plainLabel, capital } from './labels.ts';
 import { percent, ratio } from './numbers.ts';
 import { compared, fits, intervalNote, neitherShown } from './ratio-words.ts';
+import { manyPer, perExposure } from './rate-words.ts';
+import { quantityText } from './read-as.ts';
 
 const within = 110;
 
@@ -18,14 +21,12 @@ export function headlineFor(report: Report): string {
   return ratios.length > 1 ? manyGroups(report, ratios) : twoGroups(report, first);
 }
 
-/** Which way the figures point. With `exact` a ratio of counts has no interval of its own; the odds ratio's exact one then decides. */
-export function shownDirection(report: Report, ratioReading: Reading): Direction {
-  if (ratioReading.whyNoInterval !== 'no-exact-form') return directionOf(ratioReading);
-  const odds = readingsOf(report, 'odds-ratio').find(({ of }) => of === ratioReading.of);
-  return directionOf(odds ?? ratioReading);
-}
-
 function oneGroup(report: Report): string {
+  if (report.question.kind === 'rates') {
+    const [rate] = readingsOf(report, 'rate');
+    if (rate === undefined) throw new Error('a report of one rate has no rate');
+    return `${Label(report.question, 0)}: ${estimateText(rate, 'short') ?? ''} ${perExposure(report.question, rate.per ?? 1)} (${intervalNote(rate)}).`;
+  }
   const [risk] = readingsOf(report, 'risk');
   if (risk?.estimate == null) throw new Error('a report of one group has no risk');
   return `${Label(report.question, 0)}: ${percent(risk.estimate, 'short')} (${intervalNote(risk)}).`;
@@ -47,7 +48,15 @@ function twoGroups(report: Report, reading: Reading): string {
   }
   if (reading.unbounded || reading.estimate === null) return withoutValue(report, reading, note);
   switch (question.kind) {
+    case 'rates':
+      return shorten(
+        question.overTime
+          ? `${capital(group)}: ${compared(reading, manyPer(question), reference)}.`
+          : `${capital(perOne(question))}, ${group} had ${compared(reading, `many ${cases(question)}`, reference)}.`,
+      );
     case 'counts':
+      if (question.overTime)
+        return shorten(`${capital(group)}: ${cases(question)} ${compared(reading, 'often', reference)}.`);
       return shorten(`${capital(group)} had ${cases(question)} ${compared(reading, 'often', reference)}.`);
     case 'shares':
       return shorten(
@@ -56,8 +65,29 @@ function twoGroups(report: Report, reading: Reading): string {
     case 'stated':
       return `${capital(group)}: ${compared(reading, 'often', reference)}.`;
     case 'bare-counts':
+      if (question.overTime) return changed(report, reading);
       return `${capital(group)} counts ${compared(reading, 'many', reference)}. Out of how many?`;
   }
+}
+
+/** "After: 530 against 412 before, 29% more (95% interval 13% to 46% more)." */
+function changed({ question, readings }: Report, reading: Reading): string {
+  if (question.kind !== 'bare-counts') return '';
+  const change = readings.find(({ id, of }) => id === 'relative-change' && of === reading.of);
+  const [later, earlier] = [question.groups[reading.of], question.groups[reading.against ?? 0]];
+  if (change?.estimate == null || later === undefined || earlier === undefined) return '';
+  const limits =
+    change.interval === null
+      ? ''
+      : ` (${levelText(change.interval.level)} interval ${countedMore(limitsText(change, change.interval, 'full'))})`;
+  const noun = question.caseNoun;
+  return `${Label(question, reading.of)}: ${quantityText(later.cases)}${noun === null ? '' : ` ${noun}`} against ${quantityText(earlier.cases)} ${earlierTime(question, reading.against ?? 0)}, ${countedMore(changeText(change.estimate, 'full'))}${limits}.`;
+}
+
+/** "before", "in 2023", "last year". */
+function earlierTime(question: Question, index: number): string {
+  const text = label(question, index);
+  return /^(?:19|20)\d\d$/.test(text) ? `in ${text}` : text;
 }
 
 function withoutValue(report: Report, reading: Reading, note: string): string {
@@ -81,7 +111,9 @@ function manyGroups(report: Report, ratios: readonly Reading[]): string {
     return `${plainLabel(question, reading.of)} ${value}${limits}`;
   });
   const name =
-    { 'count-ratio': 'Counts', 'percentage-ratio': 'Ratio' }[report.headline as string] ?? 'Risk ratio';
+    { 'count-ratio': 'Counts', 'percentage-ratio': 'Ratio', 'rate-ratio': 'Rate ratio' }[
+      report.headline as string
+    ] ?? 'Risk ratio';
   const line = `${name} against ${reference}: ${each.join(', ')}.`;
   return line.length <= within
     ? line

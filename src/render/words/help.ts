@@ -16,7 +16,7 @@ export const helpTopics = {
     title:
       'Type the figure as you were given it. The answer comes in the thread, with every fair reading of it.',
     lines: [
-      'In a thread, write @Divisor and the line. "help counts", "help shares", "help stated" and "help bare-counts" say more.',
+      'In a thread, write @Divisor and the line. "help counts", and in the same way shares, rates, change, stated and bare-counts, say more.',
       clauses,
     ],
     examples: [
@@ -58,6 +58,30 @@ export const helpTopics = {
       '4.2% vs 2.6%',
       'night: 1 in 250 vs day: 1 in 400',
       'new ferry: 3 per 1,000 vs old ferry: 2 per 1,000',
+    ],
+  },
+  rates: {
+    title: 'Events over time, distance or another exposure.',
+    lines: [
+      'Both groups in one unit. Over a round base (3 per 1,000 hours) it is a stated rate and has no interval.',
+      clauses,
+    ],
+    examples: [
+      'depot A: 14 in 5,200 bus-days vs depot B: 9 in 8,800 bus-days',
+      'old pump 14/5200h new pump 9/8800h',
+      'east line: 3 per 1,000 crossings per year vs west line: 2 per 1,000 crossings per year',
+    ],
+  },
+  change: {
+    title: 'The same thing at two times: the earlier is what the later is compared with.',
+    lines: ['Counts, counts of totals, percentages, or counts with the length of each time.', clauses],
+    examples: [
+      'delays from 412 to 530',
+      '530, up from 412',
+      'from 412 in 31 days to 530 in 28 days',
+      'from 41 of 1,000 to 52 of 1,100',
+      'from 4.4% to 5.2%',
+      '412 last year 530 this year',
     ],
   },
   'bare-counts': {

@@ -51,6 +51,9 @@ function isShare({ id }: Reading): boolean {
   }
 }
 
+/** "29% higher" of what is counted is "29% more". */
+export const countedMore = (text: string) => text.replaceAll('higher', 'more').replaceAll('lower', 'fewer');
+
 function writer(reading: Reading, digits: Digits): (value: number) => string {
   if (isShare(reading)) return (value) => percent(value, digits);
   switch (reading.id) {
@@ -61,7 +64,13 @@ function writer(reading: Reading, digits: Digits): (value: number) => string {
     case 'odds-ratio':
     case 'count-ratio':
     case 'percentage-ratio':
+    case 'rate-ratio':
       return (value) => ratio(value, digits);
+    case 'rate':
+    case 'rate-difference': {
+      const per = reading.per ?? 1;
+      return (value) => amount(value * per, digits);
+    }
     default:
       return (value) => amount(value, digits);
   }

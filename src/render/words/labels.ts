@@ -33,8 +33,11 @@ const wantsQuotes =
   /^(?:no|not|non|never|without|with|under|over|up|less|more|at|above|below|in|on|from|to|of|by|yes|before|after|[^A-Za-z\u00c0-\uffff])/i;
 
 function quoted(question: Question): boolean {
+  // "As before", "after" and "2023" are words of time here, not names.
+  const time = question.overTime ? /^(?:before|after|(?:19|20)\d\d)$/i : null;
   return question.groups.some(
-    ({ label }) => label !== null && (wantsQuotes.test(label) || /[:;,."()]/.test(label)),
+    ({ label }) =>
+      label !== null && time?.test(label) !== true && (wantsQuotes.test(label) || /[:;,."()]/.test(label)),
   );
 }
 

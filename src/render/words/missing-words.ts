@@ -23,12 +23,19 @@ export function missingText(question: Question, id: MissingId): string {
       return `Are the ${cases(question)} and the coverage about the same people, place and time?`;
     case 'same-time':
       return `Were the groups watched for the same time, and could one be counted twice?`;
+    case 'counted-twice':
+      return `Could one be counted twice, or several ${cases(question)} come at once?`;
+    case 'divisor-over-time':
+      return 'How many were counted in all, at each of the two times? With that a risk can be given.';
+    case 'equally-long':
+      return 'How long was each of the two times?';
     case 'who-is-counted':
       return 'Who exactly is counted, where, and over what time?';
   }
 }
 
 function shares(question: Question): string {
+  if (question.kind === 'rates') return 'the rates';
   if (question.kind !== 'stated') return 'the percentages';
   return question.groups.map(({ share }) => share.text).join(' and ');
 }
@@ -42,9 +49,11 @@ export function lackingText({ question, missing }: Report): string | null {
     case 'case-number':
       return `No interval without the number of ${casesAsTyped(question)}.`;
     case 'counts-behind':
-      return 'No interval without the counts behind the percentages.';
+      return `No interval without the counts behind the ${question.kind === 'rates' ? 'rates' : 'percentages'}.`;
     case 'totals':
       return 'No ratio of risks without the totals.';
+    case 'divisor-over-time':
+      return 'No risk without the totals of both times.';
     case 'second-group':
       return 'No comparison without a second group.';
     case 'everybody':

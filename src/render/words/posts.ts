@@ -1,13 +1,16 @@
 import type { CountsQuestion, SharesQuestion } from '../../../grammar/question.ts';
 import type { Reading, ReadingId } from '../../report/reading.ts';
-import { readingsOf } from '../../report/report.ts';
+import { readingsOf, shownDirection } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
-import { shownDirection } from './headline.ts';
-import { changeText, limitsText } from './interval-text.ts';
+import { changePosts } from './change-posts.ts';
+import { changeText, countedMore, limitsText } from './interval-text.ts';
 import { capital, cases, casesAsTyped, Label, label, perOne, population } from './labels.ts';
 import { amount, beside, fixed, percent, points, ratio } from './numbers.ts';
 import { compared, comparison, intervalNote } from './ratio-words.ts';
-import { quantityText } from './read-as.ts';
+import { noneShown } from './none-shown.ts';
+import { manyPer } from './rate-words.ts';
+import { ratesPosts } from './rates-posts.ts';
+import { quantityText, rateText } from './read-as.ts';
 import type { Post } from './telling.ts';
 
 const postLength = 280;
@@ -24,8 +27,10 @@ export function postsFor(report: Report): readonly Post[] {
       return sharesPosts(report, question);
     case 'stated':
       return statedPosts(report);
+    case 'rates':
+      return ratesPosts(report, question);
     case 'bare-counts':
-      return bareCountsPosts(report);
+      return question.overTime ? changePosts(report, question) : bareCountsPosts(report);
   }
 }
 
@@ -41,7 +46,11 @@ export function shortPost(report: Report): string | null {
   if (shownDirection(report, reading) === 'none-shown') return null;
   const { words, joiner, figure } = comparison(
     reading.estimate,
-    question.kind === 'shares' ? `many ${cases(question)}` : 'often',
+    question.kind === 'shares'
+      ? `many ${cases(question)}`
+      : question.kind === 'rates'
+        ? manyPer(question)
+        : 'often',
   );
   const per = question.kind === 'shares' ? ` ${perOne(question)}` : '';
   const core = `${Label(question, reading.of)}: ${words}${per} ${joiner} ${label(question, reading.against)}`;
@@ -53,10 +62,10 @@ export function shortPost(report: Report): string | null {
 
 /** "Night shift: 18 of 1,204 shifts. Day shift: 9 of 2,377." */
 function denominators(report: Report, question: CountsQuestion): string {
-  const order = [...question.groups.keys()].sort(
+  const last = [...question.groups.keys()].sort(
     (a, b) => Number(a === question.reference) - Number(b === question.reference),
   );
-  return order
+  return (question.overTime ? last.toReversed() : last)
     .map((index, place) => {
       const group = question.groups[index];
       if (group === undefined) return '';
@@ -116,9 +125,6 @@ function oddsPost(report: Report, rows: string): Post[] {
   return [{ reading: 'odds-ratio', text }];
 }
 
-const noneShown = (reading: Reading, rows: string) =>
-  `${rows} These figures do not show a difference, nor that there is none (${intervalNote(reading).replace('interval', 'interval of the ratio')}).`;
-
 function changePost(report: Report, rows: string): Post[] {
   const [change] = readingsOf(report, 'relative-change');
   if (change?.estimate == null || change.interval === null) return [];
@@ -134,12 +140,11 @@ function changePost(report: Report, rows: string): Post[] {
 function shareChangePost(report: Report, rows: string, reference: string): Post[] {
   const [change] = readingsOf(report, 'relative-change');
   if (change?.estimate == null || change.interval === null) return [];
-  const counted = (text: string) => text.replaceAll('higher', 'more').replaceAll('lower', 'fewer');
-  const more = counted(changeText(change.estimate, 'short'));
+  const more = countedMore(changeText(change.estimate, 'short'));
   return [
     {
       reading: 'relative-change',
-      text: `${rows} ${capital(perOne(report.question))}, that is ${more} ${cases(report.question)} than ${reference} (${counted(intervalNote(change))}).`,
+      text: `${rows} ${capital(perOne(report.question))}, that is ${more} ${cases(report.question)} than ${reference} (${countedMore(intervalNote(change))}).`,
     },
   ];
 }
@@ -256,7 +261,8 @@ function statedPosts(report: Report): Post[] {
   const [difference] = readingsOf(report, 'percentage-difference');
   const { question } = report;
   if (question.kind !== 'stated' || reading?.against == null) return [];
-  const rows = [reading.of, reading.against]
+  const order = question.overTime ? [reading.against, reading.of] : [reading.of, reading.against];
+  const rows = order
     .map((index) => `${Label(question, index)}: ${question.groups[index]?.share.text ?? ''}.`)
     .join(' ');
   const frequency = question.groups.every(({ form }) => form === 'frequency');
@@ -298,7 +304,11 @@ function manyGroups(report: Report): Post[] {
         ? pairDenominators(question, report, reading)
         : question.kind === 'shares'
           ? madeUp(report, question, reading.of)
-          : '';
+          : question.kind === 'rates'
+            ? [reading.of, reading.against]
+                .map((index) => `${Label(question, index)}: ${rateText(question, index)}.`)
+                .join(' ')
+            : '';
     if (rows === '') return [];
     if (shownDirection(report, reading) === 'none-shown')
       return [{ reading: reading.id, text: noneShown(reading, rows) }];

@@ -53,6 +53,7 @@ export interface Comparison {
 /** `manner` is "often" or "many cases". A ratio below 1 is said in words, with its figure to follow. */
 export function comparison(value: number, manner: string): Comparison {
   const figure = `${ratio(value, 'short')} times`;
+  if (value === 0) return { words: `0 times as ${manner}`, joiner: 'as', figure: null };
   if (value === 1) return { words: `exactly as ${manner}`, joiner: 'as', figure: null };
   if (value > 1) return { words: `${figure} as ${manner}`, joiner: 'as', figure: null };
   const words = below(value);

@@ -1,6 +1,6 @@
-import type { Quantity, Question, ReadingRemark } from '../../../grammar/question.ts';
+import type { Quantity, Question, RatesQuestion, ReadingRemark } from '../../../grammar/question.ts';
 import type { Report } from '../../report/report.ts';
-import { casesAsTyped, plainLabel, population } from './labels.ts';
+import { casesAsTyped, one, plainLabel, population } from './labels.ts';
 import { count, percent } from './numbers.ts';
 
 /** A typed number as it was read: counts grouped, percentages and frequencies in their own spelling. */
@@ -13,7 +13,9 @@ export function quantityText(quantity: Quantity): string {
 /** The second line of every answer: how the line was read. */
 export function readAs(question: Question): string {
   const named = (index: number) => plainLabel(question, index);
-  const against = question.groups.length > 1 ? `, compared with ${named(question.reference)}` : '';
+  const reference = named(question.reference);
+  const earlier = question.overTime && reference !== 'before' ? 'the earlier, ' : '';
+  const against = question.groups.length > 1 ? `, compared with ${earlier}${reference}` : '';
   switch (question.kind) {
     case 'counts': {
       const unit = question.unit === null ? '' : ` ${question.unit}`;
@@ -37,9 +39,27 @@ export function readAs(question: Question): string {
     }
     case 'stated':
       return `Read as: ${question.groups.map(({ share }, index) => `${named(index)} ${share.text}`).join('; ')}, as stated, without counts${against}.`;
-    case 'bare-counts':
-      return `Read as: ${question.groups.map(({ cases }, index) => `${named(index)} ${quantityText(cases)}`).join('; ')}, counts without totals${against}.`;
+    case 'rates': {
+      const stated = question.groups.some(({ asStated }) => asStated) ? ', as stated, without counts' : '';
+      return `Read as: ${question.groups.map((_, index) => `${named(index)} ${rateText(question, index)}`).join('; ')}${stated}${against}.`;
+    }
+    case 'bare-counts': {
+      const what = question.overTime ? 'counts at two times' : 'counts without totals';
+      return `Read as: ${question.groups.map(({ cases }, index) => `${named(index)} ${quantityText(cases)}`).join('; ')}, ${what}${against}.`;
+    }
   }
+}
+
+/** "14 in 5,200 bus-days", "3 per 1,000 bus-days", "5 per week". */
+export function rateText(question: RatesQuestion, index: number): string {
+  const group = question.groups[index];
+  if (group === undefined) return '';
+  const noun = index === 0 && question.caseNoun !== null ? ` ${question.caseNoun}` : '';
+  const over =
+    group.exposure.value === 1 && group.connector === 'per'
+      ? (one(question) ?? question.unit ?? '')
+      : `${quantityText(group.exposure)}${question.unit === null ? '' : ` ${question.unit}`}`;
+  return `${quantityText(group.cases)}${noun} ${group.connector} ${over}`;
 }
 
 /** A percentage that stood beside counts: "31 of 9,240 is 0.34%. The line has 3.4%." */
@@ -81,8 +101,6 @@ function remarkText({ id, text, readAs: value }: ReadingRemark): string {
       return `${text} was left out.`;
     case 'number-in-label':
       return `${text} was read as part of the name: ${value}.`;
-    case 'time-order':
-      return `The earlier, ${value}, is what the other is compared with.`;
     case 'each-counted-once':
       return `${text}: each counted once.`;
     case 'about-taken-as-given':

@@ -4,6 +4,7 @@ import type { Report } from '../../report/report.ts';
 import { estimateText, levelText, limitsText, workingText } from './interval-text.ts';
 import { cases, plainLabel } from './labels.ts';
 import { amount, beside, fixed } from './numbers.ts';
+import { perExposure } from './rate-words.ts';
 import { quantityText } from './read-as.ts';
 import type { ReadingRow } from './telling.ts';
 
@@ -13,7 +14,7 @@ export function readingRow(report: Report, reading: Reading): ReadingRow {
   return {
     reading,
     name: nameOf(question, reading, isFewer(report, reading)),
-    value: valueOf(reading),
+    value: valueOf(question, reading),
     formula: formulaOf(question, reading),
     long: workingText(reading),
     method: methodOf(reading),
@@ -45,11 +46,17 @@ function nameOf(question: Question, reading: Reading, fewer: boolean): string {
     case 'break-even-coverage':
       return `Break-even coverage, ${group}`;
     case 'attributable-fraction':
-      return `Fraction of the ${cases(question)} of ${group} above the rate of ${plainLabel(question, reading.against ?? 0)}`;
+      return `Fraction of the ${cases(question)} above the rate of ${plainLabel(question, reading.against ?? 0)}, ${group}`;
     case 'prevented-fraction':
       return `Fraction below the rate of ${plainLabel(question, reading.against ?? 0)}, ${group}`;
     case 'population-attributable-fraction':
       return `Fraction of all ${cases(question)} above the rate of ${plainLabel(question, reading.against ?? 0)}`;
+    case 'rate':
+      return `Rate, ${group}`;
+    case 'rate-ratio':
+      return `Rate ratio, ${group}${against}`;
+    case 'rate-difference':
+      return `Rate difference, ${group}${against}`;
     case 'count-ratio':
       return `Ratio of the counts, ${group}${against}`;
     case 'percentage-ratio':
@@ -63,14 +70,23 @@ function nameOf(question: Question, reading: Reading, fewer: boolean): string {
 
 /** Whether the difference behind a reading is below 0. */
 const isFewer = ({ readings }: Report, { of }: Reading) =>
-  (readings.find((each) => each.id === 'risk-difference' && each.of === of)?.estimate ?? 0) < 0;
+  (readings.find((each) => (each.id === 'risk-difference' || each.id === 'rate-difference') && each.of === of)
+    ?.estimate ?? 0) < 0;
 
-function valueOf(reading: Reading): string {
-  const estimate = estimateText(reading, 'full') ?? (reading.unbounded ? 'no upper end' : 'no value');
+function valueOf(question: Question, reading: Reading): string {
+  const plain = estimateText(reading, 'full') ?? (reading.unbounded ? 'no upper end' : 'no value');
+  const estimate = `${plain}${unitOf(question, reading)}`;
   const parts = [intervalPart(reading), exactPart(reading), roundingPart(reading), limitPart(reading)].filter(
     (part) => part !== null,
   );
   return parts.length === 0 ? estimate : `${estimate} (${parts.join('; ')})`;
+}
+
+/** What a rate, and one case for every K of exposure, are counted in. */
+function unitOf(question: Question, { id, per }: Reading): string {
+  if (question.kind !== 'rates') return '';
+  if (id === 'rate' || id === 'rate-difference') return ` ${perExposure(question, per ?? 1)}`;
+  return id === 'one-extra-per' && question.unit !== null ? ` ${question.unit}` : '';
 }
 
 function intervalPart(reading: Reading): string | null {
@@ -133,6 +149,7 @@ function formulaOf(question: Question, reading: Reading): string {
   const pair = other === null ? '' : `${own.risk} / (${other.risk})`;
   switch (reading.id) {
     case 'risk':
+    case 'rate':
       return own.risk;
     case 'case-share':
     case 'break-even-coverage':
@@ -145,11 +162,13 @@ function formulaOf(question: Question, reading: Reading): string {
         : pair;
     case 'count-ratio':
     case 'percentage-ratio':
+    case 'rate-ratio':
       return pair;
     case 'relative-change':
       return 'ratio - 1';
     case 'risk-difference':
     case 'percentage-difference':
+    case 'rate-difference':
       return `${own.risk} - ${other?.risk ?? ''}`;
     case 'odds-ratio':
       return `${own.odds} / (${other?.odds ?? ''})`;
@@ -208,6 +227,11 @@ function parts(question: Question, index: number): FormulaParts {
       const group = question.groups[index];
       return { ...empty, risk: group === undefined ? '' : group.share.text };
     }
+    case 'rates': {
+      const group = question.groups[index];
+      if (group === undefined) return empty;
+      return { ...empty, risk: `${quantityText(group.cases)}/${quantityText(group.exposure)}` };
+    }
     case 'bare-counts': {
       const group = question.groups[index];
       return { ...empty, risk: group === undefined ? '' : quantityText(group.cases) };
@@ -234,6 +258,12 @@ const sources = {
   'wilson-share-odds': 'Wilson limits of the share of cases, through its odds (Orenstein 1985; Wilson 1927)',
   'clopper-pearson-share-odds':
     'exact limits of the share of cases, through its odds (Orenstein 1985; Clopper & Pearson 1934)',
+  'rate-score': 'score (Rao 1948)',
+  garwood: 'exact (Garwood 1936)',
+  'rate-ratio-score': 'score, as the odds of the Wilson limits (Miettinen & Nurminen 1985)',
+  'exact-rate-ratio': 'exact conditional, as the odds of the Clopper-Pearson limits (1934)',
+  'rate-difference-score': 'Miettinen-Nurminen score for rates (1985)',
+  'equal-times-score': 'score of the rate ratio over two times of equal length (Miettinen & Nurminen 1985)',
 } satisfies Record<IntervalMethod, string>;
 
 /** The name of an interval's method, with its source. */
