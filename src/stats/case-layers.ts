@@ -1,7 +1,7 @@
-import { ArgumentError, checkCaseCounts, checkCoverage } from './argument-error.ts';
+import { checkCaseCounts, checkCoverage, checkExposure } from './argument-error.ts';
 import { bracketedRoot } from './bracketed-root.ts';
 import { criticalValue } from './critical-value.ts';
-import { outermostRoot, upTo } from './outermost-root.ts';
+import { guardedCounts, outermostRoot } from './outermost-root.ts';
 import type { RatePair } from './rate-ratio.ts';
 import type { SharePair } from './share-ratio.ts';
 import { sumOver } from './strata.ts';
@@ -38,13 +38,8 @@ export function layersOfShares(strata: readonly SharePair[]): CaseLayers {
 /** Layers of events and exposures. */
 export function layersOfRates(strata: readonly RatePair[]): CaseLayers {
   for (const { cases, referenceCases, exposure, referenceExposure } of strata) {
-    checkCaseCounts(cases, referenceCases);
-    if (!(exposure > 0 && referenceExposure > 0 && exposure < Infinity && referenceExposure < Infinity)) {
-      throw new ArgumentError(
-        'exposure-out-of-range',
-        `exposures must be above 0, not ${exposure} and ${referenceExposure}`,
-      );
-    }
+    checkExposure(cases, exposure);
+    checkExposure(referenceCases, referenceExposure);
   }
   return layersOf(
     strata.map(({ cases, referenceCases, exposure, referenceExposure }) => ({
@@ -113,11 +108,10 @@ export function logRatioOfLayers(layers: CaseLayers): number {
 export function lowerScoreLimit(layers: CaseLayers, level: number): number {
   const z = criticalValue(level);
   if (layers.cases === 0) return 0;
-  const excess = (logRatio: number) => {
+  const score = (logRatio: number) => {
     const { gap, variance } = caseExcess(layers, Math.exp(logRatio));
-    return gap - z * Math.sqrt(variance);
+    return guardedCounts(gap, variance, z);
   };
-  const centre = layers.referenceCases === 0 ? 0 : logRatioOfLayers(layers);
-  const root = outermostRoot(excess, upTo(centre));
+  const root = outermostRoot(score, -600, layers.referenceCases === 0 ? 600 : logRatioOfLayers(layers));
   return root === null ? 0 : Math.exp(root);
 }

@@ -7,6 +7,12 @@ export const supportOf = ({ cases, total, referenceCases, referenceTotal }: TwoG
   most: Math.min(total, cases + referenceCases),
 });
 
+/** The weight of u + 1 cases in the group over that of u with these margins, at an odds ratio of 1. */
+export const stepUp = ({ cases, total, referenceCases, referenceTotal }: TwoGroups) => {
+  const all = cases + referenceCases;
+  return (u: number) => ((total - u) / (u + 1)) * ((all - u) / (referenceTotal - all + u + 1));
+};
+
 /**
  * How far the observed cases lie above their mean, and the variance, in the non-central hypergeometric distribution with odds
  * ratio t, all margins given. Whole numbers.
@@ -18,9 +24,8 @@ export function hypergeometricMoments(
   groups: TwoGroups,
   t: number,
 ): { readonly excess: number; readonly variance: number } {
-  const { cases, total, referenceCases, referenceTotal } = groups;
-  const all = cases + referenceCases;
   const { fewest, most } = supportOf(groups);
+  const up = stepUp(groups);
   const start = Math.min(most, Math.max(fewest, Math.round(fittedTable(groups, t).cases)));
   let [sum, first, second] = [1, 0, 0];
   const add = (u: number, weight: number) => {
@@ -32,14 +37,14 @@ export function hypergeometricMoments(
   };
   let weight = 1;
   for (let u = start; u < most; u += 1) {
-    weight *= ((total - u) / (u + 1)) * ((all - u) / (referenceTotal - all + u + 1)) * t;
+    weight *= up(u) * t;
     if (!add(u + 1, weight)) break;
   }
   weight = 1;
   for (let u = start; u > fewest; u -= 1) {
-    weight *= (u / (total - u + 1)) * ((referenceTotal - all + u) / (all - u + 1) / t);
+    weight /= up(u - 1) * t;
     if (!add(u - 1, weight)) break;
   }
   const mean = first / sum;
-  return { excess: cases - start - mean, variance: second / sum - mean * mean };
+  return { excess: groups.cases - start - mean, variance: second / sum - mean * mean };
 }

@@ -3,6 +3,12 @@ import { chiSquaredUpperTail } from './gamma-tail.ts';
 import type { ChiSquaredTest } from './homogeneity.ts';
 import { sumOver } from './strata.ts';
 
+/** Cases among a group's total. */
+export interface GroupCases {
+  readonly cases: number;
+  readonly total: number;
+}
+
 /**
  * Do the risks of several groups differ at all? Pearson's chi-squared times (N - 1)/N, on one degree of freedom less than there
  * are groups; with two groups it is the (N-1) chi-squared of the pairs.
@@ -13,18 +19,17 @@ import { sumOver } from './strata.ts';
  * Pearson 1900; the factor as in Campbell 2007 (Statistics in Medicine 26:3661). Asked first, before the pairs: of 12 equal groups
  * the highest against the lowest excludes 1 in 72% of data sets.
  */
-export function overallChiSquared(
-  groups: readonly { readonly cases: number; readonly total: number }[],
-): ChiSquaredTest {
+export function overallChiSquared(groups: readonly GroupCases[]): ChiSquaredTest {
   groups.forEach(({ cases, total }) => {
     checkCases(cases, total);
   });
   const all = sumOver(groups, ({ total }) => total);
   const allCases = sumOver(groups, ({ cases }) => cases);
-  const share = allCases / all;
-  const gaps = sumOver(groups, ({ cases, total }) => (cases - total * share) ** 2 / total);
-  const statistic =
-    allCases === 0 || allCases === all ? 0 : (gaps / (share * (1 - share))) * ((all - 1) / all);
+  const others = sumOver(groups, ({ cases, total }) => total - cases);
+  // Cases and others lie as far from what is expected; the rarer of the two keeps its digits.
+  const [rare, of] = allCases <= others ? [allCases, casesOf] : [others, othersOf];
+  const gaps = sumOver(groups, (group) => (of(group) - group.total * (rare / all)) ** 2 / group.total);
+  const statistic = rare === 0 ? 0 : (gaps / rare) * (all / (all - rare)) * (all - 1);
   return testOf(statistic, groups.length);
 }
 
@@ -50,6 +55,9 @@ export function overallShareChiSquared(
         });
   return testOf(statistic, groups.length);
 }
+
+const casesOf = ({ cases }: GroupCases) => cases;
+const othersOf = ({ cases, total }: GroupCases) => total - cases;
 
 function testOf(statistic: number, groups: number): ChiSquaredTest {
   if (groups < 2) throw new ArgumentError('too-few-groups', 'there must be two groups or more');

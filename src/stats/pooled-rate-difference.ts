@@ -1,7 +1,7 @@
 import { ArgumentError, checkExposure } from './argument-error.ts';
 import { criticalValue } from './critical-value.ts';
 import type { Interval } from './interval.ts';
-import { outermostRoot } from './outermost-root.ts';
+import { guardedDifference, outermostRoot } from './outermost-root.ts';
 import { rateDifferenceInterval, swappedRates } from './rate-difference-interval.ts';
 import type { RatePair } from './rate-ratio.ts';
 import { sumOver } from './strata.ts';
@@ -31,7 +31,7 @@ export function pooledRateDifference(strata: readonly RatePair[]): number {
  * @param level confidence level as a share, in [0.5, 0.9999]
  * @returns both limits, always; the outermost roots where the statistic is not monotone
  *
- * Miettinen & Nurminen 1985 (Statistics in Medicine 4:213), rates and section on strata. Accuracy: 1e-11 of the larger of the
+ * Miettinen & Nurminen 1985 (Statistics in Medicine 4:213), rates and section on strata. Accuracy: 1e-12 of the larger of the
  * limit and the width.
  */
 export function pooledRateDifferenceInterval(strata: readonly RatePair[], level: number): Interval {
@@ -46,23 +46,19 @@ export function pooledRateDifferenceInterval(strata: readonly RatePair[], level:
 function lowerLimit(strata: readonly RatePair[], z: number): number {
   const estimate = pooledRateDifference(strata);
   const weights = sumOver(strata, weightOf);
-  const excess = (d: number) => {
+  const growth = sumOver(strata, (pair) => weightOf(pair) ** 2 / pair.exposure);
+  const score = (d: number) => {
     const variance = sumOver(strata, (pair) => weightOf(pair) ** 2 * constrainedVariance(pair, d));
-    return weights * (estimate - d) - z * Math.sqrt(variance);
+    return guardedDifference({ gap: weights * (estimate - d), slope: weights }, { variance, growth }, z);
   };
-  // The lower limit is found beyond any that one more variance of the empty layers would give.
-  const reach =
-    (z * z + sumOver(strata, ({ cases, referenceCases }) => cases + referenceCases) + 1) / weights;
-  let far = reach;
-  while (excess(estimate - far) <= 0) far *= 2;
-  const root = outermostRoot(excess, points(estimate, far));
-  // The last point is the estimate, at which the excess is never above 0.
-  return root ?? estimate;
-}
-
-function* points(estimate: number, far: number): Generator<number> {
-  for (let part = 1; part > 1e-17; part *= part > 1e-4 ? 0.93 : 0.5) yield estimate - far * part;
-  yield estimate;
+  // From the estimate outward the variance grows by d/T2 at most: so far out, the score is above z.
+  const outward = sumOver(strata, (pair) => weightOf(pair) ** 2 / pair.referenceExposure) / weights ** 2;
+  const atEstimate = sumOver(
+    strata,
+    (pair) => (weightOf(pair) / weights) ** 2 * constrainedVariance(pair, estimate),
+  );
+  const far = estimate - 2 * z * (z * outward + Math.sqrt(atEstimate));
+  return outermostRoot(score, far, estimate) ?? estimate;
 }
 
 /** q1/T1 + q2/T2 at the rates constrained to q1 - q2 = d: the positive root of T q2^2 + (T d - x) q2 - x2 d = 0, d >= 0. */
@@ -77,7 +73,8 @@ function constrainedVariance(pair: RatePair, d: number): number {
 }
 
 const weightOf = ({ exposure, referenceExposure }: RatePair) =>
-  (exposure / (exposure + referenceExposure)) * referenceExposure;
+  (Math.min(exposure, referenceExposure) / (exposure + referenceExposure)) *
+  Math.max(exposure, referenceExposure);
 
 function check(strata: readonly RatePair[]): void {
   if (strata.length === 0) throw new ArgumentError('no-strata', 'there must be a layer');

@@ -1,4 +1,4 @@
-import { ArgumentError } from './argument-error.ts';
+import { checkWhole } from './argument-error.ts';
 import {
   layersOfRates,
   layersOfShares,
@@ -32,13 +32,13 @@ export function pooledShareRatio(strata: readonly SharePair[]): number | null {
  * @returns lower limit 0 without cases in the group, no upper limit without cases in the reference; the outermost roots where
  *   the equation has several (coverages from about 8% to 92% in layers of very few cases)
  *
- * Accuracy: 1e-11 relative. One layer gives the interval of share-ratio.ts.
+ * Accuracy: 1e-12 relative. One layer gives the interval of share-ratio.ts.
  */
 export function pooledShareRatioInterval(strata: readonly SharePair[], level: number): Interval {
   return scoreIntervalOfLayers(layersOfShares(strata), level);
 }
 
-/** Exact interval of the same: the tails of the sum of the layers' binomial counts, by convolution. Whole cases, up to a million. */
+/** Exact interval of the same: the tails of the sum of the layers' binomial counts, by convolution. Whole cases, fewer than `mostExactSums`. */
 export function exactPooledShareRatioInterval(strata: readonly SharePair[], level: number): Interval {
   return exactIntervalOfLayers(layersOfShares(strata), level);
 }
@@ -71,10 +71,7 @@ export function scoreIntervalOfLayers(layers: CaseLayers, level: number): Interv
 }
 
 function exactIntervalOfLayers(layers: CaseLayers, level: number): Interval {
-  const whole = [layers.cases, layers.referenceCases, ...layers.layers.map(({ all }) => all)];
-  if (!whole.every(Number.isInteger) || layers.cases + layers.referenceCases > 1e6) {
-    throw new ArgumentError('not-whole', 'the exact form needs whole cases, a million at most');
-  }
+  checkWhole(layers.cases, layers.referenceCases, ...layers.layers.map(({ all }) => all));
   const low = exactLowerLimit(layers, level);
   const mirrored = exactLowerLimit(swappedLayers(layers), level);
   return { low, high: mirrored === 0 ? null : 1 / mirrored };
@@ -82,12 +79,12 @@ function exactIntervalOfLayers(layers: CaseLayers, level: number): Interval {
 
 function exactLowerLimit(layers: CaseLayers, level: number): number {
   if (layers.cases === 0) return 0;
-  const near = lowerScoreLimit(layers, level);
-  const weights = layers.layers.map(({ all, odds }) => ({
+  const counts = layers.layers.map(({ all, odds }) => ({
     fewest: 0,
     most: all,
-    start: Math.min(all, Math.round((all * near * odds) / (1 + near * odds))),
+    mode: (t: number) => all * ((t * odds) / (1 + t * odds)),
     up: (u: number) => ((all - u) / (u + 1)) * odds,
   }));
-  return lowerTailLimit(weights, layers.cases, near, level);
+  const guess = ratioOfLayers(layers) ?? lowerScoreLimit(layers, level);
+  return lowerTailLimit(counts, layers.cases, guess, level);
 }

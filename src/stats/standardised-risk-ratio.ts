@@ -47,11 +47,12 @@ export function standardisedRiskRatioInterval(
   const { risk, referenceRisk, ratio } = standardisedRisks(strata, standard);
   if (ratio === null || ratio === 0) return null;
   const layers = weighted(strata, standard);
-  const own = sumOver(layers, ({ share, p1, groups }) => (share * share * p1 * (1 - p1)) / groups.total);
-  const reference = sumOver(
-    layers,
-    ({ share, p2, groups }) => (share * share * p2 * (1 - p2)) / groups.referenceTotal,
-  );
+  const own = sumOver(layers, ({ share, p1, groups: { cases, total } }) => {
+    return (share * share * p1 * ((total - cases) / total)) / total;
+  });
+  const reference = sumOver(layers, ({ share, p2, groups: { referenceCases, referenceTotal } }) => {
+    return (share * share * p2 * ((referenceTotal - referenceCases) / referenceTotal)) / referenceTotal;
+  });
   const reach = z * Math.sqrt(own / (risk * risk) + reference / (referenceRisk * referenceRisk));
   return { low: ratio * Math.exp(-reach), high: ratio * Math.exp(reach) };
 }

@@ -20,7 +20,7 @@ export function usableStrata(strata: Strata): Strata {
 
 /** The Mantel-Haenszel weight n1 n2/N of a layer. */
 export const mantelHaenszelWeight = ({ total, referenceTotal }: TwoGroups) =>
-  (total / (total + referenceTotal)) * referenceTotal;
+  (total * referenceTotal) / (total + referenceTotal);
 
 /** N/(N - 1). */
 export const varianceFactor = ({ total, referenceTotal }: TwoGroups) =>
