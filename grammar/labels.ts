@@ -36,13 +36,26 @@ export const isTimeName = (name: string) => timeOf(name) !== null;
 /** The index of the earlier of two groups whose names are ordered in time (before/after, old/new, years, months), else `null`. */
 export function earlierOf(names: readonly (string | null)[]): number | null {
   if (names.length !== 2) return null;
-  const lone = names.map(
-    (name) => name !== null && /^(?:before|earlier|previously|last (?:year|month|week))$/i.test(name),
-  );
+  const lone = names.map((name) => name !== null && loneEarlier.test(name));
   if (lone[0] !== lone[1] && names.every((name) => name !== null)) return lone[0] === true ? 0 : 1;
   const [first, second] = names.map((name) => (name === null ? null : timeOf(name)));
   if (first == null || second == null || first.scale !== second.scale || first.at === second.at) return null;
   return first.at < second.at ? 0 : 1;
+}
+
+const pureTime =
+  /^(?:before|after|earlier|later|previously|now|then|recently|(?:last|this|previous|current) \w+|(?:in )?(?:19|20)\d\d(?:\/\d\d)?)$/i;
+const loneEarlier = /^(?:before|earlier|previously|last (?:year|month|week))$/i;
+
+/**
+ * Whether two groups are one thing at two times: both names are times and nothing else (`last year` and `this year`, but not `old
+ * pump` and `new pump`, which may run side by side), or one of them is only "before".
+ */
+export function areTimes(names: readonly (string | null)[]): boolean {
+  if (earlierOf(names) === null) return false;
+  const isTime = (name: string | null) =>
+    name !== null && (pureTime.test(name) || timeOf(name)?.scale === 'month');
+  return names.every(isTime) || names.some((name) => name !== null && loneEarlier.test(name));
 }
 
 const outcomes: readonly (readonly [RegExp, RegExp])[] = [

@@ -71,6 +71,14 @@ export const messages = {
     `${one.replace(',', '')} and ${other.replace(',', '')}: years, or counts? Years belong after "period"; counts of that size take a comma.`,
   'different-times': (one: string, other: string) =>
     `Watched for different times, ${one} and ${other}: shares cannot be compared then, but rates per person and time can.`,
+  'layer-of-one': (name: string) =>
+    `${name} has one group, other layers have more. Each layer needs the same groups.`,
+  'layers-as-stated': () =>
+    'A stated rate has no counts behind it, so layers cannot be put together. Give the counts and what they are over.',
+  'layers-differ': (one: string, other: string) =>
+    `One layer has ${one}, another ${other}. Each layer needs the same groups, in the same order and unit.`,
+  'same-layer-twice': (name: string) => `The layer ${name} stands twice. Give each layer its own name.`,
+  'too-many-layers': (most: string) => `There are more than ${most} layers. Put small ones together.`,
   'units-differ': (one: string, other: string) =>
     `One is over ${one}, the other over ${other}. Give both in one unit.`,
   'exposure-zero': (text: string) => `${text}: over nothing. A time or distance has to be above 0.`,
@@ -82,7 +90,6 @@ export const messages = {
     'I do not read tests and alarms yet. I can compare how often they went off: how many, out of how many.',
   'not-yet-whole': (name: string) =>
     `${name} contains the other group. I compare a group with the rest, without those counted in it.`,
-  'not-yet-layers': () => 'I do not read groups within layers yet. Send one layer at a time.',
 } satisfies Record<string, (...pieces: string[]) => string>;
 
 export type MessageId = keyof typeof messages;

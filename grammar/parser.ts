@@ -18,8 +18,9 @@ export class LineParser extends CstParser {
     this.performSelfAnalysis();
   }
 
-  /** line: part { Break part } */
+  /** line: [ ByHead ] part { Break part } */
   readonly line = this.RULE('line', () => {
+    this.OPTION(() => this.CONSUME(tags.ByHeadTag));
     this.SUBRULE(this.part);
     this.MANY(() => {
       this.CONSUME(tags.BreakTag);
@@ -62,8 +63,9 @@ export class LineParser extends CstParser {
     });
   });
 
-  /** item: [ Name [ NameColon ] ] [ CaseNoun ] figure { Stated } [ After ] */
+  /** item: [ Layer ] [ Name [ NameColon ] ] [ CaseNoun ] figure { Stated } [ After ] */
   readonly item = this.RULE('item', () => {
+    this.OPTION5(() => this.CONSUME(tags.LayerTag));
     this.OPTION(() => this.CONSUME(tags.NameTag));
     this.OPTION2(() => this.CONSUME(tags.NameColonTag));
     this.OPTION3(() => this.CONSUME(tags.CaseNounTag));

@@ -1,16 +1,16 @@
 import { unitOfOne } from './exposures.ts';
 import { grouped } from './numbers.ts';
-import type { Question, Quantity, RatesGroup } from './question.ts';
+import type { Question, Quantity, RatesGroup, SharesQuestion, StrataQuestion } from './question.ts';
 
 /** The canonical spelling of a question. Reading it again gives the same question. */
 export function printCanonical(question: Question): string {
-  return [figurePart(question), ...clauseParts(question)].join('; ');
+  return [changePart(question) ?? figurePart(question), ...clauseParts(question)].join('; ');
 }
 
 function figurePart(question: Question): string {
-  const change = changePart(question);
-  if (change !== null) return change;
   switch (question.kind) {
+    case 'strata':
+      return strataPart(question);
     case 'rates':
       return question.groups
         .map((group, index) => `${named(group.label)}${rate(question, group, index)}`)
@@ -46,7 +46,8 @@ function figurePart(question: Question): string {
 
 /** `from 412 to 530`: a change whose times have no names of their own. */
 function changePart(question: Question): string | null {
-  if (!question.overTime || question.kind === 'shares' || question.groups.length !== 2) return null;
+  if (!question.overTime || question.kind === 'shares' || question.kind === 'strata') return null;
+  if (question.groups.length !== 2) return null;
   if (question.groups.map(({ label }) => label?.toLowerCase()).join() !== 'before,after') return null;
   const unit = question.unit === null ? '' : ` ${question.unit}`;
   const noun = question.caseNoun === null ? '' : `${named(question.caseNoun).replace(/: $/, '')} `;
@@ -63,6 +64,23 @@ function changePart(question: Question): string | null {
     case 'bare-counts':
       return `${noun}from ${question.groups.map(({ cases }) => cases.text).join(' to ')}`;
   }
+}
+
+/** `by age: under 40: night: 3 of 900 vs day: 40 of 9,000 | ...` */
+function strataPart({ by, layers }: StrataQuestion): string {
+  const head = by === null ? '' : `by ${bare(by)}: `;
+  const each = layers.map(({ label, question }) => {
+    const figures = question.kind === 'shares' ? layeredShares(question) : figurePart(question);
+    return `${named(label)}${figures}`;
+  });
+  return `${head}${each.join(' | ')}`;
+}
+
+/** `no helmet: 12 of 32 cases, 30% of riders` */
+function layeredShares({ groups, totalCases, caseNoun, unit }: SharesQuestion): string {
+  const [first] = groups;
+  if (first?.cases == null || totalCases === null) return '';
+  return `${named(first.label)}${first.cases.text} of ${totalCases.text} ${caseNoun ?? 'cases'}, ${first.coverage.text} of ${unit ?? 'all'}`;
 }
 
 /** `14 incidents in 5,200 bus-days`, `3 per 1,000 bus-days`. */

@@ -168,7 +168,30 @@ export interface RatesGroup {
   readonly span: Span;
 }
 
-export type Question = CountsQuestion | SharesQuestion | StatedQuestion | BareCountsQuestion | RatesQuestion;
+/** `by age: under 40: night 3 of 900 vs day 40 of 9,000 | 40 and over: ...`: the same groups within layers. */
+export interface StrataQuestion extends QuestionBase {
+  readonly kind: 'strata';
+  /** What the layers are layers of, as typed behind `by`; `null` where the line does not say. */
+  readonly by: string | null;
+  readonly layers: readonly Layer[];
+  /** The groups, which are the same in every layer, in the order of the first. */
+  readonly groups: readonly LayeredGroup[];
+  readonly reference: number;
+}
+
+export interface Layer {
+  readonly label: string | null;
+  /** What the line asks within this layer; all layers ask the same kind, with the groups in the same order. */
+  readonly question: CountsQuestion | SharesQuestion | RatesQuestion;
+  readonly span: Span;
+}
+
+export interface LayeredGroup {
+  readonly label: string | null;
+}
+
+export type Question =
+  CountsQuestion | SharesQuestion | StatedQuestion | BareCountsQuestion | RatesQuestion | StrataQuestion;
 export type QuestionKind = Question['kind'];
 
 /** A line that would work, ready to send. `label` is what a button says where several are offered. */
@@ -197,8 +220,9 @@ export type LineReading =
   | { readonly kind: 'help'; readonly topic: HelpTopic }
   | { readonly kind: 'diagnosis'; readonly diagnosis: Diagnosis };
 
-/** Longest line in UTF-16 units and most groups: 4,000 and 12 on the command line, 2,400 and 12 in Slack. */
+/** Longest line in UTF-16 units, most groups and most layers: 4,000, 12 and 60 on the command line, 2,400, 12 and 24 in Slack. */
 export interface LineLimits {
   readonly characters: number;
   readonly groups: number;
+  readonly layers: number;
 }

@@ -11,7 +11,7 @@ import { settleLine } from './settle.ts';
 import { tagLine } from './tag.ts';
 import * as tags from './tags.ts';
 import { fineTokensOf } from './tokens.ts';
-import { partsOfTree } from './tree.ts';
+import { layersBy, partsOfTree } from './tree.ts';
 
 const topics: readonly HelpTopic[] = [
   'overview',
@@ -19,6 +19,7 @@ const topics: readonly HelpTopic[] = [
   'shares',
   'rates',
   'change',
+  'strata',
   'stated',
   'bare-counts',
 ];
@@ -48,12 +49,13 @@ export function readLine(line: string, limits: LineLimits): LineReading {
   const { tree, errors } = parseTags(tagged);
   const [error] = errors;
   if (error !== undefined) return refusal(faultOf(error, folded));
-  const question = settleLine(
-    partsOfTree(tree, folded),
-    line,
-    [...folded.remarks, ...remarks],
-    limits.groups,
-  );
+  const question = settleLine(partsOfTree(tree, folded), {
+    typed: line,
+    by: layersBy(tree, folded),
+    remarks: [...folded.remarks, ...remarks],
+    mostGroups: limits.groups,
+    mostLayers: limits.layers,
+  });
   return question.ok ? { kind: 'question', question: question.value } : refusal(question.fault);
 }
 

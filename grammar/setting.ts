@@ -7,4 +7,5 @@ export interface Setting {
   readonly given: SettledClauses;
   readonly remarks: readonly ReadingRemark[];
   readonly mostGroups: number;
+  readonly mostLayers: number;
 }

@@ -1,11 +1,12 @@
 import { diagnosis } from './diagnosis.ts';
 import { grouped } from './numbers.ts';
-import { chosenByOutcome, earlierOf, nameKey } from './labels.ts';
+import { areTimes, chosenByOutcome, earlierOf, nameKey } from './labels.ts';
 import { countFromShare, countQuantity, refused, settled, shareQuantity } from './quantities.ts';
 import type { Settled } from './quantities.ts';
 import type {
   BareCountsGroup,
   CountsGroup,
+  CountsQuestion,
   Question,
   Quantity,
   ReadingRemark,
@@ -83,7 +84,7 @@ export function checkNames(
 }
 
 /** Counts: every group has its cases and its total. */
-export function settleCounts(typedItems: readonly Item[], typedSetting: Setting): Settled<Question> {
+export function settleCounts(typedItems: readonly Item[], typedSetting: Setting): Settled<CountsQuestion> {
   const times = typedItems.map(withoutWatched);
   const apart = times.find(({ watched }) => !sameWatched(watched, times[0]?.watched ?? null));
   if (apart !== undefined) return refused(differentTimes(times, apart.item));
@@ -112,7 +113,7 @@ export function settleCounts(typedItems: readonly Item[], typedSetting: Setting)
     clauses: setting.given.clauses,
     unit: naming.unit,
     caseNoun: naming.caseNoun,
-    overTime: earlierOf(naming.labels) !== null,
+    overTime: areTimes(naming.labels),
     remarks: remarks,
   });
 }
@@ -261,7 +262,7 @@ export function settleStated(items: readonly Item[], setting: Setting): Settled<
     clauses: setting.given.clauses,
     unit: differ ? null : (naming.unit ?? nouns[0] ?? null),
     caseNoun: null,
-    overTime: earlierOf(labels) !== null,
+    overTime: areTimes(labels),
     remarks: setting.remarks,
   });
 }
@@ -302,7 +303,7 @@ export function settleBareCounts(items: readonly Item[], setting: Setting): Sett
     // Without totals the words behind a count can only say what is counted.
     unit: null,
     caseNoun: naming.caseNoun ?? naming.unit,
-    overTime: earlierOf(naming.labels) !== null,
+    overTime: areTimes(naming.labels),
     remarks: remarks,
   });
 }

@@ -1,16 +1,16 @@
 import { diagnosis } from './diagnosis.ts';
 import { conversion, unitKey, unitWritten } from './exposures.ts';
 import { group as groupDigits } from './numbers.ts';
-import { earlierOf } from './labels.ts';
+import { areTimes } from './labels.ts';
 import { countQuantity, refused, settled } from './quantities.ts';
 import type { Settled } from './quantities.ts';
-import type { Quantity, Question, RatesGroup, ReadingRemark } from './question.ts';
+import type { Quantity, RatesGroup, RatesQuestion, ReadingRemark } from './question.ts';
 import type { Setting } from './setting.ts';
 import { checkNames, namingOf, referenceOf } from './settle-groups.ts';
 import type { Item, ItemExposure, ItemFigureCount } from './tree.ts';
 
 /** Rates: every group has its events and what they were counted over, all in one unit. */
-export function settleRates(items: readonly Item[], setting: Setting): Settled<Question> {
+export function settleRates(items: readonly Item[], setting: Setting): Settled<RatesQuestion> {
   const whole = withUnits(items);
   const naming = namingOf(whole);
   const names = checkNames(whole, naming.labels, setting);
@@ -34,7 +34,7 @@ export function settleRates(items: readonly Item[], setting: Setting): Settled<Q
     clauses: setting.given.clauses,
     unit: units.value,
     caseNoun: naming.caseNoun,
-    overTime: earlierOf(naming.labels) !== null,
+    overTime: areTimes(naming.labels),
     remarks: remarks,
   });
 }

@@ -4,7 +4,7 @@ import { diagnosis } from './diagnosis.ts';
 import { nameKey } from './labels.ts';
 import { refused, restOf, settled, shareQuantity } from './quantities.ts';
 import type { Settled } from './quantities.ts';
-import type { Question, Quantity, SharesGroup } from './question.ts';
+import type { Quantity, SharesGroup, SharesQuestion } from './question.ts';
 import type { Setting } from './setting.ts';
 import { checkNames, referenceOf } from './settle-groups.ts';
 import type { Item } from './tree.ts';
@@ -17,7 +17,7 @@ export interface SharesParts {
 }
 
 /** Shares: cases by group beside each group's share of the population, the implied group and its coverage filled in. */
-export function settleShares(parts: SharesParts, setting: Setting): Settled<Question> {
+export function settleShares(parts: SharesParts, setting: Setting): Settled<SharesQuestion> {
   const rows = caseRows(parts.cases, setting);
   if (!rows.ok) return rows;
   const coverages = coverageRows(parts, rows.value.rows, setting);

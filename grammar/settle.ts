@@ -2,12 +2,13 @@ import { diagnosis, plainSuggestion } from './diagnosis.ts';
 import { printCanonical } from './print-canonical.ts';
 import { refused, settled } from './quantities.ts';
 import type { Settled } from './quantities.ts';
-import type { Question, ReadingRemark } from './question.ts';
+import type { Question } from './question.ts';
 import { settleBareCounts, settleCounts, settleStated } from './settle-groups.ts';
 import { changeItems } from './settle-change.ts';
 import { settleClauses } from './settle-clauses.ts';
 import type { Setting } from './setting.ts';
 import { areRates, settleRates } from './settle-rates.ts';
+import { layersOf, loneLayer, settleStrata } from './settle-strata.ts';
 import { settleShares } from './settle-shares.ts';
 import type { SharesParts } from './settle-shares.ts';
 import type { Item, ItemFigureShare, TreePart } from './tree.ts';
@@ -15,25 +16,29 @@ import type { Item, ItemFigureShare, TreePart } from './tree.ts';
 type List = Extract<TreePart, { kind: 'list' }>;
 
 /** Decides which question a parsed line asks, and settles it: impossible figures are refused, never read as something else. */
-export function settleLine(
-  parts: readonly TreePart[],
-  typed: string,
-  remarks: readonly ReadingRemark[],
-  mostGroups: number,
-): Settled<Question> {
+export function settleLine(parts: readonly TreePart[], about: LineAbout): Settled<Question> {
+  const { typed, mostGroups } = about;
   const lists = parts.filter((part): part is List => part.kind === 'list');
   const clauses = settleClauses(
     parts.filter((part) => part.kind === 'clause'),
     typed,
   );
   if (!clauses.ok) return clauses;
-  const setting: Setting = { typed, given: clauses.value, remarks, mostGroups };
+  const setting: Setting = { ...about, given: clauses.value };
   const items = lists.flatMap((list) => list.items);
   const [first] = items;
   if (first === undefined) return refused(diagnosis('clauses-only', { from: 0, to: typed.length }));
+  const layers = layersOf(lists);
+  if (layers !== null) return settleStrata(layers, about.by, setting);
   const beyond = items[mostGroups * 2];
   if (beyond !== undefined) return refused(diagnosis('too-many-groups', beyond.span, [String(mostGroups)]));
   return settleItems(lists, items, setting);
+}
+
+/** What is known of a line besides its parts. */
+export interface LineAbout extends Omit<Setting, 'given'> {
+  /** What its layers are layers of. */
+  readonly by: string | null;
 }
 
 function settleItems(
@@ -46,6 +51,9 @@ function settleItems(
     return refused(diagnosis('change-of-two', change.span, [], ['from 412 to 530']));
   const changed = change === undefined ? settled(typedItems) : changeItems(change);
   if (!changed.ok) return changed;
+  const [only] = lists;
+  const lone = lists.length === 1 && only?.head === null ? loneLayer(changed.value) : null;
+  if (lone !== null) return settleItems([], lone.items, amongLayer(setting, lone.name.text));
   const items = changed.value;
   const shares = sharesParts(lists, items, setting);
   if (shares !== null) return settleShares(shares, setting);
@@ -58,6 +66,14 @@ function settleItems(
   return everyCount || items.every(({ figure }) => figure.total !== null)
     ? settleCounts(items, setting)
     : refused(mixture(items));
+}
+
+/** The name of a lone layer says who is counted, unless the line says so itself. */
+function amongLayer(setting: Setting, name: string): Setting {
+  const { given } = setting;
+  return given.clauses.among !== null
+    ? setting
+    : { ...setting, given: { ...given, clauses: { ...given.clauses, among: name } } };
 }
 
 function mixture(items: readonly Item[]) {

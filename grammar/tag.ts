@@ -6,6 +6,7 @@ import { oddFigureIn } from './odd-figures.ts';
 import type { Figure } from './figures.ts';
 import type { Folded } from './fold.ts';
 import { partsOf } from './parts.ts';
+import { withoutByHead } from './by-head.ts';
 import { writeFigure } from './tag-figure.ts';
 import { TagWriter } from './tag-writer.ts';
 import { withoutStated } from './stated-beside.ts';
@@ -43,7 +44,9 @@ export interface TaggedLine {
 /** Settles in one linear pass what each fine token stands for: part of a name, of a figure, of a clause, or between groups. */
 export function tagLine(fine: readonly IToken[], folded: Folded): TaggedLine {
   const pass = new TaggingPass(folded);
-  const parts = partsOf(fine, folded.text.length);
+  const { head: by, tokens: figures } = withoutByHead(fine);
+  if (by !== null) pass.words(tags.ByHeadTag, by, 1, by.length - 1);
+  const parts = partsOf(figures, folded.text.length);
   const heads = parts.map((part) => headOf(part));
   const hasCoverage =
     heads.includes('coverage') || fine.some(({ tokenType }) => tokenType === token.CoverageWord);
@@ -210,8 +213,8 @@ class TaggingPass extends TagWriter {
       return;
     }
     const earlier = lastIndexOf(tokens, from, colon, token.Colon);
-    if (earlier !== -1) this.refuse('not-yet-layers', offset(tokens, from), endOffset(tokens, colon));
-    this.words(tags.NameTag, tokens, from, colon);
+    if (earlier !== -1) this.words(tags.LayerTag, tokens, from, earlier);
+    this.words(tags.NameTag, tokens, earlier === -1 ? from : earlier + 1, colon);
     this.pushTokens(tags.NameColonTag, tokens, colon, colon + 1);
     this.words(tags.CaseNounTag, tokens, colon + 1, to);
   }

@@ -8,6 +8,8 @@ import type { Precision } from './question.ts';
 const tag = (name: string, words: string): TokenType =>
   createToken({ name, pattern: /NEVER MATCHED/, label: words });
 
+export const ByHeadTag = tag('ByHead', '"by age:", in front of layers');
+export const LayerTag = tag('Layer', 'the name of a layer');
 export const NameTag = tag('Name', 'the name of a group');
 export const NameColonTag = tag('NameColon', 'a colon after a name');
 export const CasesTag = tag('Cases', 'a count');
@@ -31,6 +33,8 @@ export const ChangeHeadTag = tag(
 export const ClauseTag = tag('Clause', 'a clause');
 
 export const tagTypes: readonly TokenType[] = [
+  ByHeadTag,
+  LayerTag,
   NameTag,
   NameColonTag,
   CasesTag,

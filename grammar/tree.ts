@@ -39,8 +39,12 @@ export interface ItemFigureShare {
 }
 
 export interface Item {
+  /** The layer that the figure stands in, where a name and a colon stand before the group's own. */
+  readonly layer: Words | null;
   readonly name: Words | null;
   readonly colon: boolean;
+  /** Words between the name's colon and the figure: what a case is called, or the group's name behind a layer's. */
+  readonly before: Words | null;
   readonly figure: ItemFigureCount | ItemFigureShare;
   readonly stated: { readonly share: ShareValue; readonly span: Span } | null;
   readonly after: Words | null;
@@ -62,6 +66,11 @@ export type TreePart =
       readonly number: WrittenNumber | null;
       readonly span: Span;
     };
+
+/** What the layers of a line are layers of: the words behind `by`. */
+export function layersBy(tree: CstNode, folded: Folded): string | null {
+  return wordsOf(tokens(tree, 'ByHead')[0], folded)?.text ?? null;
+}
 
 /** Turns a parse tree without errors into its parts. */
 export function partsOfTree(tree: CstNode, folded: Folded): readonly TreePart[] {
@@ -127,14 +136,13 @@ function itemOf(node: CstNode, folded: Folded): Item {
     .flat()
     .filter((child): child is IToken => 'image' in child);
   const value = figureOf(figure, folded);
-  const [namedNoun] = tokens(node, 'CaseNoun');
+  const before = wordsOf(tokens(node, 'CaseNoun')[0], folded);
   return {
+    layer: wordsOf(tokens(node, 'Layer')[0], folded),
     name: wordsOf(tokens(node, 'Name')[0], folded),
     colon: node.children['NameColon'] !== undefined,
-    figure:
-      value.kind === 'count' && value.noun === null && namedNoun !== undefined
-        ? { ...value, noun: wordsOf(namedNoun, folded) }
-        : value,
+    before,
+    figure: value.kind === 'count' && value.noun === null ? { ...value, noun: before } : value,
     stated:
       stated === undefined || statedShare?.kind !== 'share'
         ? null

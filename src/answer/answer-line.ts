@@ -10,8 +10,8 @@ export type Answer =
   | { readonly kind: 'help'; readonly line: string; readonly topic: HelpTopic }
   | { readonly kind: 'refusal'; readonly line: string; readonly diagnosis: Diagnosis };
 
-export const commandLineLimits: LineLimits = { characters: 4_000, groups: 12 };
-export const slackLimits: LineLimits = { characters: 2_400, groups: 12 };
+export const commandLineLimits: LineLimits = { characters: 4_000, groups: 12, layers: 60 };
+export const slackLimits: LineLimits = { characters: 2_400, groups: 12, layers: 24 };
 
 /** Answers one typed line. Pure: no clock, no chance, no environment, no network. Never throws whatever the line holds. */
 export function answerLine(line: string, limits: LineLimits): Answer {

@@ -2,6 +2,7 @@ import { printCanonical } from '../../grammar/print-canonical.ts';
 import type { Diagnosis, Question } from '../../grammar/question.ts';
 import type { Reading } from '../report/reading.ts';
 import type { Report } from '../report/report.ts';
+import { layerName } from './words/strata-words.ts';
 import { whyText } from './words/reading-row.ts';
 import { plainLabel } from './words/labels.ts';
 import { tell } from './words/tell.ts';
@@ -17,7 +18,7 @@ export function renderJson(line: string, report: Report): string {
     schema,
     line,
     question: {
-      kind: question.overTime ? 'change' : question.kind,
+      kind: question.overTime && question.kind !== 'strata' ? 'change' : question.kind,
       canonical: printCanonical(question),
       unit: question.unit,
       clauses: clausesOf(question),
@@ -60,7 +61,7 @@ export function renderRefusalJson(line: string, diagnosis: Diagnosis): string {
   });
 }
 
-function groupsOf(question: Question) {
+function groupsOf(question: Question): readonly object[] {
   switch (question.kind) {
     case 'counts':
       return question.groups.map(({ cases, total }, index) => ({
@@ -82,6 +83,10 @@ function groupsOf(question: Question) {
         label: plainLabel(question, index),
         share: share.value,
       }));
+    case 'strata':
+      return question.layers.flatMap(({ question: layer }, at) =>
+        groupsOf(layer).map((group) => ({ layer: layerName(question, at), ...group })),
+      );
     case 'rates':
       return question.groups.map(({ cases, exposure }, index) => ({
         label: plainLabel(question, index),
@@ -132,6 +137,8 @@ function readingOf(question: Question, reading: Reading, formula: string) {
     ranges,
     atLimit,
     exactBeside,
+    layer,
+    test,
   } = reading;
   return {
     id,
@@ -149,6 +156,8 @@ function readingOf(question: Question, reading: Reading, formula: string) {
     ...(ranges === null ? {} : { ranges }),
     ...(id === 'hidden-cause-strength' ? { atLimit } : {}),
     ...(exactBeside === null ? {} : { exact: { low: exactBeside.low, high: exactBeside.high } }),
+    ...(layer === null || question.kind !== 'strata' ? {} : { layer: layerName(question, layer) }),
+    ...(test === null ? {} : { statistic: test.statistic, test: `${test.name}, ${test.degrees} df` }),
     working: formula,
   };
 }

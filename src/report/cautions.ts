@@ -4,14 +4,20 @@ import type {
   Question,
   RatesQuestion,
   SharesQuestion,
+  StrataQuestion,
 } from '../../grammar/question.ts';
 import type { Reading } from './reading.ts';
+import { isReversed, pooledAndCrude } from './reversal.ts';
 
 /**
  * The cautions, most important first: an answer carries the first two that apply. Sources stand with the words in
  * the renderer's catalogue.
  */
 export const cautionIds = [
+  'reversal',
+  'layers-too-small',
+  'layers-not-alike',
+  'layers-differ-in-mix',
   'rows-chosen-by-outcome',
   'totals-missing',
   'base-rate',
@@ -57,6 +63,8 @@ function applying(question: Question, readings: readonly Reading[]): readonly Ca
       ];
     case 'rates':
       return ratesCautions(question);
+    case 'strata':
+      return strataCautions(question, readings);
     case 'bare-counts':
       if (question.overTime)
         return ['divisor-may-have-changed', ...fewOf(question.groups), 'picked-starting-point'];
@@ -98,6 +106,34 @@ function countsCautions(question: CountsQuestion, readings: readonly Reading[]):
     ...(oddsRatioFar(readings) ? (['odds-ratio-far'] as const) : []),
     ...(question.overTime ? (['picked-starting-point'] as const) : []),
     groups.length === 1 ? 'one-group' : 'groups-may-differ',
+  ];
+}
+
+/** Below this p value the layers are said not to look alike: the test misses most real differences (common practice). */
+const notAlike = 0.1;
+/** Crude and pooled further apart than this: the groups differ in what the layers are of (Maldonado & Greenland 1993). */
+const changeInEstimate = Math.log(1.1);
+
+function strataCautions(question: StrataQuestion, readings: readonly Reading[]): readonly CautionId[] {
+  const others = question.groups.map((_, of) => of).filter((of) => of !== question.reference);
+  const small = question.layers.some(({ question: { groups } }) =>
+    groups.some((group) => 'total' in group && group.total.value < 5),
+  );
+  const apart = others.some((of) => {
+    const { pooled, crude } = pooledAndCrude(readings, of);
+    return pooled !== null && crude !== null && Math.abs(Math.log(crude / pooled)) > changeInEstimate;
+  });
+  const reversed = others.some((of) => isReversed(readings, of));
+  const unlike = readings.some(
+    ({ id, estimate }) => id === 'homogeneity' && estimate !== null && estimate < notAlike,
+  );
+  return [
+    ...(reversed ? (['reversal'] as const) : []),
+    ...(small ? (['layers-too-small'] as const) : []),
+    ...(unlike ? (['layers-not-alike'] as const) : []),
+    ...(apart && !reversed ? (['layers-differ-in-mix'] as const) : []),
+    ...(question.layers[0]?.question.kind === 'shares' ? (['coverage-as-given'] as const) : []),
+    ...(reversed ? [] : (['groups-may-differ'] as const)),
   ];
 }
 

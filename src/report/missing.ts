@@ -11,6 +11,7 @@ export type MissingId =
   | 'same-people' // shares: do cases and coverage belong to the same people, place and time
   | 'same-time' // counts: were the groups watched equally long, and could one be counted twice
   | 'counted-twice' // rates: did events come singly, or several at once or to the same people
+  | 'other-differences' // layers: in what else do the groups differ
   | 'divisor-over-time' // a change of counts: did the number that it is out of change too
   | 'equally-long' // a change of counts: how long is each of the two times
   | 'who-is-counted';
@@ -38,6 +39,8 @@ export function missingFor(question: Question): readonly MissingId[] {
         'counted-twice',
         ...who,
       ];
+    case 'strata':
+      return ['other-differences', 'same-time', ...who];
     case 'bare-counts':
       if (question.overTime) return ['divisor-over-time', 'equally-long', ...who];
       return ['totals', 'same-time', ...who];

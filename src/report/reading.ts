@@ -21,6 +21,15 @@ export type ReadingId =
   | 'rate'
   | 'rate-ratio'
   | 'rate-difference'
+  | 'crude-risk-ratio'
+  | 'crude-rate-ratio'
+  | 'pooled-risk-ratio'
+  | 'pooled-risk-difference'
+  | 'pooled-odds-ratio'
+  | 'pooled-rate-ratio'
+  | 'pooled-rate-difference'
+  | 'standardised-risk-ratio'
+  | 'homogeneity'
   | 'count-ratio'
   | 'percentage-ratio'
   | 'percentage-difference'
@@ -39,7 +48,13 @@ export type IntervalMethod =
   | 'rate-ratio-score'
   | 'exact-rate-ratio'
   | 'rate-difference-score'
-  | 'equal-times-score';
+  | 'equal-times-score'
+  | 'pooled-score'
+  | 'pooled-conditional-score'
+  | 'pooled-conditional-exact'
+  | 'pooled-shares-score'
+  | 'pooled-shares-exact'
+  | 'log-delta';
 
 /** Why a reading has no interval. */
 export type NoInterval =
@@ -49,6 +64,7 @@ export type NoInterval =
   | 'given' // a figure taken as given, not estimated
   | 'no-exact-form' // `exact` was asked for, and this reading has no exact interval of the same family
   | 'spans-none' // one extra case per K: the difference's interval includes none, so K runs through infinity
+  | 'no-cases-at-all' // a standardised risk of 0 has no interval on the log scale
   | 'counts-rows-only'; // with `population` every interval comes from the counts rows
 
 export interface ReadingInterval extends Interval {
@@ -84,6 +100,10 @@ export interface Reading {
   readonly atLimit: number | null;
   /** The exact limits that stand beside the interval where a group has fewer than five cases. */
   readonly exactBeside: Interval | null;
+  /** Index of the layer that it is about; `null` where it is about no single one. */
+  readonly layer: number | null;
+  /** The test behind a p value, which is then the estimate. */
+  readonly test: { readonly name: string; readonly statistic: number; readonly degrees: number } | null;
 }
 
 /** A reading with everything that was not given left empty. Written out, since spreading costs more than the statistics do. */
@@ -101,5 +121,7 @@ export function reading(parts: Pick<Reading, 'id' | 'of' | 'estimate'> & Partial
     ranges: parts.ranges ?? null,
     atLimit: parts.atLimit ?? null,
     exactBeside: parts.exactBeside ?? null,
+    layer: parts.layer ?? null,
+    test: parts.test ?? null,
   };
 }

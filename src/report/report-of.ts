@@ -5,6 +5,7 @@ import type { Report } from './report.ts';
 import { ratesReport } from './rates-report.ts';
 import { sharesReport } from './shares-report.ts';
 import { statedReport } from './stated-report.ts';
+import { strataReport } from './strata-report.ts';
 
 /** Works out the report of a question. */
 export function reportOf(question: Question): Report {
@@ -17,6 +18,8 @@ export function reportOf(question: Question): Report {
       return statedReport(question);
     case 'rates':
       return ratesReport(question);
+    case 'strata':
+      return strataReport(question);
     case 'bare-counts':
       return bareCountsReport(question);
   }

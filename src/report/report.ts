@@ -54,6 +54,8 @@ export function directionOf(reading: Reading): Direction {
 /** Which way the figures point. With `exact` a ratio of counts has no interval of its own; the odds ratio's exact one then decides. */
 export function shownDirection(report: Report, ratioReading: Reading): Direction {
   if (ratioReading.whyNoInterval !== 'no-exact-form') return directionOf(ratioReading);
-  const odds = readingsOf(report, 'odds-ratio').find(({ of }) => of === ratioReading.of);
+  const odds = [...readingsOf(report, 'odds-ratio'), ...readingsOf(report, 'pooled-odds-ratio')].find(
+    ({ of }) => of === ratioReading.of,
+  );
   return directionOf(odds ?? ratioReading);
 }

@@ -158,15 +158,19 @@ describe('the readings of one figure', () => {
   it('agree about no difference in every scenario', () => {
     for (const line of Object.values(scenarios)) {
       const { readings } = reportFor(line);
-      for (const ratio of readings.filter(({ id, interval }) => id === 'risk-ratio' && interval !== null)) {
+      const layered = readings.some(({ layer }) => layer !== null);
+      const ratios = layered
+        ? ['pooled-risk-ratio', 'pooled-rate-ratio']
+        : ['risk-ratio', 'rate-ratio', 'count-ratio'];
+      for (const ratio of readings.filter(({ id, interval }) => ratios.includes(id) && interval !== null)) {
         const shown = directionOf(ratio) !== 'none-shown';
         for (const other of readings.filter(
           ({ of, against }) => of === ratio.of && against === ratio.against,
         )) {
           const none =
-            other.id === 'odds-ratio'
+            other.id === 'odds-ratio' || other.id === 'pooled-odds-ratio'
               ? 1
-              : other.id === 'risk-difference' ||
+              : /^(?:pooled-)?(?:risk|rate)-difference$/.test(other.id) ||
                   other.id === 'relative-change' ||
                   other.id.endsWith('fraction')
                 ? 0

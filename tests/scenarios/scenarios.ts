@@ -33,6 +33,17 @@ export const scenarios = {
   'delays-over-two-times': 'from 412 in 31 days to 530 in 28 days',
   'late-crossings-in-percent': 'from 4.4% to 5.2%',
   'late-crossings-last-year': 'last year: 412 of 10,400 crossings vs this year: 530 of 12,900 crossings',
+  'layers-of-age':
+    'by age: under 40: night 30 of 900 vs day 200 of 9,000 | 40 and over: night 160 of 2,000 vs day 6 of 100',
+  'layers-turned-round':
+    'by age: under 40: night 3 of 900 vs day 40 of 9,000 | 40 and over: night 80 of 2,000 vs day 6 of 100',
+  'layers-turned-round-and-shown':
+    'by depot: north: new bus 30 of 1,000 vs old bus 540 of 9,000 | south: new bus 1,200 of 9,000 vs old bus 270 of 1,000',
+  'layers-of-rates':
+    'by line: east: new bus 4 in 1,200 days vs old bus 9 in 2,000 days | west: new bus 2 in 900 days vs old bus 6 in 1,500 days',
+  'layers-of-helmets':
+    'by age: under 40: no helmet 12 of 32 cases, 30% of riders | 40 and over: no helmet 32 of 43 cases, 45% of riders',
+  'layers-too-small': 'by ward: north: night 1 of 4 vs day 2 of 9 | south: night 3 of 12 vs day 1 of 14',
   'stated-percentages': '4.2% vs 2.6%',
   'stated-frequencies': '1 in 250 vs 1 in 400',
   'bare-counts': 'night 18 vs day 9',

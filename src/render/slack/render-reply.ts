@@ -24,7 +24,8 @@ const buttonWords = {
 /** The full answer, for the thread: at most 750 characters before the buttons for figures of usual length. */
 export function renderReply(report: Report, context: CheckContext): SlackMessage {
   const words = tell(report);
-  // Three or more groups have a table instead; their sentences stand with the readings.
+  // Three or more groups, and layers, have a table instead; a large one and their sentences stand with the readings.
+  const shownTable = tableShown(words);
   const post = words.table === null ? words.posts[0] : undefined;
   const lacking = lackingText(report);
   const careful = words.cautions.map(({ text }) => text).join(' ');
@@ -38,7 +39,7 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
     paragraph(plain([words.readAs, ...words.remarks].join(' '))),
     ...(post === undefined ? [] : [paragraph(bold('To post:')), quotation(postLine(post))]),
     paragraph(bold('Careful: '), plain(careful)),
-    ...(words.table === null ? [] : [table(words.table)]),
+    ...(shownTable === null ? [] : [table(shownTable)]),
     paragraph(plain([lacking, words.limits].filter((part) => part !== null).join(' '))),
     paragraph(plain(foot), ...asker),
     buttons(
@@ -57,12 +58,19 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
     ...words.remarks,
     ...(post === undefined ? [] : [`To post: ${postLine(post)}`]),
     `Careful: ${careful}`,
-    ...(words.table ?? []).map((row) => row.join('; ')),
+    ...(shownTable ?? []).map((row) => row.join('; ')),
     ...(lacking === null ? [] : [lacking]),
     words.limits,
   ].join('\n');
   const end = context.number === null ? foot : `${foot}<@${context.askedBy}>.`;
   return { text: `${withinText(escape(text))}\n${end}`, blocks };
+}
+
+/** How many characters of a table the answer itself shows; a larger one stands behind "All readings". */
+const tableLength = 330;
+
+function tableShown({ table: rows }: Telling): Telling['table'] {
+  return rows !== null && rows.flat().join('').length <= tableLength ? rows : null;
 }
 
 /** One of the parts behind the answer's buttons, for the person who pressed. */
@@ -90,6 +98,9 @@ function partLines(
       return {
         title: 'All readings',
         lines: [
+          ...(tableShown(words) === null
+            ? (words.table ?? []).map((row) => row.filter((cell) => cell !== '').join('; '))
+            : []),
           ...words.rows.map(({ name, value }) => `${name}: ${value}`),
           ...words.posts.slice(words.table === null ? 1 : 0).map((post) => `To post: ${postLine(post)}`),
           ...shortLine(words),

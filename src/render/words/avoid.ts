@@ -1,5 +1,6 @@
 import { readingsOf, shownDirection } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
+import { pooledAndCrude } from '../../report/reversal.ts';
 import { capital, cases, Label, label, one } from './labels.ts';
 import { percent, ratio } from './numbers.ts';
 import { quantityText } from './read-as.ts';
@@ -16,6 +17,8 @@ export function avoidFor(report: Report): readonly Avoid[] {
         : [...countsAlone(report), ...difference(report), causal(report)];
     case 'shares':
       return [shareAsRisk(report), ...difference(report), causal(report)];
+    case 'strata':
+      return [...crudeAlone(report), ...difference(report), causal(report)];
     case 'stated':
     case 'rates':
       return [...difference(report), causal(report)];
@@ -46,6 +49,19 @@ function countsAlone(report: Report): Avoid[] {
     {
       because: `It leaves out the totals, ${quantityText(one_.total)} and ${quantityText(other.total)}.`,
       text: `${quantityText(one_.cases)} ${cases(question)} against ${quantityText(other.cases)}.`,
+    },
+  ];
+}
+
+/** The figure that leaves the layers out, where it points elsewhere. */
+function crudeAlone({ question, readings }: Report): Avoid[] {
+  const of = question.groups.findIndex((_, at) => at !== question.reference);
+  const { pooled, crude } = pooledAndCrude(readings, of);
+  if (pooled === null || crude === null || ratio(pooled, 'short') === ratio(crude, 'short')) return [];
+  return [
+    {
+      because: 'All together, the mix of the layers is compared too, not only the groups.',
+      text: `${Label(question, of)}: ${ratio(crude, 'short')} times as often.`,
     },
   ];
 }

@@ -1,3 +1,4 @@
+import type { Question } from '../../../grammar/question.ts';
 import type { CautionId } from '../../report/cautions.ts';
 import { readingsOf } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
@@ -12,6 +13,26 @@ interface CautionEntry {
 
 /** The catalogue of cautions: one or two stand in an answer, chosen by its inputs. */
 export const cautionCatalogue = {
+  reversal: {
+    source: 'Bickel, Hammel & O\u2019Connell 1975, Science 187:398; Julious & Mullee 1994, BMJ 309:1480',
+    text: () =>
+      'All together the figures point the other way, because the groups are mixed differently: the layers compare like with like.',
+  },
+  'layers-too-small': {
+    source: 'design review of the pooled intervals, section 2.2',
+    text: () => 'A layer has fewer than five in a group: such layers are too small to be put together.',
+  },
+  'layers-not-alike': {
+    source: 'Gart & Nam 1988, Biometrics 44:323; Greenland 1987',
+    text: () => 'The layers do not look alike: one ratio for all hides how much they differ.',
+  },
+  'layers-differ-in-mix': {
+    source: 'Maldonado & Greenland 1993, Am. J. Epidemiol. 138:923',
+    text: ({ question }) =>
+      question.kind === 'strata' && question.by !== null
+        ? `The groups differ in ${question.by}: all together the ratio is another one than within the layers.`
+        : 'The groups are mixed differently: all together the ratio is another one than within the layers.',
+  },
   'rows-chosen-by-outcome': {
     source: 'Breslow & Day 1980, Statistical Methods in Cancer Research, vol. 1',
     text: () =>
@@ -98,12 +119,26 @@ function baseRate(report: Report): string {
 }
 
 function fewCases({ question }: Report): string {
-  const few = question.groups.some(
-    (group) => 'cases' in group && group.cases !== null && group.cases.value > 0 && group.cases.value < 5,
-  );
+  const few = casesOf(question).some((count) => count > 0 && count < 5);
   return few
     ? 'Few cases: treat the limits as rough. If these are people in a small place, write "fewer than 5".'
     : 'Few cases: treat the limits as rough.';
+}
+
+/** Every count of cases that the question names. */
+function casesOf(question: Question): readonly number[] {
+  switch (question.kind) {
+    case 'strata':
+      return question.layers.flatMap((layer) => casesOf(layer.question));
+    case 'stated':
+      return [];
+    case 'shares':
+      return question.groups.flatMap(({ cases: count }) => (count === null ? [] : [count.value]));
+    case 'counts':
+    case 'rates':
+    case 'bare-counts':
+      return question.groups.map(({ cases: count }) => count.value);
+  }
 }
 
 function smallRisk({ question, readings }: Report): string {
@@ -114,7 +149,7 @@ function smallRisk({ question, readings }: Report): string {
 }
 
 function coverageAsGiven({ question }: Report): string {
-  if (question.kind !== 'shares') return '';
+  if (question.kind !== 'shares') return 'Coverage is taken as exact, for the same people, place and time.';
   const held = question.groups.find(({ coverageImplied }) => !coverageImplied)?.coverage.text ?? 'Coverage';
   return `${held} is taken as exact, for the same people, place and time.`;
 }

@@ -4,10 +4,12 @@ import { limitsText } from './interval-text.ts';
 import { plainLabel } from './labels.ts';
 import { percent, ratio } from './numbers.ts';
 import { quantityText, rateText } from './read-as.ts';
+import { strataTable } from './strata-words.ts';
 
 /** With three or more groups: what was counted in each, and its ratio against the reference, the header first. */
 export function tableFor(report: Report): readonly (readonly string[])[] | null {
   const { question } = report;
+  if (question.kind === 'strata') return strataTable(report, question);
   if (question.groups.length < 3) return null;
   const reference = plainLabel(question, question.reference);
   const what = question.kind === 'shares' ? 'Cases; coverage' : 'Given';
@@ -33,6 +35,8 @@ export function tableFor(report: Report): readonly (readonly string[])[] | null 
 
 function given({ question }: Report, index: number): string {
   switch (question.kind) {
+    case 'strata':
+      return '';
     case 'counts': {
       const group = question.groups[index];
       if (group === undefined) return '';

@@ -5,11 +5,10 @@ import type { Report } from '../../report/report.ts';
 import { changeText, countedMore, estimateText, levelText, limitsText } from './interval-text.ts';
 import { cases, Label, label, perOne, plainLabel, capital } from './labels.ts';
 import { percent, ratio } from './numbers.ts';
-import { compared, fits, intervalNote, neitherShown } from './ratio-words.ts';
+import { compared, fits, firstLineLength, intervalNote, neitherShown, shorten } from './ratio-words.ts';
 import { manyPer, perExposure } from './rate-words.ts';
 import { quantityText } from './read-as.ts';
-
-const within = 110;
+import { strataHeadline } from './strata-words.ts';
 
 /** The first line of the answer, complete in itself. */
 export function headlineFor(report: Report): string {
@@ -41,6 +40,7 @@ function twoGroups(report: Report, reading: Reading): string {
     const value = reading.estimate === null ? 'without a value' : ratio(reading.estimate, 'short');
     return `Odds ratio ${value} (${note}), ${group} against ${reference}.`;
   }
+  if (question.kind === 'strata') return strataHeadline(report, question, reading);
   const direction = shownDirection(report, reading);
   if (direction === 'none-shown') {
     const what = reading.interval === null ? 'These figures are few' : `These figures fit ${fits(reading)}`;
@@ -111,16 +111,15 @@ function manyGroups(report: Report, ratios: readonly Reading[]): string {
     return `${plainLabel(question, reading.of)} ${value}${limits}`;
   });
   const name =
-    { 'count-ratio': 'Counts', 'percentage-ratio': 'Ratio', 'rate-ratio': 'Rate ratio' }[
-      report.headline as string
-    ] ?? 'Risk ratio';
+    {
+      'count-ratio': 'Counts',
+      'percentage-ratio': 'Ratio',
+      'rate-ratio': 'Rate ratio',
+      'pooled-rate-ratio': 'Rate ratio within layers',
+      'pooled-risk-ratio': 'Risk ratio within layers',
+    }[report.headline as string] ?? 'Risk ratio';
   const line = `${name} against ${reference}: ${each.join(', ')}.`;
-  return line.length <= within
+  return line.length <= firstLineLength
     ? line
     : `${ratios.length} groups against ${reference}: each ratio stands in the table.`;
-}
-
-/** Leaves the words "95% interval" out where the line would otherwise run past what a notification shows. */
-function shorten(line: string): string {
-  return line.length <= within ? line : line.replace(/[\d.]+% interval /, '');
 }

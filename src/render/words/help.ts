@@ -16,7 +16,7 @@ export const helpTopics = {
     title:
       'Type the figure as you were given it. The answer comes in the thread, with every fair reading of it.',
     lines: [
-      'In a thread, write @Divisor and the line. "help counts", and in the same way shares, rates, change, stated and bare-counts, say more.',
+      'In a thread, write @Divisor and the line. "help counts", and in the same way shares, rates, change, strata, stated and bare-counts, say more.',
       clauses,
     ],
     examples: [
@@ -82,6 +82,18 @@ export const helpTopics = {
       'from 41 of 1,000 to 52 of 1,100',
       'from 4.4% to 5.2%',
       '412 last year 530 this year',
+    ],
+  },
+  strata: {
+    title: 'The same groups within layers, such as age or place.',
+    lines: [
+      'One layer a line, or a bar between them. The answer compares within the layers and says so where all together points elsewhere.',
+      clauses,
+    ],
+    examples: [
+      'by age: under 40: night 3 of 900 vs day 40 of 9,000 | 40 and over: night 80 of 2,000 vs day 6 of 100',
+      'by line: east: new bus 4 in 1,200 days vs old bus 9 in 2,000 days | west: new bus 2 in 900 days vs old bus 6 in 1,500 days',
+      'by age: under 40: no helmet 12 of 32 cases, 30% of riders | 40 and over: no helmet 32 of 43 cases, 45% of riders',
     ],
   },
   'bare-counts': {

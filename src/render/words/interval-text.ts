@@ -1,5 +1,5 @@
 import type { Limits, Reading } from '../../report/reading.ts';
-import { amount, changePercent, percent, points, ratio, working } from './numbers.ts';
+import { amount, changePercent, percent, points, probability, ratio, working } from './numbers.ts';
 import type { Digits } from './numbers.ts';
 
 /** "1.5 to 3.7", "up to 2.1", "from 0.72, no upper limit": the limits of a reading in the reading's own unit. */
@@ -19,8 +19,15 @@ export function estimateText(reading: Reading, digits: Digits): string | null {
   if (estimate === null) return null;
   if (reading.id === 'relative-change') return changeText(estimate, digits);
   const text = writer(reading, digits)(estimate);
-  return reading.id === 'risk-difference' || reading.id === 'percentage-difference' ? `${text} points` : text;
+  return pointReadings.has(reading.id) ? `${text} points` : text;
 }
+
+/** Differences of shares, shown in percentage points. */
+const pointReadings: ReadonlySet<Reading['id']> = new Set([
+  'risk-difference',
+  'percentage-difference',
+  'pooled-risk-difference',
+]);
 
 /** Estimate and limits at the long precision of the working, as plain shares and ratios. */
 export function workingText(reading: Reading): string {
@@ -58,6 +65,7 @@ function writer(reading: Reading, digits: Digits): (value: number) => string {
   if (isShare(reading)) return (value) => percent(value, digits);
   switch (reading.id) {
     case 'risk-difference':
+    case 'pooled-risk-difference':
     case 'percentage-difference':
       return (value) => points(value, digits);
     case 'risk-ratio':
@@ -65,12 +73,21 @@ function writer(reading: Reading, digits: Digits): (value: number) => string {
     case 'count-ratio':
     case 'percentage-ratio':
     case 'rate-ratio':
+    case 'crude-risk-ratio':
+    case 'crude-rate-ratio':
+    case 'pooled-risk-ratio':
+    case 'pooled-rate-ratio':
+    case 'pooled-odds-ratio':
+    case 'standardised-risk-ratio':
       return (value) => ratio(value, digits);
     case 'rate':
-    case 'rate-difference': {
+    case 'rate-difference':
+    case 'pooled-rate-difference': {
       const per = reading.per ?? 1;
       return (value) => amount(value * per, digits);
     }
+    case 'homogeneity':
+      return probability;
     default:
       return (value) => amount(value, digits);
   }

@@ -21,7 +21,10 @@ export function plainLabel(question: Question, index: number): string {
   const label = question.groups[index]?.label ?? null;
   if (label !== null)
     return label.length > longest ? `${label.slice(0, longest - 1).trimEnd()}\u2026` : label;
-  if (question.kind === 'shares')
+  if (
+    question.kind === 'shares' ||
+    (question.kind === 'strata' && question.layers[0]?.question.kind === 'shares')
+  )
     return question.groups.length === 2 && index === 1 ? 'the others' : groupName(index);
   return question.groups.length === 1 ? 'this group' : groupName(index);
 }

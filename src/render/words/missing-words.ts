@@ -25,6 +25,8 @@ export function missingText(question: Question, id: MissingId): string {
       return `Were the groups watched for the same time, and could one be counted twice?`;
     case 'counted-twice':
       return `Could one be counted twice, or several ${cases(question)} come at once?`;
+    case 'other-differences':
+      return 'In what else do the groups differ, and are there figures for it?';
     case 'divisor-over-time':
       return 'How many were counted in all, at each of the two times? With that a risk can be given.';
     case 'equally-long':

@@ -81,6 +81,9 @@ export const points = (difference: number, digits: Digits) => beside(difference 
 /** A plain amount (extra cases, one in K, hidden-cause strength), beside 0. */
 export const amount = (value: number, digits: Digits) => beside(value, 0, digits);
 
+/** A p value: two decimals, three below 0.1, and never 0. */
+export const probability = (p: number) => (p < 0.001 ? 'below 0.001' : fixed(p, p < 0.1 ? 3 : 2));
+
 /**
  * A ratio as a relative change in per cent, unsigned: exactly what the printed ratio says, so that 2.3 times is 130% and
  * never 132%.

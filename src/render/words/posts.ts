@@ -11,6 +11,7 @@ import { noneShown } from './none-shown.ts';
 import { manyPer } from './rate-words.ts';
 import { ratesPosts } from './rates-posts.ts';
 import { quantityText, rateText } from './read-as.ts';
+import { strataPosts } from './strata-words.ts';
 import type { Post } from './telling.ts';
 
 const postLength = 280;
@@ -19,6 +20,7 @@ const shortLength = 70;
 /** The sentences that may be posted, one for each fair reading, the headline's first. None claims a difference that the interval does not show. */
 export function postsFor(report: Report): readonly Post[] {
   const { question } = report;
+  if (question.kind === 'strata') return strataPosts(report, question);
   if (question.groups.length > 2) return report.headline === 'odds-ratio' ? [] : manyGroups(report);
   switch (question.kind) {
     case 'counts':
@@ -42,7 +44,8 @@ export function shortPost(report: Report): string | null {
   const { question } = report;
   const [reading] = readingsOf(report, report.headline);
   if (reading?.estimate == null || reading.against === null || question.groups.length !== 2) return null;
-  if (question.kind === 'bare-counts' || report.headline === 'odds-ratio') return null;
+  if (question.kind === 'bare-counts' || question.kind === 'strata' || report.headline === 'odds-ratio')
+    return null;
   if (shownDirection(report, reading) === 'none-shown') return null;
   const { words, joiner, figure } = comparison(
     reading.estimate,

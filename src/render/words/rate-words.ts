@@ -1,12 +1,12 @@
-import type { Question, RatesQuestion } from '../../../grammar/question.ts';
+import type { Question } from '../../../grammar/question.ts';
 import { cases, one } from './labels.ts';
 import { fixed } from './numbers.ts';
 
 /** "many delays per bus-day": what the rates of two groups are compared in. */
-export function manyPer(question: RatesQuestion): string {
+export function manyPer(question: Question): string {
   const single = one(question);
   return single === null
-    ? `many ${cases(question)} for the time watched`
+    ? `many ${cases(question)} for ${question.kind === 'rates' ? 'the time watched' : 'its size'}`
     : `many ${cases(question)} per ${single}`;
 }
 

@@ -19,6 +19,7 @@ export function intervalNote(reading: Reading): string {
     case 'no-counts':
     case 'given':
     case 'spans-none':
+    case 'no-cases-at-all':
     case null:
       return 'no interval without counts';
   }
@@ -85,3 +86,11 @@ export function fits(reading: Reading): string {
 }
 
 export const neitherShown = 'they do not show a difference, nor that there is none';
+
+/** How much of the first line a notification shows. */
+export const firstLineLength = 110;
+
+/** Leaves the words "95% interval" out where the line would otherwise run past what a notification shows. */
+export function shorten(line: string): string {
+  return line.length <= firstLineLength ? line : line.replace(/[\d.]+% interval /, '');
+}

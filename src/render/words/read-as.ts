@@ -39,6 +39,14 @@ export function readAs(question: Question): string {
     }
     case 'stated':
       return `Read as: ${question.groups.map(({ share }, index) => `${named(index)} ${share.text}`).join('; ')}, as stated, without counts${against}.`;
+    case 'strata': {
+      const { by, layers } = question;
+      const what = { counts: 'counts', rates: 'rates', shares: 'cases and coverage' }[
+        layers[0]?.question.kind ?? 'counts'
+      ];
+      const names = layers.map(({ label }, index) => label ?? `layer ${index + 1}`).join(', ');
+      return `Read as: ${question.groups.map((_, index) => named(index)).join(' and ')}, ${what} within ${layers.length} layers${by === null ? '' : ` of ${by}`} (${shortened(names)})${against}.`;
+    }
     case 'rates': {
       const stated = question.groups.some(({ asStated }) => asStated) ? ', as stated, without counts' : '';
       return `Read as: ${question.groups.map((_, index) => `${named(index)} ${rateText(question, index)}`).join('; ')}${stated}${against}.`;
@@ -49,6 +57,9 @@ export function readAs(question: Question): string {
     }
   }
 }
+
+/** A long list of names is cut: the table has all of them. */
+const shortened = (names: string) => (names.length <= 80 ? names : `${names.slice(0, 79).trimEnd()}\u2026`);
 
 /** "14 in 5,200 bus-days", "3 per 1,000 bus-days", "5 per week". */
 export function rateText(question: RatesQuestion, index: number): string {

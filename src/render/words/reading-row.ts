@@ -6,6 +6,7 @@ import { cases, plainLabel } from './labels.ts';
 import { amount, beside, fixed } from './numbers.ts';
 import { perExposure } from './rate-words.ts';
 import { quantityText } from './read-as.ts';
+import { layerName, summed } from './strata-words.ts';
 import type { ReadingRow } from './telling.ts';
 
 /** One reading in words: its name, its value with its interval, and how it was worked out. */
@@ -24,6 +25,8 @@ export function readingRow(report: Report, reading: Reading): ReadingRow {
 function nameOf(question: Question, reading: Reading, fewer: boolean): string {
   const group = plainLabel(question, reading.of);
   const against = reading.against === null ? '' : ` against ${plainLabel(question, reading.against)}`;
+  const within =
+    reading.layer === null || question.kind !== 'strata' ? '' : ` in ${layerName(question, reading.layer)}`;
   switch (reading.id) {
     case 'risk':
       return question.kind === 'stated' ? `As stated, ${group}` : `Risk, ${group}`;
@@ -32,7 +35,7 @@ function nameOf(question: Question, reading: Reading, fewer: boolean): string {
     case 'population-share':
       return `Coverage, ${group}`;
     case 'risk-ratio':
-      return `Risk ratio, ${group}${against}`;
+      return `Risk ratio${within}, ${group}${against}`;
     case 'relative-change':
       return `Relative change, ${group}${against}`;
     case 'risk-difference':
@@ -54,7 +57,25 @@ function nameOf(question: Question, reading: Reading, fewer: boolean): string {
     case 'rate':
       return `Rate, ${group}`;
     case 'rate-ratio':
-      return `Rate ratio, ${group}${against}`;
+      return `Rate ratio${within}, ${group}${against}`;
+    case 'crude-risk-ratio':
+      return `Risk ratio all together, ${group}${against}`;
+    case 'crude-rate-ratio':
+      return `Rate ratio all together, ${group}${against}`;
+    case 'pooled-risk-ratio':
+      return `Pooled risk ratio, ${group}${against}`;
+    case 'pooled-rate-ratio':
+      return `Pooled rate ratio, ${group}${against}`;
+    case 'pooled-risk-difference':
+      return `Pooled risk difference, ${group}${against}`;
+    case 'pooled-rate-difference':
+      return `Pooled rate difference, ${group}${against}`;
+    case 'pooled-odds-ratio':
+      return `Pooled odds ratio, ${group}${against}`;
+    case 'standardised-risk-ratio':
+      return `Standardised risk ratio, ${group}${against}`;
+    case 'homogeneity':
+      return `Are the layers alike? (p value), ${group}${against}`;
     case 'rate-difference':
       return `Rate difference, ${group}${against}`;
     case 'count-ratio':
@@ -84,6 +105,7 @@ function valueOf(question: Question, reading: Reading): string {
 
 /** What a rate, and one case for every K of exposure, are counted in. */
 function unitOf(question: Question, { id, per }: Reading): string {
+  if (id === 'pooled-rate-difference') return ` ${perExposure(question, per ?? 1)}`;
   if (question.kind !== 'rates') return '';
   if (id === 'rate' || id === 'rate-difference') return ` ${perExposure(question, per ?? 1)}`;
   return id === 'one-extra-per' && question.unit !== null ? ` ${question.unit}` : '';
@@ -117,6 +139,8 @@ export function whyText(why: NoInterval): string {
       return 'as given, taken as exact';
     case 'no-exact-form':
       return 'no exact interval of this reading; leave out `exact` for the score interval';
+    case 'no-cases-at-all':
+      return 'no interval: a standardised risk is 0';
     case 'spans-none':
       return 'the interval of the difference includes none';
     case 'counts-rows-only':
@@ -143,7 +167,11 @@ function limitPart(reading: Reading): string | null {
 }
 
 /** The formula with the typed numbers in it. */
-function formulaOf(question: Question, reading: Reading): string {
+function formulaOf(asked: Question, reading: Reading): string {
+  const question =
+    reading.layer === null || asked.kind !== 'strata'
+      ? asked
+      : (asked.layers[reading.layer]?.question ?? asked);
   const own = parts(question, reading.of);
   const other = reading.against === null ? null : parts(question, reading.against);
   const pair = other === null ? '' : `${own.risk} / (${other.risk})`;
@@ -164,6 +192,29 @@ function formulaOf(question: Question, reading: Reading): string {
     case 'percentage-ratio':
     case 'rate-ratio':
       return pair;
+    case 'crude-risk-ratio':
+    case 'crude-rate-ratio':
+      return asked.kind === 'strata'
+        ? `the sums: ${summed(asked, reading.of)}; ${summed(asked, reading.against ?? 0)}`
+        : '';
+    case 'pooled-risk-ratio':
+      return asked.kind === 'strata' && asked.layers[0]?.question.kind === 'shares'
+        ? 'the root t of sum(x1 - n t o/(1 + t o)), o the odds of coverage'
+        : 'sum(x1 n2/N) / sum(x2 n1/N)';
+    case 'pooled-rate-ratio':
+      return 'the root t of sum(x1 - n t o/(1 + t o)), o = T1/T2';
+    case 'pooled-risk-difference':
+      return 'sum(x1 n2/N - x2 n1/N) / sum(n1 n2/N)';
+    case 'pooled-rate-difference':
+      return 'sum(x1 T2/T - x2 T1/T) / sum(T1 T2/T)';
+    case 'pooled-odds-ratio':
+      return 'the root t of sum(x1 - E(x1; t)), E given the margins';
+    case 'standardised-risk-ratio':
+      return 'sum(N p1) / sum(N p2), N both groups of the layer';
+    case 'homogeneity':
+      return reading.test === null
+        ? ''
+        : `chi-squared ${fixed(reading.test.statistic, 2)} on ${reading.test.degrees} df`;
     case 'relative-change':
       return 'ratio - 1';
     case 'risk-difference':
@@ -227,6 +278,8 @@ function parts(question: Question, index: number): FormulaParts {
       const group = question.groups[index];
       return { ...empty, risk: group === undefined ? '' : group.share.text };
     }
+    case 'strata':
+      return empty;
     case 'rates': {
       const group = question.groups[index];
       if (group === undefined) return empty;
@@ -264,10 +317,21 @@ const sources = {
   'exact-rate-ratio': 'exact conditional, as the odds of the Clopper-Pearson limits (1934)',
   'rate-difference-score': 'Miettinen-Nurminen score for rates (1985)',
   'equal-times-score': 'score of the rate ratio over two times of equal length (Miettinen & Nurminen 1985)',
+  'pooled-score':
+    'score with Mantel-Haenszel weights (Mantel & Haenszel 1959; Miettinen & Nurminen 1985, strata)',
+  'pooled-conditional-score': 'conditional score (Gart 1970; Mehta, Patel & Gray 1985)',
+  'pooled-conditional-exact': 'exact conditional (Gart 1970)',
+  'pooled-shares-score': 'score (Farrington 1993)',
+  'pooled-shares-exact': 'exact tails of the sum of binomial counts (Farrington 1993)',
+  'log-delta': 'delta method on the log scale, weights as known',
 } satisfies Record<IntervalMethod, string>;
 
 /** The name of an interval's method, with its source. */
 function methodOf(reading: Reading): string {
+  if (reading.id === 'homogeneity')
+    return reading.test?.name === 'deviance'
+      ? 'Deviance (Farrington 1993); misses most real differences'
+      : 'Gart & Nam 1988; misses most real differences';
   if (reading.id === 'hidden-cause-strength') return 'VanderWeele & Ding 2017';
   if (reading.interval === null) return '';
   return methodText(reading.interval);

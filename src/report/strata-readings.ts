@@ -1,0 +1,315 @@
+import type { Layer, Quantity, StrataQuestion } from '../../grammar/question.ts';
+import { rateRatioHomogeneity, riskRatioHomogeneity, shareRatioHomogeneity } from '../stats/homogeneity.ts';
+import type { ChiSquaredTest } from '../stats/homogeneity.ts';
+import type { Interval, TwoGroups } from '../stats/interval.ts';
+import {
+  exactPooledOddsRatioInterval,
+  pooledOddsRatio,
+  pooledOddsRatioInterval,
+} from '../stats/pooled-odds-ratio.ts';
+import { pooledRateDifference, pooledRateDifferenceInterval } from '../stats/pooled-rate-difference.ts';
+import { pooledRiskDifference, pooledRiskDifferenceInterval } from '../stats/pooled-risk-difference.ts';
+import { pooledRiskRatio, pooledRiskRatioInterval } from '../stats/pooled-risk-ratio.ts';
+import {
+  exactPooledRateRatioInterval,
+  exactPooledShareRatioInterval,
+  pooledRateRatio,
+  pooledRateRatioInterval,
+  pooledShareRatio,
+  pooledShareRatioInterval,
+} from '../stats/pooled-share-ratio.ts';
+import type { RatePair } from '../stats/rate-ratio.ts';
+import type { SharePair } from '../stats/share-ratio.ts';
+import { standardisedRisks, standardisedRiskRatioInterval } from '../stats/standardised-risk-ratio.ts';
+import type { CountsOptions } from './counts-readings.ts';
+import { pairReadings } from './counts-readings.ts';
+import { isRange } from './corners.ts';
+import { ratioFollowers, relativeChange } from './ratio-followers.ts';
+import { ratePairReadings } from './rates-readings.ts';
+import { reading } from './reading.ts';
+import { shareRatioReadings } from './shares-readings.ts';
+import type { IntervalMethod, NoInterval, Reading, ReadingId } from './reading.ts';
+
+/** A group and its reference within each layer, with every hidden count at its most or least favourable end. */
+interface Pairs<T> {
+  readonly middle: readonly T[];
+  /** The group's hidden counts at their lowest and the reference's at their highest: every ratio is then at its lowest. */
+  readonly lowest: readonly T[];
+  readonly highest: readonly T[];
+  readonly hidden: boolean;
+}
+
+/** What is pooled over the layers: each measure with its interval, from one null test wherever there is one. */
+interface Measure<T> {
+  readonly id: ReadingId;
+  readonly estimate: (pairs: readonly T[]) => number | null;
+  readonly limits: ((pairs: readonly T[], level: number) => Interval | null) | null;
+  readonly method: IntervalMethod;
+  readonly per?: number;
+}
+
+interface Place {
+  readonly of: number;
+  readonly against: number;
+}
+
+/** The ratio of one pair of groups: in every layer, all together, pooled and standardised, and whether the layers are alike. */
+export function layeredReadings(
+  question: StrataQuestion,
+  place: Place,
+  per: number,
+  options: CountsOptions,
+): Reading[] {
+  switch (question.layers[0]?.question.kind) {
+    case 'counts':
+      return countsReadings(question.layers, place, options);
+    case 'rates':
+      return ratesReadings(question.layers, place, per, options);
+    case 'shares':
+      return sharesReadings(question.layers, place, options);
+    case undefined:
+      return [];
+  }
+}
+
+function countsReadings(layers: readonly Layer[], place: Place, options: CountsOptions): Reading[] {
+  const pairs = pairsOf(layers, place, (own, reference, pick) =>
+    'total' in own && 'total' in reference
+      ? ({
+          cases: pick.own(own.cases),
+          total: own.total.value,
+          referenceCases: pick.reference(reference.cases),
+          referenceTotal: reference.total.value,
+        } satisfies TwoGroups)
+      : null,
+  );
+  const rows = [place.of, place.against].map((group) => ({
+    cases: summed(layers, (layer) =>
+      layer.question.kind === 'counts' ? layer.question.groups[group]?.cases : null,
+    ),
+    total: summed(layers, (layer) =>
+      layer.question.kind === 'counts' ? layer.question.groups[group]?.total : null,
+    ),
+  }));
+  const crude = pairReadings(rows, 0, 1, options)
+    .filter(({ id }) => id === 'risk-ratio')
+    .map((ratio) => ({ ...ratio, ...place, id: 'crude-risk-ratio' as const }));
+  const pool = pooled(pairs, place, options);
+  const ratio = pool({
+    id: 'pooled-risk-ratio',
+    estimate: pooledRiskRatio,
+    limits: options.exact ? null : pooledRiskRatioInterval,
+    method: 'pooled-score',
+  });
+  return [
+    ratio,
+    relativeChange(ratio),
+    ...crude,
+    pool({
+      id: 'pooled-risk-difference',
+      estimate: pooledRiskDifference,
+      limits: options.exact ? null : pooledRiskDifferenceInterval,
+      method: 'pooled-score',
+    }),
+    pool({
+      id: 'pooled-odds-ratio',
+      estimate: pooledOddsRatio,
+      limits: options.exact && !pairs.hidden ? exactPooledOddsRatioInterval : pooledOddsRatioInterval,
+      method: options.exact && !pairs.hidden ? 'pooled-conditional-exact' : 'pooled-conditional-score',
+    }),
+    pool({
+      id: 'standardised-risk-ratio',
+      estimate: (strata) => standardisedRisks(strata, 'whole').ratio,
+      limits: (strata, level) => standardisedRiskRatioInterval(strata, 'whole', level),
+      method: 'log-delta',
+    }),
+    ...alike(riskRatioHomogeneity(pairs.middle), place, 'Gart-Nam'),
+    ...ratioFollowers(ratio),
+    ...inLayers(layers, place, options),
+  ];
+}
+
+function ratesReadings(
+  layers: readonly Layer[],
+  place: Place,
+  per: number,
+  options: CountsOptions,
+): Reading[] {
+  const pairs = pairsOf(layers, place, (own, reference, pick) =>
+    'exposure' in own && 'exposure' in reference
+      ? ({
+          cases: pick.own(own.cases),
+          exposure: own.exposure.value,
+          referenceCases: pick.reference(reference.cases),
+          referenceExposure: reference.exposure.value,
+        } satisfies RatePair)
+      : null,
+  );
+  const crude = pooled(
+    {
+      ...pairs,
+      middle: [total(pairs.middle)],
+      lowest: [total(pairs.lowest)],
+      highest: [total(pairs.highest)],
+    },
+    place,
+    options,
+  );
+  const pool = pooled(pairs, place, options);
+  const exact = options.exact && !pairs.hidden;
+  const limits = exact ? exactPooledRateRatioInterval : pooledRateRatioInterval;
+  const method = exact ? 'pooled-shares-exact' : 'pooled-shares-score';
+  const ratio = pool({ id: 'pooled-rate-ratio', estimate: pooledRateRatio, limits, method });
+  return [
+    ratio,
+    relativeChange(ratio),
+    crude({
+      id: 'crude-rate-ratio',
+      estimate: pooledRateRatio,
+      limits,
+      method: exact ? 'exact-rate-ratio' : 'rate-ratio-score',
+    }),
+    pool({
+      id: 'pooled-rate-difference',
+      estimate: pooledRateDifference,
+      limits: options.exact ? null : pooledRateDifferenceInterval,
+      method: 'pooled-score',
+      per,
+    }),
+    ...alike(rateRatioHomogeneity(pairs.middle), place, 'deviance'),
+    ...ratioFollowers(ratio),
+    ...inLayers(layers, place, options),
+  ];
+}
+
+const total = (pairs: readonly RatePair[]): RatePair =>
+  pairs.reduce((sum, pair) => ({
+    cases: sum.cases + pair.cases,
+    exposure: sum.exposure + pair.exposure,
+    referenceCases: sum.referenceCases + pair.referenceCases,
+    referenceExposure: sum.referenceExposure + pair.referenceExposure,
+  }));
+
+function sharesReadings(layers: readonly Layer[], place: Place, options: CountsOptions): Reading[] {
+  const pairs = pairsOf(layers, place, (own, reference, pick) =>
+    'coverage' in own && 'coverage' in reference && own.cases !== null && reference.cases !== null
+      ? ({
+          cases: pick.own(own.cases),
+          referenceCases: pick.reference(reference.cases),
+          coverage: own.coverage.value,
+          referenceCoverage: reference.coverage.value,
+        } satisfies SharePair)
+      : null,
+  );
+  const exact = options.exact && !pairs.hidden;
+  const ratio = pooled(
+    pairs,
+    place,
+    options,
+  )({
+    id: 'pooled-risk-ratio',
+    estimate: pooledShareRatio,
+    limits: exact ? exactPooledShareRatioInterval : pooledShareRatioInterval,
+    method: exact ? 'pooled-shares-exact' : 'pooled-shares-score',
+  });
+  return [
+    ratio,
+    relativeChange(ratio),
+    ...alike(shareRatioHomogeneity(pairs.middle), place, 'deviance'),
+    ...ratioFollowers(ratio),
+    ...inLayers(layers, place, options),
+  ];
+}
+
+type AnyGroup = Layer['question']['groups'][number];
+interface Pick {
+  readonly own: (cases: Quantity) => number;
+  readonly reference: (cases: Quantity) => number;
+}
+
+function pairsOf<T>(
+  layers: readonly Layer[],
+  { of, against }: Place,
+  make: (own: AnyGroup, reference: AnyGroup, pick: Pick) => T | null,
+): Pairs<T> {
+  const each = (pick: Pick) =>
+    layers.flatMap(({ question: { groups } }) => {
+      const [own, reference] = [groups[of], groups[against]];
+      const pair = own === undefined || reference === undefined ? null : make(own, reference, pick);
+      return pair === null ? [] : [pair];
+    });
+  const at = (end: 'low' | 'high') => (cases: Quantity) => (isRange(cases) ? cases[end] : cases.value);
+  const value = (cases: Quantity) => cases.value;
+  return {
+    middle: each({ own: value, reference: value }),
+    lowest: each({ own: at('low'), reference: at('high') }),
+    highest: each({ own: at('high'), reference: at('low') }),
+    hidden: layers.some(({ question }) =>
+      question.groups.some(({ cases }) => cases !== null && isRange(cases)),
+    ),
+  };
+}
+
+/** Pools one measure; where a count is hidden the interval is the outermost one over everything it may be. */
+function pooled<T>(pairs: Pairs<T>, place: Place, { level }: CountsOptions) {
+  return ({ id, estimate, limits, method, per }: Measure<T>): Reading => {
+    const value = estimate(pairs.middle);
+    const lowest = limits?.(pairs.lowest, level) ?? null;
+    const highest = pairs.hidden ? (limits?.(pairs.highest, level) ?? null) : lowest;
+    const why: NoInterval | null =
+      limits === null ? 'no-exact-form' : lowest === null ? 'no-cases-at-all' : null;
+    return reading({
+      id,
+      ...place,
+      estimate: value,
+      unbounded: value === null && lowest !== null && (lowest.low ?? 0) > 0,
+      interval:
+        lowest === null || highest === null
+          ? null
+          : { low: lowest.low, high: highest.high, level, method, envelope: pairs.hidden },
+      whyNoInterval: why,
+      per: per ?? null,
+    });
+  };
+}
+
+function alike(test: ChiSquaredTest | null, place: Place, name: 'Gart-Nam' | 'deviance'): Reading[] {
+  if (test === null) return [];
+  const { statistic, degrees, pValue } = test;
+  return [reading({ id: 'homogeneity', ...place, estimate: pValue, test: { name, statistic, degrees } })];
+}
+
+/** The ratio within every layer. */
+function inLayers(layers: readonly Layer[], place: Place, options: CountsOptions): Reading[] {
+  return layers.flatMap(({ question }, layer) =>
+    ratioWithin(question, place, options).map((ratio) => ({ ...ratio, layer })),
+  );
+}
+
+function ratioWithin(question: Layer['question'], { of, against }: Place, options: CountsOptions): Reading[] {
+  switch (question.kind) {
+    case 'counts':
+      return pairReadings(question.groups, of, against, options).filter(({ id }) => id === 'risk-ratio');
+    case 'rates':
+      return ratePairReadings(question.groups, of, against, 1, options).filter(
+        ({ id }) => id === 'rate-ratio',
+      );
+    case 'shares':
+      return shareRatioReadings(question, of, options).filter(({ id }) => id === 'risk-ratio');
+  }
+}
+
+/** The sum over all layers, with what the ranges of its parts allow. */
+function summed(layers: readonly Layer[], pick: (layer: Layer) => Quantity | null | undefined): Quantity {
+  const parts = layers.map(pick).filter((quantity) => quantity != null);
+  const sum = (end: 'value' | 'low' | 'high') => parts.reduce((all, quantity) => all + quantity[end], 0);
+  const precisions = parts.map(({ precision }) => precision);
+  return {
+    text: String(sum('value')),
+    value: sum('value'),
+    low: sum('low'),
+    high: sum('high'),
+    precision: precisions.includes('range') ? 'range' : precisions.includes('rounded') ? 'rounded' : 'exact',
+    span: parts[0]?.span ?? { from: 0, to: 0 },
+  };
+}
