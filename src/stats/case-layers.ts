@@ -104,14 +104,19 @@ export function logRatioOfLayers(layers: CaseLayers): number {
   return low === high ? low : bracketedRoot(gap, low, high);
 }
 
-/** The lower score limit of the ratio: the outermost root. */
-export function lowerScoreLimit(layers: CaseLayers, level: number): number {
+/**
+ * The lower score limit of the ratio: the outermost root.
+ *
+ * @param ownSide where the score rejects a ratio of 1, only the estimate's side of 1 is searched
+ */
+export function lowerScoreLimit(layers: CaseLayers, level: number, ownSide: boolean): number {
   const z = criticalValue(level);
   if (layers.cases === 0) return 0;
   const score = (logRatio: number) => {
     const { gap, variance } = caseExcess(layers, Math.exp(logRatio));
     return guardedCounts(gap, variance, z);
   };
-  const root = outermostRoot(score, -600, layers.referenceCases === 0 ? 600 : logRatioOfLayers(layers));
+  const far = ownSide && score(0).value > 0 ? 0 : -600;
+  const root = outermostRoot(score, far, layers.referenceCases === 0 ? 600 : logRatioOfLayers(layers));
   return root === null ? 0 : Math.exp(root);
 }

@@ -29,7 +29,8 @@ export function pooledRateDifference(strata: readonly RatePair[]): number {
  * difference d in each layer. It excludes 0 exactly where the pooled rate ratio's interval excludes 1 (one test at 0).
  *
  * @param level confidence level as a share, in [0.5, 0.9999]
- * @returns both limits, always; the outermost roots where the statistic is not monotone
+ * @returns both limits, always; the outermost roots where the statistic is not monotone, and where it rejects 0 itself those on
+ *   the estimate's side of 0
  *
  * Miettinen & Nurminen 1985 (Statistics in Medicine 4:213), rates and section on strata. Accuracy: 1e-12 of the larger of the
  * limit and the width.
@@ -57,7 +58,7 @@ function lowerLimit(strata: readonly RatePair[], z: number): number {
     strata,
     (pair) => (weightOf(pair) / weights) ** 2 * constrainedVariance(pair, estimate),
   );
-  const far = estimate - 2 * z * (z * outward + Math.sqrt(atEstimate));
+  const far = score(0).value > 0 ? 0 : estimate - 2 * z * (z * outward + Math.sqrt(atEstimate));
   return outermostRoot(score, far, estimate) ?? estimate;
 }
 

@@ -48,9 +48,12 @@ export function pooledRateRatio(strata: readonly RatePair[]): number | null {
   return ratioOfLayers(layersOfRates(strata));
 }
 
-/** Its score interval. */
+/**
+ * Its score interval. Where the equation has several roots and the score rejects 1, the limits are on the estimate's side of 1, so
+ * that the rate difference never says otherwise.
+ */
 export function pooledRateRatioInterval(strata: readonly RatePair[], level: number): Interval {
-  return scoreIntervalOfLayers(layersOfRates(strata), level);
+  return scoreIntervalOfLayers(layersOfRates(strata), level, true);
 }
 
 /** Its exact interval. */
@@ -64,9 +67,10 @@ export function ratioOfLayers(layers: CaseLayers): number | null {
   return layers.cases === 0 ? 0 : Math.exp(logRatioOfLayers(layers));
 }
 
-export function scoreIntervalOfLayers(layers: CaseLayers, level: number): Interval {
-  const low = lowerScoreLimit(layers, level);
-  const mirrored = lowerScoreLimit(swappedLayers(layers), level);
+/** The score interval of the same, from the outermost roots; `ownSide` as for `lowerScoreLimit`. */
+export function scoreIntervalOfLayers(layers: CaseLayers, level: number, ownSide = false): Interval {
+  const low = lowerScoreLimit(layers, level, ownSide);
+  const mirrored = lowerScoreLimit(swappedLayers(layers), level, ownSide);
   return { low, high: mirrored === 0 ? null : 1 / mirrored };
 }
 
@@ -85,6 +89,6 @@ function exactLowerLimit(layers: CaseLayers, level: number): number {
     mode: (t: number) => all * ((t * odds) / (1 + t * odds)),
     up: (u: number) => ((all - u) / (u + 1)) * odds,
   }));
-  const guess = ratioOfLayers(layers) ?? lowerScoreLimit(layers, level);
+  const guess = ratioOfLayers(layers) ?? lowerScoreLimit(layers, level, false);
   return lowerTailLimit(counts, layers.cases, guess, level);
 }
