@@ -79,6 +79,10 @@ export const messages = {
     `One layer has ${one}, another ${other}. Each layer needs the same groups, in the same order and unit.`,
   'same-layer-twice': (name: string) => `The layer ${name} stands twice. Give each layer its own name.`,
   'too-many-layers': (most: string) => `There are more than ${most} layers. Put small ones together.`,
+  'total-not-sum': (name: string, sums: string) =>
+    `The row ${name} is not the sum of the others, which is ${sums}. Which of them is right?`,
+  'second-column': (count: string, total: string) =>
+    `${count} is more than ${total}. Is the second column the total, or those without? If those without, send this.`,
   'units-differ': (one: string, other: string) =>
     `One is over ${one}, the other over ${other}. Give both in one unit.`,
   'exposure-zero': (text: string) => `${text}: over nothing. A time or distance has to be above 0.`,

@@ -135,15 +135,7 @@ function oddAt(tokens: Tokens, at: number, folded: Folded): Odd | null {
     !is(at - 1, token.Of) &&
     !hasConnector(tokens)
   ) {
-    const before = folded.text.slice(0, each.startOffset);
-    const lineStart = before.lastIndexOf('\n') + 1;
-    const name = before.slice(lineStart).trim();
-    return odd(
-      'two-numbers',
-      at + 2,
-      [image(at), image(at + 1)],
-      [`${name === '' ? '' : `${name} `}${image(at)} of ${image(at + 1)}`],
-    );
+    return odd('two-numbers', at + 2, [image(at), image(at + 1)], [rowsWithOf(folded, each.startOffset)]);
   }
   if (
     is(at, token.Of) &&
@@ -157,6 +149,18 @@ function oddAt(tokens: Tokens, at: number, folded: Folded): Odd | null {
       return odd('total-first', 2, [image(1)], [`${second.image} of ${image(1)} ${noun}`.trim()]);
   }
   return null;
+}
+
+/** Rows of a name and two numbers with "of" between the numbers: all of them where every line is one, else the one at a place. */
+function rowsWithOf({ text }: Folded, place: number): string {
+  const row = (line: string) => /^(.*?)(\d[\d,]*) +(\d[\d,]*)\s*$/.exec(line);
+  const withOf = (line: string) => {
+    const [, name = '', count = '', total = ''] = row(line) ?? [];
+    return `${name.trim()} ${count} of ${total}`.trim();
+  };
+  const lines = text.split('\n').filter((line) => line.trim() !== '');
+  if (lines.every((line) => row(line) !== null)) return lines.map(withOf).join('; ');
+  return withOf(text.slice(text.lastIndexOf('\n', place - 1) + 1).split(/[\n;|]/)[0] ?? '');
 }
 
 /** `38% (34 to 42)`: coverage with an interval of its own. */

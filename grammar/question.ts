@@ -52,6 +52,7 @@ export interface ReadingRemark {
   readonly id:
     | 'decimal-comma' // 0,4 was read as 0.4
     | 'indian-grouping' // 1,20,400 was read as 120,400
+    | 'total-row-left-out' // a row "total" that is the sum of the others
     | 'footnote-dropped' // 1,204¹ was read as 1,204
     | 'struck-out-dropped' // ~18~ was not read
     | 'emoji-dropped'

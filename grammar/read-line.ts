@@ -8,6 +8,7 @@ import { joinSpacedNumbers } from './odd-figures.ts';
 import { parseTags } from './parser.ts';
 import type { Diagnosis, HelpTopic, LineLimits, LineReading } from './question.ts';
 import { settleLine } from './settle.ts';
+import { tableOf } from './table.ts';
 import { tagLine } from './tag.ts';
 import * as tags from './tags.ts';
 import { fineTokensOf } from './tokens.ts';
@@ -34,7 +35,10 @@ export function readLine(line: string, limits: LineLimits): LineReading {
   }
   const topic = helpTopicOf(line);
   if (topic !== null) return { kind: 'help', topic };
-  const folded = fold(line);
+  const typed = fold(line);
+  const table = typed.text.includes('\n') ? tableOf(typed) : ({ kind: 'none' } as const);
+  if (table.kind === 'fault') return refusal(table.fault);
+  const folded = table.kind === 'line' ? table.folded : typed;
   const { tokens: fine, remarks } = withoutAbout(joinSpacedNumbers(fineTokensOf(folded.text)), folded);
   if (/^[\s?]*$/.test(folded.text))
     return refusal(diagnosis('empty-line', { from: 0, to: line.length }, [], linesToTry));

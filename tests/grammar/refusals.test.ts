@@ -96,6 +96,8 @@ const refused: readonly (readonly [string, string, string])[] = [
     'layers-as-stated',
     'a: x 3 per 1,000 days vs y 4 per 1,000 days',
   ],
+  ['night\t18\t1,204\nday\t9\t2,377\ntotal\t28\t3,581', 'total-not-sum', 'total\t28\t3,581'],
+  ['night\t18\t12\nday\t9\t2,377', 'second-column', '18\t12'],
   ['240 ms vs 310 ms', 'measurement', 'ms'],
   ['4.2 days vs 3.1 days', 'measurement', 'days'],
   ['coverage by month: Jan 20%, Feb 30%; cases by month: 30, 25', 'not-yet-coverage', 'coverage by'],

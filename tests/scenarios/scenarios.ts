@@ -43,6 +43,8 @@ export const scenarios = {
     'by line: east: new bus 4 in 1,200 days vs old bus 9 in 2,000 days | west: new bus 2 in 900 days vs old bus 6 in 1,500 days',
   'layers-of-helmets':
     'by age: under 40: no helmet 12 of 32 cases, 30% of riders | 40 and over: no helmet 32 of 43 cases, 45% of riders',
+  'pasted-table':
+    'age\tnight cases\tnight total\tday cases\tday total\nunder 40\t30\t900\t200\t9,000\n40 and over\t160\t2,000\t6\t100',
   'layers-too-small': 'by ward: north: night 1 of 4 vs day 2 of 9 | south: night 3 of 12 vs day 1 of 14',
   'stated-percentages': '4.2% vs 2.6%',
   'stated-frequencies': '1 in 250 vs 1 in 400',

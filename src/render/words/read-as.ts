@@ -104,6 +104,8 @@ function remarkText({ id, text, readAs: value }: ReadingRemark): string {
     case 'indian-grouping':
     case 'count-from-percentage':
       return `${text} was read as ${value}.`;
+    case 'total-row-left-out':
+      return `The row ${text} is the sum of the others and was left out.`;
     case 'footnote-dropped':
       return `The footnote mark on ${text} was left out: ${value}.`;
     case 'struck-out-dropped':
