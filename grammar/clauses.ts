@@ -95,8 +95,28 @@ export function clauseOf(part: Part, folded: string): ClausePart | null {
     case token.Says:
       return { kind: 'not-yet', word: 'says' };
     default:
-      return notYet(part, folded);
+      return wordClause(part) ?? notYet(part);
   }
+}
+
+/** `design effect 1.8`, `counted: everyone`: clauses whose words are plain words anywhere else. */
+function wordClause({ tokens }: Part): ClausePart | null {
+  const words = tokens.map(({ image }) => image.toLowerCase());
+  if (/^design effect\b/.test(words.join(' '))) {
+    const at = tokens[2]?.tokenType === token.Colon ? 3 : 2;
+    const number = tokens[at];
+    if (number?.tokenType !== token.NumberToken || tokens.length > at + 1)
+      return { kind: 'no-value', word: 'design effect', example: 'design effect 1.8' };
+    return {
+      kind: 'clause',
+      name: 'designEffect',
+      body: number.image,
+      number: writtenNumber(number.image, null),
+    };
+  }
+  if (/^counted ?:? (?:everyone|everybody|all|all of them)$/.test(words.join(' ')))
+    return { kind: 'clause', name: 'everyone', body: '', number: null };
+  return null;
 }
 
 function numberAfterColon({ tokens }: Part): WrittenNumber | null {
@@ -105,14 +125,9 @@ function numberAfterColon({ tokens }: Part): WrittenNumber | null {
 }
 
 /** Clauses of the language that later kinds of question bring. */
-function notYet({ tokens }: Part, folded: string): ClausePart | null {
+function notYet({ tokens }: Part): ClausePart | null {
   const [first, second] = tokens;
   if (first === undefined) return null;
-  const two = folded
-    .slice(first.startOffset, second === undefined ? undefined : second.startOffset + second.image.length)
-    .toLowerCase();
-  if (/^design effect$/.test(two)) return { kind: 'not-yet', word: 'design effect' };
-  if (/^counted\s*:?$/.test(two)) return { kind: 'not-yet', word: 'counted' };
   if (/^try$/i.test(first.image) && second?.tokenType === token.NumberToken)
     return { kind: 'not-yet', word: 'try' };
   return null;

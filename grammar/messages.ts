@@ -53,6 +53,10 @@ export const messages = {
   'level-out-of-range': (text: string) => `A level of ${text} is outside 50% to 99.99%.`,
   'clause-without-value': (word: string, example: string) =>
     `"${word}" needs something after it, as in "${example}".`,
+  'design-effect-range': (text: string) =>
+    `A design effect of ${text} cannot be: it is 1 where all come singly, and larger where they come together.`,
+  'exact-with-design-effect': () =>
+    'Exact limits need whole counts, and a design effect divides them. Leave one of the two out.',
   'clause-twice': (word: string) => `"${word}" stands twice. Once is enough.`,
   'reference-unknown': (name: string, known: string) => `There is no group ${name}. The groups are ${known}.`,
   'clauses-only': () => 'There is no figure here, only what goes with one. Put the figure first.',
@@ -83,6 +87,10 @@ export const messages = {
     `The row ${name} is not the sum of the others, which is ${sums}. Which of them is right?`,
   'second-column': (count: string, total: string) =>
     `${count} is more than ${total}. Is the second column the total, or those without? If those without, send this.`,
+  'whole-not-exact': (name: string) =>
+    `${name} contains the other groups, and what remains cannot be worked out from rounded or hidden counts.`,
+  'whole-too-small': (whole: string, parts: string) =>
+    `${whole}: the other groups, ${parts} together, are no part of that. Which of them is right?`,
   'units-differ': (one: string, other: string) =>
     `One is over ${one}, the other over ${other}. Give both in one unit.`,
   'exposure-zero': (text: string) => `${text}: over nothing. A time or distance has to be above 0.`,
@@ -92,8 +100,6 @@ export const messages = {
     `I do not read "${word}" yet. Leave it out and I answer the figure itself.`,
   'not-yet-alarm': () =>
     'I do not read tests and alarms yet. I can compare how often they went off: how many, out of how many.',
-  'not-yet-whole': (name: string) =>
-    `${name} contains the other group. I compare a group with the rest, without those counted in it.`,
 } satisfies Record<string, (...pieces: string[]) => string>;
 
 export type MessageId = keyof typeof messages;

@@ -152,7 +152,20 @@ const reserved = (label: string) =>
   keywordInName.test(label.replace(/^no /i, '')) || /\s{2}|^\s|\s$|^-|-$|- | -/.test(label);
 
 function clauseParts({ clauses }: Question): string[] {
-  const { level, per, reference, population, among, period, source, note, exact, onlyMe } = clauses;
+  const {
+    level,
+    per,
+    reference,
+    population,
+    among,
+    period,
+    source,
+    note,
+    exact,
+    designEffect,
+    everyone,
+    onlyMe,
+  } = clauses;
   return [
     ...(level === null ? [] : [`level ${level.text}`]),
     ...(per === null ? [] : [`per ${grouped(per)}`]),
@@ -163,6 +176,8 @@ function clauseParts({ clauses }: Question): string[] {
     ...(source === null ? [] : [`source ${/^https?:\/\/[^\s|;"]+$/.test(source) ? source : quote(source)}`]),
     ...(note === null ? [] : [`note ${quote(note)}`]),
     ...(exact ? ['exact'] : []),
+    ...(designEffect === null ? [] : [`design effect ${designEffect.text}`]),
+    ...(everyone ? ['counted: everyone'] : []),
     ...(onlyMe ? ['only me'] : []),
   ];
 }

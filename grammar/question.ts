@@ -44,6 +44,10 @@ export interface Clauses {
   readonly source: string | null;
   readonly note: string | null;
   readonly exact: boolean;
+  /** Events came repeated or in clusters: counts carry as much as this many times fewer that come singly; 1 or above. */
+  readonly designEffect: { readonly value: number; readonly text: string } | null;
+  /** These are all the cases there were, a whole register, not a sample. */
+  readonly everyone: boolean;
   readonly onlyMe: boolean;
 }
 
@@ -60,6 +64,8 @@ export interface ReadingRemark {
     | 'count-from-percentage' // 1.5% of 1,204 is 18
     | 'each-counted-once' // 14 in 5,200 crossings: each counted once
     | 'about-taken-as-given' // about 38% was taken as 38%
+    | 'whole-taken-apart' // a part against the whole that contains it: the rest was taken
+    | 'total-left-out' // a group that is the sum of the others
     | 'different-times'; // watched for different lengths of time
   readonly text: string;
   readonly readAs: string;

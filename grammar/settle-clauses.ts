@@ -24,22 +24,35 @@ const none: Clauses = {
   source: null,
   note: null,
   exact: false,
+  designEffect: null,
+  everyone: false,
   onlyMe: false,
 };
 
 export const noClauses = none;
+
+const clauseWords: Partial<Record<ClausePart['name'], string>> = {
+  onlyMe: 'only me',
+  ofCases: 'of ... cases',
+  designEffect: 'design effect',
+  everyone: 'counted: everyone',
+};
 
 /** Settles the clauses one by one; the first that cannot be is refused with its place. */
 export function settleClauses(parts: readonly ClausePart[], typed: string): Settled<SettledClauses> {
   let found: SettledClauses = { clauses: none, ofCases: null, referenceSpan: null };
   const seen = new Set<string>();
   for (const part of parts) {
-    const word = part.name === 'onlyMe' ? 'only me' : part.name === 'ofCases' ? 'of ... cases' : part.name;
+    const word = clauseWords[part.name] ?? part.name;
     if (seen.has(part.name)) return refused(diagnosis('clause-twice', part.span, [word]));
     seen.add(part.name);
     const next = withClause(found, part, typed);
     if (!next.ok) return next;
     found = next.value;
+  }
+  if (found.clauses.exact && found.clauses.designEffect !== null) {
+    const span = parts.find(({ name }) => name === 'designEffect')?.span ?? { from: 0, to: typed.length };
+    return refused(diagnosis('exact-with-design-effect', span));
   }
   return settled(found);
 }
@@ -80,6 +93,15 @@ function withClause(found: SettledClauses, part: ClausePart, typed: string): Set
     case 'source':
     case 'note':
       return set({ [part.name]: part.body });
+    case 'designEffect': {
+      const text = part.number?.text ?? part.body;
+      const value = part.number?.value ?? NaN;
+      if (!(value >= 1 && value <= 1_000))
+        return refused(diagnosis('design-effect-range', part.span, [text]));
+      return set({ designEffect: { value, text } });
+    }
+    case 'everyone':
+      return set({ everyone: true });
     case 'exact':
       return set({ exact: true });
     case 'onlyMe':

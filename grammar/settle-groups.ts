@@ -14,6 +14,7 @@ import type {
 } from './question.ts';
 import type { Setting } from './setting.ts';
 import type { Item } from './tree.ts';
+import { withoutWhole } from './whole.ts';
 import { sameWatched, withoutWatched } from './watched.ts';
 
 /** What the words around the figures mean: names, the unit, and what a case is called. */
@@ -103,18 +104,19 @@ export function settleCounts(typedItems: readonly Item[], typedSetting: Setting)
   }
   const reference = referenceOf(naming.labels, setting);
   if (!reference.ok) return reference;
-  const whole = wholeAmong(groups);
-  if (whole !== null) return refused(whole);
+  const parts = withoutWhole(groups, naming.labels, setting);
+  if (!parts.ok) return parts;
+  const { groups: kept, reference: at } = parts.value;
   return settled({
     kind: 'counts',
-    groups,
-    reference: groups.length === 1 ? 0 : reference.value,
+    groups: kept,
+    reference: kept.length === 1 ? 0 : (at ?? reference.value),
     chosenByOutcome: chosenByOutcome(naming.labels),
     clauses: setting.given.clauses,
     unit: naming.unit,
     caseNoun: naming.caseNoun,
     overTime: areTimes(naming.labels),
-    remarks: remarks,
+    remarks: [...remarks, ...parts.remarks],
   });
 }
 
@@ -206,19 +208,6 @@ function countsGroup(item: Item, label: string | null, setting: Setting): Settle
     },
     [...cases.remarks, ...total.remarks, ...once],
   );
-}
-
-/** A part compared with the whole that contains it: refused, with the rest worked out and ready to send. */
-function wholeAmong(groups: readonly CountsGroup[]) {
-  const [part, whole] = groups;
-  if (part === undefined || whole === undefined || groups.length !== 2) return null;
-  if (!/^(?:all|total|overall|whole|everyone|everybody|altogether)$/.test((whole.label ?? '').toLowerCase()))
-    return null;
-  const [cases, total] = [whole.cases.value - part.cases.value, whole.total.value - part.total.value];
-  const possible = cases >= 0 && total > 0 && cases <= total && Number.isInteger(cases);
-  const name = part.label === null ? '' : `${part.label}: `;
-  const rest = `${name}${part.cases.text} of ${part.total.text} vs the rest: ${grouped(cases)} of ${grouped(total)}`;
-  return diagnosis('not-yet-whole', whole.span, [whole.label ?? ''], possible ? [rest] : []);
 }
 
 /** Percentages or frequencies without counts. One alone has nothing to be compared with. */

@@ -82,6 +82,8 @@ export type ClauseName =
   | 'note'
   | 'exact'
   | 'onlyMe'
+  | 'designEffect'
+  | 'everyone'
   | 'ofCases';
 
 export type TagPayload =

@@ -22,12 +22,17 @@ export interface CountsRow {
 export interface CountsOptions {
   readonly level: number;
   readonly exact: boolean;
+  readonly designEffect: number;
   /** The M of extra cases per M; `null`: the smallest power of ten at which the smaller risk gives at least 1. */
   readonly per: number | null;
 }
 
 /** The risk in one group. */
-export function riskReading(row: CountsRow, of: number, { level, exact }: CountsOptions): Reading {
+export function riskReading(
+  row: CountsRow,
+  of: number,
+  { level, exact, designEffect }: CountsOptions,
+): Reading {
   const quantities = [row.cases, row.total];
   return reading({
     id: 'risk',
@@ -37,7 +42,13 @@ export function riskReading(row: CountsRow, of: number, { level, exact }: Counts
       ? intervalOver(quantities, level, 'clopper-pearson', ([x = NaN, n = NaN]) =>
           clopperPearsonInterval(x, n, level),
         )
-      : intervalOver(quantities, level, 'wilson', ([x = NaN, n = NaN]) => wilsonInterval(x, n, level)),
+      : intervalOver(
+          quantities,
+          level,
+          'wilson',
+          ([x = NaN, n = NaN]) => wilsonInterval(x, n, level),
+          designEffect,
+        ),
     roundingRange: rangeOverCorners(quantities, ([x = NaN, n = NaN]) => x / n),
   });
 }
@@ -140,7 +151,7 @@ const oddsRatio: Measure = {
 function measured(
   measure: Measure,
   { of, against, quantities }: Pair,
-  { level, exact }: CountsOptions,
+  { level, exact, designEffect }: CountsOptions,
 ): Reading {
   const interval = exact ? measure.exact : measure.score;
   const method = exact ? 'conditional-exact' : 'miettinen-nurminen';
@@ -149,7 +160,9 @@ function measured(
     of,
     against,
     ...estimateOf(measure.estimate(asGroups(quantities.map(({ value }) => value)))),
-    interval: interval && intervalOver(quantities, level, method, (at) => interval(asGroups(at), level)),
+    interval:
+      interval &&
+      intervalOver(quantities, level, method, (at) => interval(asGroups(at), level), designEffect),
     whyNoInterval: interval === null ? 'no-exact-form' : null,
     roundingRange: rangeOverCorners(quantities, (at) => measure.estimate(asGroups(at))),
   });

@@ -1,16 +1,14 @@
 import type { CountsQuestion } from '../../grammar/question.ts';
 import { cautionsFor } from './cautions.ts';
 import { oddsRatioReading, pairReadings, riskReading } from './counts-readings.ts';
-import type { CountsOptions } from './counts-readings.ts';
 import { missingFor } from './missing.ts';
-import { usualLevel } from './report.ts';
+import { optionsOf } from './options.ts';
 import type { Report, StatedBeside } from './report.ts';
 
 /** Counts: the risk in each group, and each group against the reference. */
 export function countsReport(question: CountsQuestion): Report {
   const { groups, reference, clauses, chosenByOutcome } = question;
-  const level = clauses.level?.value ?? usualLevel;
-  const options: CountsOptions = { level, exact: clauses.exact, per: clauses.per };
+  const options = optionsOf(clauses);
   const others = groups.map((_, index) => index).filter((index) => index !== reference);
   const readings = [
     ...groups.map((group, index) => riskReading(group, index, options)),
@@ -23,7 +21,7 @@ export function countsReport(question: CountsQuestion): Report {
   const headline = groups.length === 1 ? 'risk' : chosenByOutcome ? 'odds-ratio' : 'risk-ratio';
   return {
     question,
-    level,
+    level: options.level,
     readings,
     headline,
     stated: statedBeside(question),

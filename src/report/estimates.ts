@@ -10,19 +10,23 @@ export function estimateOf(value: number): Pick<Reading, 'estimate' | 'unbounded
 
 /**
  * The interval for these inputs: at their values, or, where one of them is known only to a range, the outermost limits
- * over everything the ranges allow.
+ * over everything the ranges allow. A design effect divides all of them first (Rao & Scott 1992, Biometrics 48:577), so every
+ * quantity has to be a count, a total or an exposure.
  */
 export function intervalOver(
   quantities: readonly Quantity[],
   level: number,
   method: IntervalMethod,
   limits: (values: readonly number[]) => Interval,
+  designEffect = 1,
 ): ReadingInterval {
+  const divided = (values: readonly number[]) =>
+    limits(designEffect === 1 ? values : values.map((value) => value / designEffect));
   const envelope = quantities.some(isRange);
   const { low, high } = envelope
-    ? envelopeOverCorners(quantities, limits)
-    : limits(quantities.map((quantity) => quantity.value));
-  return { low, high, level, method, envelope };
+    ? envelopeOverCorners(quantities, divided)
+    : divided(quantities.map((quantity) => quantity.value));
+  return { low, high, level, method, envelope, designEffect };
 }
 
 /** Carries an interval through an increasing function; a missing limit stays missing. */

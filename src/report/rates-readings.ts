@@ -15,7 +15,7 @@ import type { IntervalMethod, NoInterval, Reading, ReadingInterval } from './rea
 
 /** The rate in one group, per one unit of exposure; `per` is the exposure that it is shown for. */
 export function rateReading(group: RatesGroup, of: number, per: number, options: CountsOptions): Reading {
-  const { level, exact } = options;
+  const { level, exact, designEffect } = options;
   const quantities = [group.cases, group.exposure];
   return reading({
     id: 'rate',
@@ -23,8 +23,12 @@ export function rateReading(group: RatesGroup, of: number, per: number, options:
     estimate: group.cases.value / group.exposure.value,
     interval: group.asStated
       ? null
-      : intervalOver(quantities, level, exact ? 'garwood' : 'rate-score', ([x = NaN, t = NaN]) =>
-          exact ? garwoodInterval(x, t, level) : rateScoreInterval(x, t, level),
+      : intervalOver(
+          quantities,
+          level,
+          exact ? 'garwood' : 'rate-score',
+          ([x = NaN, t = NaN]) => (exact ? garwoodInterval(x, t, level) : rateScoreInterval(x, t, level)),
+          designEffect,
         ),
     whyNoInterval: group.asStated ? 'no-counts' : null,
     roundingRange: rangeOverCorners(quantities, ([x = NaN, t = NaN]) => x / t),
@@ -79,23 +83,29 @@ const asRates = ([
 const ratioOf = ({ cases, exposure, referenceCases, referenceExposure }: RatePair) =>
   (cases * referenceExposure) / (referenceCases * exposure);
 
-function rateRatioReading(pair: Pair, { level, exact }: CountsOptions): Reading {
+function rateRatioReading(pair: Pair, { level, exact, designEffect }: CountsOptions): Reading {
   return compared(pair, {
     id: 'rate-ratio',
     estimate: ratioOf,
     method: exact ? 'exact-rate-ratio' : 'rate-ratio-score',
     limits: (rates) => (exact ? exactRateRatioInterval(rates, level) : rateRatioInterval(rates, level)),
     level,
+    designEffect,
   });
 }
 
-function rateDifferenceReading(pair: Pair, per: number, { level, exact }: CountsOptions): Reading {
+function rateDifferenceReading(
+  pair: Pair,
+  per: number,
+  { level, exact, designEffect }: CountsOptions,
+): Reading {
   const difference = compared(pair, {
     id: 'rate-difference',
     estimate: rateDifference,
     method: 'rate-difference-score',
     limits: exact ? null : (rates) => rateDifferenceInterval(rates, level),
     level,
+    designEffect,
   });
   return { ...difference, per };
 }
@@ -107,13 +117,16 @@ interface Measure {
   /** `null`: there is no exact interval of the same family. */
   readonly limits: ((rates: RatePair) => Interval) | null;
   readonly level: number;
+  readonly designEffect: number;
 }
 
 function compared({ of, against, quantities, counted }: Pair, measure: Measure): Reading {
-  const { limits, level, method } = measure;
+  const { limits, level, method, designEffect } = measure;
   const why: NoInterval | null = !counted ? 'no-counts' : limits === null ? 'no-exact-form' : null;
   const interval: ReadingInterval | null =
-    limits === null || !counted ? null : intervalOver(quantities, level, method, (at) => limits(asRates(at)));
+    limits === null || !counted
+      ? null
+      : intervalOver(quantities, level, method, (at) => limits(asRates(at)), designEffect);
   return reading({
     id: measure.id,
     of,

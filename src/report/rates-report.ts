@@ -1,14 +1,14 @@
 import type { RatesQuestion } from '../../grammar/question.ts';
 import { cautionsFor } from './cautions.ts';
 import { missingFor } from './missing.ts';
+import { optionsOf } from './options.ts';
 import { exposureShown, ratePairReadings, rateReading } from './rates-readings.ts';
-import { usualLevel } from './report.ts';
 import type { Report } from './report.ts';
 
 /** Rates: events over time, distance or another exposure, each group against the reference. */
 export function ratesReport(question: RatesQuestion): Report {
   const { groups, reference, clauses } = question;
-  const options = { level: clauses.level?.value ?? usualLevel, exact: clauses.exact, per: clauses.per };
+  const options = optionsOf(clauses);
   const per = clauses.per ?? exposureShown(groups);
   const others = groups.map((_, index) => index).filter((index) => index !== reference);
   const readings = [

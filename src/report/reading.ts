@@ -71,6 +71,8 @@ export interface ReadingInterval extends Interval {
   readonly level: number;
   readonly method: IntervalMethod;
   readonly envelope: boolean;
+  /** What the counts were divided by before the limits were worked out; 1 where they stand as they are. */
+  readonly designEffect: number;
 }
 
 /** Two ranges that run through infinity: one extra case for every K at least `more` or, the other way, at least `fewer`. */

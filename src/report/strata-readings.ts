@@ -33,6 +33,7 @@ import type { IntervalMethod, NoInterval, Reading, ReadingId } from './reading.t
 /** A group and its reference within each layer, with every hidden count at its most or least favourable end. */
 interface Pairs<T> {
   readonly middle: readonly T[];
+  readonly tested: readonly T[];
   /** The group's hidden counts at their lowest and the reference's at their highest: every ratio is then at its lowest. */
   readonly lowest: readonly T[];
   readonly highest: readonly T[];
@@ -73,13 +74,13 @@ export function layeredReadings(
 }
 
 function countsReadings(layers: readonly Layer[], place: Place, options: CountsOptions): Reading[] {
-  const pairs = pairsOf(layers, place, (own, reference, pick) =>
+  const pairs = pairsOf(layers, place, options, (own, reference, pick) =>
     'total' in own && 'total' in reference
       ? ({
           cases: pick.own(own.cases),
-          total: own.total.value,
+          total: pick.size(own.total),
           referenceCases: pick.reference(reference.cases),
-          referenceTotal: reference.total.value,
+          referenceTotal: pick.size(reference.total),
         } satisfies TwoGroups)
       : null,
   );
@@ -123,7 +124,7 @@ function countsReadings(layers: readonly Layer[], place: Place, options: CountsO
       limits: (strata, level) => standardisedRiskRatioInterval(strata, 'whole', level),
       method: 'log-delta',
     }),
-    ...alike(riskRatioHomogeneity(pairs.middle), place, 'Gart-Nam'),
+    ...alike(riskRatioHomogeneity(pairs.tested), place, 'Gart-Nam'),
     ...ratioFollowers(ratio),
     ...inLayers(layers, place, options),
   ];
@@ -135,13 +136,13 @@ function ratesReadings(
   per: number,
   options: CountsOptions,
 ): Reading[] {
-  const pairs = pairsOf(layers, place, (own, reference, pick) =>
+  const pairs = pairsOf(layers, place, options, (own, reference, pick) =>
     'exposure' in own && 'exposure' in reference
       ? ({
           cases: pick.own(own.cases),
-          exposure: own.exposure.value,
+          exposure: pick.size(own.exposure),
           referenceCases: pick.reference(reference.cases),
-          referenceExposure: reference.exposure.value,
+          referenceExposure: pick.size(reference.exposure),
         } satisfies RatePair)
       : null,
   );
@@ -149,6 +150,7 @@ function ratesReadings(
     {
       ...pairs,
       middle: [total(pairs.middle)],
+      tested: [total(pairs.tested)],
       lowest: [total(pairs.lowest)],
       highest: [total(pairs.highest)],
     },
@@ -176,7 +178,7 @@ function ratesReadings(
       method: 'pooled-score',
       per,
     }),
-    ...alike(rateRatioHomogeneity(pairs.middle), place, 'deviance'),
+    ...alike(rateRatioHomogeneity(pairs.tested), place, 'deviance'),
     ...ratioFollowers(ratio),
     ...inLayers(layers, place, options),
   ];
@@ -191,7 +193,7 @@ const total = (pairs: readonly RatePair[]): RatePair =>
   }));
 
 function sharesReadings(layers: readonly Layer[], place: Place, options: CountsOptions): Reading[] {
-  const pairs = pairsOf(layers, place, (own, reference, pick) =>
+  const pairs = pairsOf(layers, place, options, (own, reference, pick) =>
     'coverage' in own && 'coverage' in reference && own.cases !== null && reference.cases !== null
       ? ({
           cases: pick.own(own.cases),
@@ -215,7 +217,7 @@ function sharesReadings(layers: readonly Layer[], place: Place, options: CountsO
   return [
     ratio,
     relativeChange(ratio),
-    ...alike(shareRatioHomogeneity(pairs.middle), place, 'deviance'),
+    ...alike(shareRatioHomogeneity(pairs.tested), place, 'deviance'),
     ...ratioFollowers(ratio),
     ...inLayers(layers, place, options),
   ];
@@ -225,11 +227,15 @@ type AnyGroup = Layer['question']['groups'][number];
 interface Pick {
   readonly own: (cases: Quantity) => number;
   readonly reference: (cases: Quantity) => number;
+  /** A total or an exposure. */
+  readonly size: (quantity: Quantity) => number;
 }
 
+/** The pairs of a group and its reference; those for limits and tests are divided by the design effect, where there is one. */
 function pairsOf<T>(
   layers: readonly Layer[],
   { of, against }: Place,
+  { designEffect }: CountsOptions,
   make: (own: AnyGroup, reference: AnyGroup, pick: Pick) => T | null,
 ): Pairs<T> {
   const each = (pick: Pick) =>
@@ -238,12 +244,15 @@ function pairsOf<T>(
       const pair = own === undefined || reference === undefined ? null : make(own, reference, pick);
       return pair === null ? [] : [pair];
     });
-  const at = (end: 'low' | 'high') => (cases: Quantity) => (isRange(cases) ? cases[end] : cases.value);
-  const value = (cases: Quantity) => cases.value;
+  const at = (end: 'low' | 'high') => (cases: Quantity) =>
+    (isRange(cases) ? cases[end] : cases.value) / designEffect;
+  const value = (quantity: Quantity) => quantity.value;
+  const size = (quantity: Quantity) => quantity.value / designEffect;
   return {
-    middle: each({ own: value, reference: value }),
-    lowest: each({ own: at('low'), reference: at('high') }),
-    highest: each({ own: at('high'), reference: at('low') }),
+    middle: each({ own: value, reference: value, size: value }),
+    tested: each({ own: size, reference: size, size }),
+    lowest: each({ own: at('low'), reference: at('high'), size }),
+    highest: each({ own: at('high'), reference: at('low'), size }),
     hidden: layers.some(({ question }) =>
       question.groups.some(({ cases }) => cases !== null && isRange(cases)),
     ),
@@ -251,7 +260,7 @@ function pairsOf<T>(
 }
 
 /** Pools one measure; where a count is hidden the interval is the outermost one over everything it may be. */
-function pooled<T>(pairs: Pairs<T>, place: Place, { level }: CountsOptions) {
+function pooled<T>(pairs: Pairs<T>, place: Place, { level, designEffect }: CountsOptions) {
   return ({ id, estimate, limits, method, per }: Measure<T>): Reading => {
     const value = estimate(pairs.middle);
     const lowest = limits?.(pairs.lowest, level) ?? null;
@@ -266,7 +275,7 @@ function pooled<T>(pairs: Pairs<T>, place: Place, { level }: CountsOptions) {
       interval:
         lowest === null || highest === null
           ? null
-          : { low: lowest.low, high: highest.high, level, method, envelope: pairs.hidden },
+          : { low: lowest.low, high: highest.high, level, method, envelope: pairs.hidden, designEffect },
       whyNoInterval: why,
       per: per ?? null,
     });

@@ -1,6 +1,7 @@
 import { ArgumentError } from './argument-error.ts';
 import type { TwoGroups } from './interval.ts';
 import type { RatePair } from './rate-ratio.ts';
+import type { SharePair } from './share-ratio.ts';
 
 /**
  * Counts that come in clusters, as the counts that would carry the same information if they came singly: cases and totals
@@ -29,6 +30,16 @@ export function ratesDividedByDesignEffect(rates: RatePair, designEffect: number
     exposure: rates.exposure / designEffect,
     referenceCases: rates.referenceCases / designEffect,
     referenceExposure: rates.referenceExposure / designEffect,
+  };
+}
+
+/** The same for cases beside coverages: coverages are no counts and stay. */
+export function sharesDividedByDesignEffect(pair: SharePair, designEffect: number): SharePair {
+  check(designEffect);
+  return {
+    ...pair,
+    cases: pair.cases / designEffect,
+    referenceCases: pair.referenceCases / designEffect,
   };
 }
 

@@ -11,7 +11,12 @@ export interface AlarmRates {
   readonly prevalence: number;
 }
 
-/** How likely the condition is after an alarm: Bayes' theorem; `null` where no alarm can be. */
+/**
+ * How likely the condition is after an alarm: Bayes' theorem.
+ *
+ * @returns `null` where no alarm can be
+ * @throws ArgumentError for shares out of range
+ */
 export function positivePredictiveValue({
   sensitivity,
   falseAlarmRate,
@@ -42,6 +47,7 @@ export function negativePredictiveValue({
  * @param prevalence from outside the counts, in (0, 1); for four counts from one sample at the natural prevalence use the Wilson
  *   interval of true positives among alarms instead
  * @param level confidence level as a share, in [0.5, 0.9999]
+ * @returns limits in [0, 1]: 0 without a true alarm, 1 without a false one
  * @throws ArgumentError for numbers out of range
  *
  * Miettinen & Nurminen 1985; with the log interval of LR+ in its place it is Mercaldo, Lau & Zhou 2007 (Statistics in Medicine
@@ -58,7 +64,7 @@ export function positivePredictiveValueInterval(
   return { low: through(low ?? 0), high: high === null ? 1 : through(high) };
 }
 
-/** The same for the negative predictive value: 1/(1 + o LR-), which falls as LR- rises. */
+/** The same for the negative predictive value: 1/(1 + o LR-), which falls as LR- rises. It excludes 1 - prevalence where LR- excludes 1. */
 export function negativePredictiveValueInterval(
   counts: AlarmCounts,
   prevalence: number,

@@ -13,7 +13,12 @@ export interface SampledCoverage {
   readonly sampled: number;
 }
 
-/** The ratio per person where coverage comes from a sample: x1/x2 times (n - m)/m; `null` where undefined or without upper end. */
+/**
+ * The ratio per person where coverage comes from a sample: x1/x2 times (n - m)/m.
+ *
+ * @returns `null` where the reference group has no case or nobody sampled belongs to the group
+ * @throws ArgumentError where there is no case, or a number is out of range
+ */
 export function sampledCoverageRatio(from: SampledCoverage): number | null {
   check(from);
   const { cases, referenceCases, sampledInGroup, sampled } = from;
@@ -26,6 +31,8 @@ export function sampledCoverageRatio(from: SampledCoverage): number | null {
  * sampling error of the coverage too.
  *
  * @param level confidence level as a share, in [0.5, 0.9999]
+ * @returns lower limit 0 without cases in the group or where everybody sampled belongs to it, no upper limit without cases in
+ *   the reference or where nobody sampled does
  * @throws ArgumentError where there is no case, or a number is out of range
  *
  * Miettinen & Nurminen 1985 (Statistics in Medicine 4:213). As the sample grows it tends to the interval for known coverage.
@@ -48,7 +55,11 @@ export function sampledCoverageRatioInterval(from: SampledCoverage, level: numbe
  * Interval of the fraction of all cases above the reference group's rate, coverage sampled: 1 minus the score limits of the
  * risk ratio of x2 of (x1 + x2) against (n - m) of n. It excludes 0 exactly where the ratio's interval excludes 1.
  *
- * @returns no lower limit where the risk ratio has no upper one
+ * @param level confidence level as a share, in [0.5, 0.9999]
+ * @returns no lower limit where everybody sampled belongs to the group
+ * @throws ArgumentError as above
+ *
+ * Miettinen & Nurminen 1985, as above. Accuracy: 1e-12 of the larger of the limit and the width.
  */
 export function sampledPopulationFractionInterval(from: SampledCoverage, level: number): Interval {
   check(from);
@@ -65,12 +76,16 @@ export function sampledPopulationFractionInterval(from: SampledCoverage, level: 
   return { low: high === null ? null : 1 - high, high: 1 - (low ?? 0) };
 }
 
-/** The estimate of that fraction: 1 - [x2/(x1 + x2)]/[(n - m)/n]; `null` where everybody sampled belongs to the group. */
+/**
+ * The estimate of that fraction: 1 - [x2/(x1 + x2)]/[(n - m)/n]; `null` where everybody sampled belongs to the group. Miettinen
+ * 1974 (American Journal of Epidemiology 99:325).
+ */
 export function sampledPopulationFraction(from: SampledCoverage): number | null {
   check(from);
   const { cases, referenceCases, sampledInGroup, sampled } = from;
-  if (sampledInGroup === sampled) return null;
-  return 1 - (referenceCases / (cases + referenceCases)) * (sampled / (sampled - sampledInGroup));
+  const others = sampled - sampledInGroup;
+  if (others === 0) return null;
+  return (cases * others - referenceCases * sampledInGroup) / ((cases + referenceCases) * others);
 }
 
 function check({ cases, referenceCases, sampledInGroup, sampled }: SampledCoverage): void {

@@ -104,6 +104,10 @@ function remarkText({ id, text, readAs: value }: ReadingRemark): string {
     case 'indian-grouping':
     case 'count-from-percentage':
       return `${text} was read as ${value}.`;
+    case 'whole-taken-apart':
+      return `${text} contains the others; compared with the rest, ${value}.`;
+    case 'total-left-out':
+      return `${text} is the sum of the others and was left out.`;
     case 'total-row-left-out':
       return `The row ${text} is the sum of the others and was left out.`;
     case 'footnote-dropped':
