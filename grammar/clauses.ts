@@ -11,6 +11,7 @@ export type ClausePart =
       readonly name: ClauseName;
       readonly body: string;
       readonly number: WrittenNumber | null;
+      readonly numbers?: readonly WrittenNumber[];
     }
   | { readonly kind: 'no-value'; readonly word: string; readonly example: string }
   | { readonly kind: 'not-yet'; readonly word: string };
@@ -113,9 +114,24 @@ function notYet({ tokens }: Part, folded: string): ClausePart | null {
     .toLowerCase();
   if (/^design effect$/.test(two)) return { kind: 'not-yet', word: 'design effect' };
   if (/^counted\s*:?$/.test(two)) return { kind: 'not-yet', word: 'counted' };
-  if (/^try$/i.test(first.image) && second?.tokenType === token.NumberToken)
-    return { kind: 'not-yet', word: 'try' };
-  return null;
+  return /^try$/i.test(first.image) ? tryClause(tokens) : null;
+}
+
+/** `try 30%, 38%, 50%`: coverages to work the ratio out at; the sign may stand behind the last one alone. */
+function tryClause(tokens: Part['tokens']): ClausePart | null {
+  if (tokens.length === 1) return { kind: 'no-value', word: 'try', example: 'try 30%, 38%, 50%' };
+  const [, ...rest] = tokens;
+  const signs: ReadonlySet<unknown> = new Set([token.Percent, token.Comma, token.And]);
+  const numbers = rest.filter(({ tokenType }) => tokenType === token.NumberToken);
+  if (rest.at(-1)?.tokenType !== token.Percent) return null;
+  if (!rest.every(({ tokenType }) => tokenType === token.NumberToken || signs.has(tokenType))) return null;
+  return {
+    kind: 'clause',
+    name: 'try',
+    body: rest.map(({ image }) => image).join(' '),
+    number: null,
+    numbers: numbers.map(({ image }) => writtenNumber(image, null)),
+  };
 }
 
 /** Whether a later colon leads to a figure, so that the first word belongs to a name. */

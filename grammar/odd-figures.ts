@@ -71,12 +71,6 @@ function oddAt(tokens: Tokens, at: number, folded: Folded): Odd | null {
   }
   if (is(at, token.Arrow) && hasNumber(tokens, at + 1))
     return odd('not-yet-change', at + 2, [], ['later: 8.1% vs earlier: 4.2%']);
-  if (
-    is(at, token.CoverageWord) &&
-    (/^by$/i.test(image(at + 1)) || tokens.slice(at).some((_, place) => isOwnInterval(tokens, at + place)))
-  ) {
-    return odd('not-yet-coverage', at + 2, [], ['cases: no helmet 44, helmet 31; coverage: no helmet 38%']);
-  }
   if (is(at, token.Of) && /^(?:them|which|whom|these|those)$/i.test(image(at + 1)))
     return totalFirst(tokens, at, odd);
   if (is(at, token.Word)) {
@@ -183,12 +177,6 @@ function oddAt(tokens: Tokens, at: number, folded: Folded): Odd | null {
   }
   return null;
 }
-
-/** `38% (34 to 42)`: coverage with an interval of its own. */
-const isOwnInterval = (tokens: Tokens, at: number) =>
-  tokens[at]?.tokenType === token.Open &&
-  tokens[at + 1]?.tokenType === token.NumberToken &&
-  tokens.slice(at + 2, at + 4).some(({ tokenType }) => tokenType === token.To);
 
 /** `75 injured, 44 of them no helmet`: the total is the first number, the count the one beside "of them". */
 function totalFirst(

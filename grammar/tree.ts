@@ -51,6 +51,7 @@ export type TreePart =
       readonly name: ClauseName;
       readonly body: string;
       readonly number: WrittenNumber | null;
+      readonly numbers: readonly WrittenNumber[];
       readonly span: Span;
     };
 
@@ -80,6 +81,7 @@ function partOf(node: CstNode, folded: Folded): TreePart {
       name: payload.name,
       body: payload.body,
       number: payload.number,
+      numbers: payload.numbers ?? [],
       span: spanOf(clause, folded),
     };
   }
