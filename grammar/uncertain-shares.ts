@@ -63,6 +63,9 @@ export function checkForms(
   setting: Setting,
 ): Settled<null> {
   const form = groups.find(({ known }) => known.kind !== 'given');
+  const { trySpan } = setting.given;
+  if (trySpan !== undefined && groups.length !== 2)
+    return refused(diagnosis('coverage-form-of-several', trySpan));
   if (form === undefined && unknown === null) return settled(null);
   const place = form?.coverage.span ?? unknown?.span ?? { from: 0, to: 0 };
   if (groups.length !== 2)

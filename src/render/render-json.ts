@@ -5,6 +5,7 @@ import type { Report } from '../report/report.ts';
 import { whyText } from './words/reading-row.ts';
 import { plainLabel } from './words/labels.ts';
 import { tell } from './words/tell.ts';
+import type { Telling } from './words/telling.ts';
 
 /** The version of the JSON report; it changes when a field changes its meaning or goes. */
 const schema = 1;
@@ -20,6 +21,9 @@ export function renderJson(line: string, report: Report): string {
       kind: question.kind,
       canonical: printCanonical(question),
       unit: question.unit,
+      ...(question.kind === 'shares' && question.unknownCases !== null
+        ? { unknownCases: question.unknownCases.value }
+        : {}),
       clauses: clausesOf(question),
     },
     groups: groupsOf(question),
@@ -34,6 +38,7 @@ export function renderJson(line: string, report: Report): string {
       agrees,
       remarks: [],
     })),
+    beside: besideOf(report, words.sides),
     says: null,
     remarks: words.remarks,
     cautions: words.cautions,
@@ -71,11 +76,12 @@ function groupsOf(question: Question) {
         ...rangeOf('total', total),
       }));
     case 'shares':
-      return question.groups.map(({ cases, caseShare, coverage }, index) => ({
+      return question.groups.map(({ cases, caseShare, coverage, known }, index) => ({
         label: plainLabel(question, index),
         cases: cases === null ? null : cases.value,
         caseShare: caseShare.value,
         coverage: coverage.value,
+        ...(known.kind === 'given' ? {} : { coverageKnown: known }),
       }));
     case 'stated':
       return question.groups.map(({ share }, index) => ({
@@ -90,12 +96,32 @@ function groupsOf(question: Question) {
   }
 }
 
+/** Ratios under other assumptions, side by side; numbers as in the readings. */
+function besideOf({ question, variants = [] }: Report, sides: Telling['sides']) {
+  return variants.map(({ topic, coverageOf, rows, slope }, index) => ({
+    topic,
+    coverageOf: plainLabel(question, coverageOf),
+    ...(slope === null ? {} : { slope }),
+    ratios: rows.map(({ id, of, against, coverage, estimate, unbounded, interval }) => ({
+      id,
+      of: plainLabel(question, of),
+      against: plainLabel(question, against),
+      coverage,
+      estimate,
+      ...(unbounded ? { unbounded } : {}),
+      interval,
+    })),
+    text: sides[index]?.line ?? '',
+  }));
+}
+
 function rangeOf(name: string, { low, high }: { readonly low: number; readonly high: number }) {
   return low === high ? {} : { [`${name}Range`]: { low, high } };
 }
 
 function clausesOf(question: Question) {
-  const { level, per, reference, population, among, period, source, note, exact, onlyMe } = question.clauses;
+  const { level, per, reference, population, among, period, source, note, exact, onlyMe, tryCoverages } =
+    question.clauses;
   return {
     level: level?.value ?? null,
     per,
@@ -107,6 +133,7 @@ function clausesOf(question: Question) {
     note,
     exact,
     onlyMe,
+    ...(tryCoverages === undefined ? {} : { try: tryCoverages.map(({ value }) => value) }),
   };
 }
 
@@ -146,4 +173,6 @@ function readingOf(question: Question, reading: Reading, formula: string) {
 }
 
 const methodId = ({ interval }: Reading) =>
-  interval === null ? '' : `${interval.method}${interval.envelope ? ', outer envelope' : ''}`;
+  interval === null
+    ? ''
+    : `${interval.method}${interval.envelope ? ', outer envelope' : ''}${interval.unknownToEitherSide === true ? ', unknown cases to either side' : ''}`;

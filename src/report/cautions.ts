@@ -9,6 +9,8 @@ export const cautionIds = [
   'rows-chosen-by-outcome',
   'totals-missing',
   'base-rate',
+  'unknown-group',
+  'coverage-changed',
   'all-cases-in-one-group',
   'no-cases',
   'suppressed-cell',
@@ -79,8 +81,11 @@ function sharesCautions(question: SharesQuestion): readonly CautionId[] {
   const counted = cases.filter((quantity) => quantity !== null);
   const caseShares = groups.reduce((sum, { caseShare }) => sum + caseShare.value, 0);
   const coverages = groups.reduce((sum, { coverage }) => sum + coverage.value, 0);
+  const changed = groups.some(({ known }) => known.kind === 'growth' || known.kind === 'periods');
   return [
     'base-rate',
+    ...(question.unknownCases === null ? [] : (['unknown-group'] as const)),
+    ...(changed ? (['coverage-changed'] as const) : []),
     ...(Math.abs(caseShares - 1) > 1e-9 || Math.abs(coverages - 1) > 1e-9
       ? (['shares-do-not-add-up'] as const)
       : []),

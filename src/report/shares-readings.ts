@@ -11,7 +11,7 @@ import { reading } from './reading.ts';
 import type { NoInterval, Reading, ReadingInterval } from './reading.ts';
 
 /** Below this many cases in a group the exact limits stand beside the score limits (common practice). */
-const fewCases = 5;
+export const fewCases = 5;
 
 /** The group's share of all cases. With `population` no interval of its own: every interval then comes from the counts rows. */
 export function caseShareReading(
@@ -109,13 +109,13 @@ function shareRatioReading(
 const ratioOf = ({ cases, referenceCases, coverage, referenceCoverage }: SharePair) =>
   (cases * referenceCoverage) / (referenceCases * coverage);
 
-interface CoverageEnd {
+export interface CoverageEnd {
   readonly coverage: number;
   readonly referenceCoverage: number;
 }
 
 /** The ends of what the rounding of coverage allows. Two groups whose coverages complete each other are one number, not two. */
-function coverageCorners({ coverage }: SharesGroup, { coverage: reference }: SharesGroup): CoverageEnd[] {
+export function coverageCorners({ coverage }: SharesGroup, { coverage: reference }: SharesGroup): CoverageEnd[] {
   return coverageEnds(coverage).flatMap((own) =>
     complete(coverage, reference)
       ? [{ coverage: own, referenceCoverage: 1 - own }]
@@ -127,7 +127,7 @@ const complete = (one: Quantity, other: Quantity) => Math.abs(one.value + other.
 
 const coverageEnds = ({ low, high }: Quantity) => (low === high ? [low] : [low, high]);
 
-function ratioRoundingRange(
+export function ratioRoundingRange(
   numerators: readonly [Quantity, Quantity],
   coverages: readonly CoverageEnd[],
 ): { low: number | null; high: number | null } | null {

@@ -3,6 +3,7 @@ import { cautionsFor } from './cautions.ts';
 import { pairReadings, riskReading } from './counts-readings.ts';
 import type { CountsOptions, CountsRow } from './counts-readings.ts';
 import { missingFor } from './missing.ts';
+import { ratioVariants } from './ratio-variants.ts';
 import { reading } from './reading.ts';
 import type { Reading } from './reading.ts';
 import { usualLevel } from './report.ts';
@@ -13,6 +14,7 @@ import {
   populationFraction,
   shareRatioReadings,
 } from './shares-readings.ts';
+import { isUncertain, uncertainSharesReport } from './uncertain-shares-report.ts';
 
 /**
  * Shares of cases beside shares of the population: the ratio per person without anybody's total. With `population` the
@@ -26,6 +28,7 @@ export function sharesReport(question: SharesQuestion): Report {
     exact: clauses.exact,
     per: clauses.per,
   };
+  if (isUncertain(question)) return uncertainSharesReport(question, options);
   const others = groups.map((_, index) => index).filter((index) => index !== reference);
   const rows = rowsInPopulation(question);
   const population = groups.map(({ coverage, coverageImplied }, of) =>
@@ -64,6 +67,11 @@ export function sharesReport(question: SharesQuestion): Report {
     stated: [],
     cautions: cautionsFor(question, readings),
     missing: missingFor(question),
+    variants: ratioVariants(
+      question,
+      readings.find(({ id }) => id === 'risk-ratio'),
+      options,
+    ),
   };
 }
 

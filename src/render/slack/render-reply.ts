@@ -2,7 +2,7 @@ import { avoidLine } from '../words/avoid.ts';
 import type { KnownBlock } from '@slack/types';
 import { printCanonical } from '../../../grammar/print-canonical.ts';
 import type { Report } from '../../report/report.ts';
-import { postLine, shortLine, workingLine } from '../render-text.ts';
+import { postLine, shortLine, sideWorking, workingLine } from '../render-text.ts';
 import { tell } from '../words/tell.ts';
 import type { Telling } from '../words/telling.ts';
 import { lackingText } from '../words/missing-words.ts';
@@ -26,6 +26,8 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
   const words = tell(report);
   // Three or more groups have a table instead; their sentences stand with the readings.
   const post = words.table === null ? words.posts[0] : undefined;
+  // What one point more does stands with the readings.
+  const beside = words.sides.filter(({ table: rows }) => rows !== null).map(({ line }) => line);
   const lacking = lackingText(report);
   const careful = words.cautions.map(({ text }) => text).join(' ');
   const foot =
@@ -36,6 +38,7 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
   const blocks: KnownBlock[] = [
     paragraph(bold(words.headline)),
     paragraph(plain([words.readAs, ...words.remarks].join(' '))),
+    ...beside.map((line) => paragraph(plain(line))),
     ...(post === undefined ? [] : [paragraph(bold('To post:')), quotation(postLine(post))]),
     paragraph(bold('Careful: '), plain(careful)),
     ...(words.table === null ? [] : [table(words.table)]),
@@ -55,6 +58,7 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
     words.headline,
     words.readAs,
     ...words.remarks,
+    ...beside,
     ...(post === undefined ? [] : [`To post: ${postLine(post)}`]),
     `Careful: ${careful}`,
     ...(words.table ?? []).map((row) => row.join('; ')),
@@ -91,12 +95,16 @@ function partLines(
         title: 'All readings',
         lines: [
           ...words.rows.map(({ name, value }) => `${name}: ${value}`),
+          ...words.sides.flatMap(({ title, line, table: rows }) => [
+            ...(rows === null ? [line] : []),
+            ...(rows ?? []).slice(1).map((cells) => `${title}, ${cells.join(': ')}`),
+          ]),
           ...words.posts.slice(words.table === null ? 1 : 0).map((post) => `To post: ${postLine(post)}`),
           ...shortLine(words),
         ],
       };
     case 'working':
-      return { title: 'Working', lines: words.rows.map(workingLine) };
+      return { title: 'Working', lines: [...words.rows.map(workingLine), ...words.sides.map(sideWorking)] };
     case 'questions':
       return { title: 'Questions to send', lines: words.missing.map(({ text }) => text) };
     case 'avoid':

@@ -1,6 +1,7 @@
 import type { CautionId } from '../../report/cautions.ts';
 import { readingsOf } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
+import { coverageCaution, coverageChanged, expectedShare, unknownCaution, whoseGroupIsKnown } from './coverage-words.ts';
 import { cases } from './labels.ts';
 import { fixed, percent } from './numbers.ts';
 
@@ -23,6 +24,14 @@ export const cautionCatalogue = {
       'Counts without totals say nothing about how often: the larger group may simply have more of everything.',
   },
   'base-rate': { source: 'Orenstein et al. 1985, Bull. World Health Organ. 63:1055', text: baseRate },
+  'unknown-group': {
+    source: 'Horowitz & Manski 2000, JASA 95:77',
+    text: ({ question }) => (question.kind === 'shares' ? unknownCaution(question) : ''),
+  },
+  'coverage-changed': {
+    source: 'Farrington 1993, International Journal of Epidemiology 22:742',
+    text: ({ question }) => (question.kind === 'shares' ? coverageChanged(question) : ''),
+  },
   'all-cases-in-one-group': {
     source: 'Hanley & Lippman-Hand 1983, JAMA 249:1743',
     text: () => 'All cases are in one group. None in the other does not mean that none can happen there.',
@@ -79,8 +88,9 @@ function baseRate(report: Report): string {
   const { question } = report;
   const of = readingsOf(report, 'risk-ratio')[0]?.of ?? 0;
   const share = readingsOf(report, 'case-share').find((reading) => reading.of === of)?.estimate ?? NaN;
-  const held = question.kind === 'shares' ? (question.groups[of]?.coverage.text ?? '') : '';
-  return `${percent(share, 'short')} is a share of the ${cases(question)}, not a risk; it would be ${held} if both groups had ${cases(question)} equally often.`;
+  const group = question.kind === 'shares' ? question.groups[of] : undefined;
+  const held = group === undefined ? '' : expectedShare(group);
+  return `${percent(share, 'short')} is a share of the ${cases(question)}${whoseGroupIsKnown(question)}, not a risk; it would be ${held} if both groups had ${cases(question)} equally often.`;
 }
 
 function fewCases({ question }: Report): string {
@@ -100,7 +110,5 @@ function smallRisk({ question, readings }: Report): string {
 }
 
 function coverageAsGiven({ question }: Report): string {
-  if (question.kind !== 'shares') return '';
-  const held = question.groups.find(({ coverageImplied }) => !coverageImplied)?.coverage.text ?? 'Coverage';
-  return `${held} is taken as exact, for the same people, place and time.`;
+  return question.kind === 'shares' ? coverageCaution(question) : '';
 }

@@ -1,6 +1,7 @@
 import type { Reading } from '../../report/reading.ts';
 import { directionOf, readingsOf } from '../../report/report.ts';
 import type { Direction, Report } from '../../report/report.ts';
+import { boundsHeadline } from './bounds-headline.ts';
 import { limitsText } from './interval-text.ts';
 import { cases, Label, label, perOne, plainLabel, capital } from './labels.ts';
 import { percent, ratio } from './numbers.ts';
@@ -41,6 +42,8 @@ function twoGroups(report: Report, reading: Reading): string {
     return `Odds ratio ${value} (${note}), ${group} against ${reference}.`;
   }
   const direction = shownDirection(report, reading);
+  const bounds = boundsHeadline(report, direction);
+  if (bounds !== null) return bounds;
   if (direction === 'none-shown') {
     const what = reading.interval === null ? 'These figures are few' : `These figures fit ${fits(reading)}`;
     return `${what}: ${neitherShown}.`;

@@ -2,9 +2,10 @@ import type { CountsQuestion, SharesQuestion } from '../../../grammar/question.t
 import type { Reading, ReadingId } from '../../report/reading.ts';
 import { readingsOf } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
+import { assumption, coveragePhrase, unknownSentence, whoseGroupIsKnown } from './coverage-words.ts';
 import { shownDirection } from './headline.ts';
 import { changeText, limitsText } from './interval-text.ts';
-import { capital, cases, casesAsTyped, Label, label, perOne, population } from './labels.ts';
+import { capital, cases, casesAsTyped, Label, label, perOne } from './labels.ts';
 import { amount, beside, fixed, percent, points, ratio } from './numbers.ts';
 import { compared, comparison, intervalNote } from './ratio-words.ts';
 import { quantityText } from './read-as.ts';
@@ -38,7 +39,7 @@ export function shortPost(report: Report): string | null {
   const [reading] = readingsOf(report, report.headline);
   if (reading?.estimate == null || reading.against === null || question.groups.length !== 2) return null;
   if (question.kind === 'bare-counts' || report.headline === 'odds-ratio') return null;
-  if (shownDirection(report, reading) === 'none-shown') return null;
+  if (shownDirection(report, reading) === 'none-shown' || assumption(question) !== null) return null;
   const { words, joiner, figure } = comparison(
     reading.estimate,
     question.kind === 'shares' ? `many ${cases(question)}` : 'often',
@@ -136,6 +137,15 @@ function shareChangePost(report: Report, rows: string, reference: string): Post[
   if (change?.estimate == null || change.interval === null) return [];
   const counted = (text: string) => text.replaceAll('higher', 'more').replaceAll('lower', 'fewer');
   const more = counted(changeText(change.estimate, 'short'));
+  const granted = assumption(report.question);
+  if (granted !== null) {
+    return [
+      {
+        reading: 'relative-change',
+        text: `${rows} ${granted} ${more} ${cases(report.question)} ${perOne(report.question)} than ${reference} (${counted(grantedNote(change))}).`,
+      },
+    ];
+  }
   return [
     {
       reading: 'relative-change',
@@ -215,19 +225,23 @@ function sharesPosts(report: Report, question: SharesQuestion): Post[] {
   if (shownDirection(report, ratioReading) === 'none-shown')
     return [{ reading: 'risk-ratio', text: noneShown(ratioReading, made) }];
   const per = capital(perOne(report.question));
+  const granted = assumption(report.question);
   const ratioPost: Post =
     ratioReading.estimate === null
       ? {
           reading: 'risk-ratio',
-          text: `${made} No ratio can be given without ${cases(report.question)} in ${reference} (${intervalNote(ratioReading)}).`,
+          text: `${made} No ratio can be given without ${withoutWhat(question, ratioReading.of)} (${intervalNote(ratioReading)}).`,
         }
       : {
           reading: 'risk-ratio',
-          text: `${made} ${per}, that is ${compared(ratioReading, `many ${cases(report.question)}`, reference)}.`,
+          text:
+            granted === null
+              ? `${made} ${per}, that is ${compared(ratioReading, `many ${cases(report.question)}`, reference)}.`
+              : `${made} ${granted} ${compared(ratioReading, `many ${cases(report.question)} ${perOne(question)}`, reference, grantedNote(ratioReading))}.`,
         };
   const share = readingsOf(report, 'case-share').find(({ of }) => of === ratioReading.of);
   const sharePost: Post[] =
-    share?.interval == null
+    share?.interval == null || question.unknownCases !== null
       ? []
       : [
           {
@@ -238,6 +252,20 @@ function sharesPosts(report: Report, question: SharesQuestion): Post[] {
   return [ratioPost, ...shareChangePost(report, made, reference), ...sharePost];
 }
 
+/** What is wanting for a ratio: cases in the reference group, or anybody of the group in the sample. */
+function withoutWhat(question: SharesQuestion, of: number): string {
+  const known = question.groups[of]?.known;
+  return known?.kind === 'sample' && known.inGroup === 0
+    ? `anybody of ${label(question, of)} in the sample`
+    : `${cases(question)} in ${label(question, question.reference)}`;
+}
+
+/** The interval, with what it allows for beyond chance. */
+const grantedNote = (reading: Reading) =>
+  reading.interval?.unknownToEitherSide === true
+    ? `${intervalNote(reading)} however they split`
+    : intervalNote(reading);
+
 /** "“No helmet” made up 44 of 75 admitted (59%) and 38% of riders." */
 function madeUp(report: Report, question: SharesQuestion, index: number): string {
   const group = question.groups[index];
@@ -246,9 +274,9 @@ function madeUp(report: Report, question: SharesQuestion, index: number): string
   const all = question.totalCases;
   const counted =
     group.cases !== null && all !== null
-      ? `${quantityText(group.cases)} of ${quantityText(all)} ${casesAsTyped(report.question)} (${share})`
+      ? `${quantityText(group.cases)} of ${quantityText(all)} ${casesAsTyped(report.question)}${whoseGroupIsKnown(question)} (${share})`
       : `${quantityText(group.caseShare)} of the ${casesAsTyped(report.question)}`;
-  return `${Label(report.question, index)} made up ${counted} and ${group.coverage.text} of ${population(report.question)}.`;
+  return `${Label(report.question, index)} made up ${counted}${coveragePhrase(question, index)}.${unknownSentence(question)}`;
 }
 
 function statedPosts(report: Report): Post[] {

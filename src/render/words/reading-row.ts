@@ -1,6 +1,7 @@
 import type { Question } from '../../../grammar/question.ts';
 import type { IntervalMethod, NoInterval, Reading, ReadingInterval } from '../../report/reading.ts';
 import type { Report } from '../../report/report.ts';
+import { coverageFormula } from './coverage-formulas.ts';
 import { estimateText, levelText, limitsText, workingText } from './interval-text.ts';
 import { cases, plainLabel } from './labels.ts';
 import { amount, beside, fixed } from './numbers.ts';
@@ -13,7 +14,7 @@ export function readingRow(report: Report, reading: Reading): ReadingRow {
   return {
     reading,
     name: nameOf(question, reading, isFewer(report, reading)),
-    value: valueOf(reading),
+    value: valueOf(question, reading),
     formula: formulaOf(question, reading),
     long: workingText(reading),
     method: methodOf(reading),
@@ -65,9 +66,9 @@ function nameOf(question: Question, reading: Reading, fewer: boolean): string {
 const isFewer = ({ readings }: Report, { of }: Reading) =>
   (readings.find((each) => each.id === 'risk-difference' && each.of === of)?.estimate ?? 0) < 0;
 
-function valueOf(reading: Reading): string {
+function valueOf(question: Question, reading: Reading): string {
   const estimate = estimateText(reading, 'full') ?? (reading.unbounded ? 'no upper end' : 'no value');
-  const parts = [intervalPart(reading), exactPart(reading), roundingPart(reading), limitPart(reading)].filter(
+  const parts = [intervalPart(reading), exactPart(reading), roundingPart(question, reading), limitPart(reading)].filter(
     (part) => part !== null,
   );
   return parts.length === 0 ? estimate : `${estimate} (${parts.join('; ')})`;
@@ -99,6 +100,12 @@ export function whyText(why: NoInterval): string {
       return 'no interval: the number of cases is not given';
     case 'given':
       return 'as given, taken as exact';
+    case 'range-given':
+      return 'the middle of the range given';
+    case 'mean-of-growth':
+      return 'the mean of its two ends';
+    case 'mean-over-cases':
+      return 'the mean over all cases';
     case 'no-exact-form':
       return 'no exact interval of this reading; leave out `exact` for the score interval';
     case 'spans-none':
@@ -114,10 +121,14 @@ function exactPart(reading: Reading): string | null {
     : `exact limits ${limitsText(reading, reading.exactBeside, 'full')}`;
 }
 
-function roundingPart(reading: Reading): string | null {
-  return reading.roundingRange === null
-    ? null
-    : `rounding alone allows ${limitsText(reading, reading.roundingRange, 'full')}`;
+function roundingPart(question: Question, reading: Reading): string | null {
+  if (reading.roundingRange === null) return null;
+  const limits = limitsText(reading, reading.roundingRange, 'full');
+  const isRange = question.kind === 'shares' && question.groups.some(({ known }) => known.kind === 'range');
+  if (reading.id === 'population-share' && reading.whyNoInterval !== 'given') return `from ${limits}`;
+  return isRange && reading.id !== 'case-share'
+    ? `the range alone allows ${limits}`
+    : `rounding alone allows ${limits}`;
 }
 
 function limitPart(reading: Reading): string | null {
@@ -131,6 +142,8 @@ function formulaOf(question: Question, reading: Reading): string {
   const own = parts(question, reading.of);
   const other = reading.against === null ? null : parts(question, reading.against);
   const pair = other === null ? '' : `${own.risk} / (${other.risk})`;
+  const special = coverageFormula(question, reading);
+  if (special !== null) return special;
   switch (reading.id) {
     case 'risk':
       return own.risk;
@@ -234,6 +247,18 @@ const sources = {
   'wilson-share-odds': 'Wilson limits of the share of cases, through its odds (Orenstein 1985; Wilson 1927)',
   'clopper-pearson-share-odds':
     'exact limits of the share of cases, through its odds (Orenstein 1985; Clopper & Pearson 1934)',
+  'sampled-coverage':
+    'Miettinen-Nurminen score of the odds ratio, cases against the sample (Miettinen & Nurminen 1985)',
+  'sampled-coverage-fraction':
+    '1 minus the Miettinen-Nurminen score limits of the risk ratio, cases against the sample (Miettinen & Nurminen 1985)',
+  'effective-sample':
+    'the coverage as from a sample that would have its interval (effective sample), then the Miettinen-Nurminen score of the odds ratio (Miettinen & Nurminen 1985)',
+  'effective-sample-fraction':
+    'the coverage as from a sample that would have its interval (effective sample), then 1 minus the Miettinen-Nurminen score limits of the risk ratio (Miettinen & Nurminen 1985)',
+  'growing-coverage':
+    'the wider of two assumptions, constant risk and evenly spread cases, each from the Wilson limits of the share (Wilson 1927)',
+  'coverage-by-period': 'score of the cases of all periods together (Farrington 1993)',
+  'as-given': 'the interval that came with the figure',
 } satisfies Record<IntervalMethod, string>;
 
 /** The name of an interval's method, with its source. */
@@ -243,6 +268,11 @@ function methodOf(reading: Reading): string {
   return methodText(reading.interval);
 }
 
-export function methodText({ method, envelope }: ReadingInterval): string {
-  return envelope ? `${sources[method]}, outermost limits over the range given` : sources[method];
+export function methodText({ method, envelope, unknownToEitherSide }: ReadingInterval): string {
+  const over = envelope ? ', outermost limits over the range given' : '';
+  const unknown =
+    unknownToEitherSide === true
+      ? ', all unknown cases on one side, then on the other (Horowitz & Manski 2000)'
+      : '';
+  return `${sources[method]}${over}${unknown}`;
 }
