@@ -66,7 +66,7 @@ export function checkForms(
   const { trySpan } = setting.given;
   if (trySpan !== undefined && groups.length !== 2)
     return refused(diagnosis('coverage-form-of-several', trySpan));
-  if (form === undefined && unknown === null) return settled(null);
+  if (form === undefined && unknown === null && trySpan === undefined) return settled(null);
   const place = form?.coverage.span ?? unknown?.span ?? { from: 0, to: 0 };
   if (groups.length !== 2)
     return refused(diagnosis(form === undefined ? 'unknown-not-counted' : 'coverage-form-of-several', place));

@@ -12,7 +12,7 @@ export const scenarios = {
     'cases: none 40, one course 12, two courses 23; coverage: none 30%, one course 15%, two courses 55%',
   'helmets-coverage-range': 'cases: no helmet 44, helmet 31; coverage: helmet 55-65% of riders',
   'helmets-coverage-sample': 'cases: no helmet 44, helmet 31; coverage: no helmet 190 of 500 riders',
-  'helmets-nobody-in-the-sample': 'cases: no helmet 4, helmet 61; coverage: no helmet 0 of 120 riders',
+  'helmets-nobody-in-the-sample': 'cases: no helmet 6, helmet 61; coverage: no helmet 0 of 120 riders',
   'helmets-coverage-interval': 'no helmet: 44 of 75 injured, 38% (34 to 42) of riders',
   'helmets-coverage-about': 'cases: no helmet 44, helmet 31; coverage: no helmet about 38%',
   'helmets-coverage-grew': 'cases: helmet 31, no helmet 44; coverage: helmet from 20% to 60% of riders',

@@ -24,8 +24,7 @@ const buttonWords = {
 /** The full answer, for the thread: at most 750 characters before the buttons for figures of usual length. */
 export function renderReply(report: Report, context: CheckContext): SlackMessage {
   const words = tell(report);
-  // Three or more groups have a table instead; their sentences stand with the readings.
-  const post = words.table === null ? words.posts[0] : undefined;
+  const post = hasFirstPost(words) ? words.posts[0] : undefined;
   // What one point more does stands with the readings.
   const beside = words.sides.filter(({ table: rows }) => rows !== null).map(({ line }) => line);
   const lacking = lackingText(report);
@@ -69,6 +68,13 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
   return { text: `${withinText(escape(text))}\n${end}`, blocks };
 }
 
+/**
+ * Whether the first sentence to post stands in the answer. Three or more groups have a table instead, and a sentence that takes
+ * something for granted needs the others beside it: those stand with the readings.
+ */
+const hasFirstPost = ({ table: rows, sides }: Telling) =>
+  rows === null && !sides.some(({ topic }) => topic === 'growth' || topic === 'unknown');
+
 /** One of the parts behind the answer's buttons, for the person who pressed. */
 export function renderPart(line: string, report: Report, part: PartBehind): SlackMessage {
   const words = tell(report);
@@ -97,9 +103,9 @@ function partLines(
           ...words.rows.map(({ name, value }) => `${name}: ${value}`),
           ...words.sides.flatMap(({ title, line, table: rows }) => [
             ...(rows === null ? [line] : []),
-            ...(rows ?? []).slice(1).map((cells) => `${title}, ${cells.join(': ')}`),
+            ...(rows ?? []).slice(1).map((cells) => `${title}, ${cells[0] ?? ''}: ${cells[1] ?? ''} (interval ${cells[2] ?? ''})`),
           ]),
-          ...words.posts.slice(words.table === null ? 1 : 0).map((post) => `To post: ${postLine(post)}`),
+          ...words.posts.slice(hasFirstPost(words) ? 1 : 0).map((post) => `To post: ${postLine(post)}`),
           ...shortLine(words),
         ],
       };

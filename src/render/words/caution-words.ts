@@ -1,7 +1,7 @@
 import type { CautionId } from '../../report/cautions.ts';
 import { readingsOf } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
-import { coverageCaution, coverageChanged, expectedShare, unknownCaution, whoseGroupIsKnown } from './coverage-words.ts';
+import { coverageCaution, coverageChanged, expectedShare, unknownCaution, ofKnownGroup } from './coverage-words.ts';
 import { cases } from './labels.ts';
 import { fixed, percent } from './numbers.ts';
 
@@ -90,7 +90,7 @@ function baseRate(report: Report): string {
   const share = readingsOf(report, 'case-share').find((reading) => reading.of === of)?.estimate ?? NaN;
   const group = question.kind === 'shares' ? question.groups[of] : undefined;
   const held = group === undefined ? '' : expectedShare(group);
-  return `${percent(share, 'short')} is a share of the ${cases(question)}${whoseGroupIsKnown(question)}, not a risk; it would be ${held} if both groups had ${cases(question)} equally often.`;
+  return `${percent(share, 'short')} is a share of the ${cases(question)}${ofKnownGroup(question)}, not a risk; it would be ${held} if both groups had ${cases(question)} equally often.`;
 }
 
 function fewCases({ question }: Report): string {

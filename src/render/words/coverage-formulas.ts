@@ -14,10 +14,10 @@ export function coverageFormula(question: Question, { id, of, against }: Reading
     case 'risk-ratio':
       return own.known.kind === 'periods'
         ? `the t at which sum(N t o / (1 + t o)) = ${caseText(own)}, N all cases of a ${own.known.by} and o = c/(1 - c) its coverage's odds`
-        : `${caseText(own)} / (${caseText(other)}) x ${term(other)} / ${term(own)}`;
+        : `${caseText(own)}/${caseText(other)} x ${term(other)} / ${term(own)}`;
     case 'population-attributable-fraction':
       return own.known.kind === 'sample'
-        ? `1 - ${allOf(question, other)} / (${term(other)})`
+        ? `1 - ${allOf(question, other)} / ${term(other)}`
         : own.known.kind === 'periods'
           ? `sum of N c(ratio - 1) / (1 + c(ratio - 1)) over the sum of N, c the coverage of a ${own.known.by}`
           : null;
@@ -35,7 +35,7 @@ const allOf = ({ totalCases }: SharesQuestion, group: SharesGroup) =>
 /** The coverage that stands in the ratio's formula. */
 function term(group: SharesGroup): string {
   const { known } = group;
-  if (known.kind === 'sample') return `${count(known.inGroup)}/${count(known.sampled)}`;
+  if (known.kind === 'sample') return `(${count(known.inGroup)}/${count(known.sampled)})`;
   return shareText(group);
 }
 
@@ -46,7 +46,7 @@ function shareFormula(group: SharesGroup): string {
     case 'interval':
       return shareText(group);
     case 'sample':
-      return term(group);
+      return `${count(known.inGroup)}/${count(known.sampled)}`;
     case 'range':
       return `(${known.low.text} + ${known.high.text}) / 2`;
     case 'growth':

@@ -5,7 +5,7 @@ import { count, percent } from './numbers.ts';
 /** Coverage in words, however it is known. */
 
 /** Beyond this many periods a sentence names the first and the last only. */
-const mostPeriods = 5;
+const mostPeriods = 3;
 
 type Known<Kind extends CoverageKnown['kind']> = Extract<CoverageKnown, { kind: Kind }>;
 
@@ -20,7 +20,7 @@ export function coverageRead(question: SharesQuestion, index: number): string {
     case 'given':
       return `${coverage.text}${of}`;
     case 'interval':
-      return full ? `${shareText(group)}${of} (its own interval ${ends(known)})` : shareText(group);
+      return full ? `${shareText(group)}${of} (${ends(known)})` : shareText(group);
     case 'range':
       return `${ends(known)}${of}`;
     case 'growth':
@@ -30,7 +30,7 @@ export function coverageRead(question: SharesQuestion, index: number): string {
         ? `${count(known.inGroup)} of a sample of ${count(known.sampled)}${question.unit === null ? '' : ` ${question.unit}`}`
         : `${count(known.inGroup)} of ${count(known.sampled)}`;
     case 'periods':
-      return full ? `${periodsText(question, known)}` : 'the rest';
+      return full ? `${periodsText(question, known)}` : '';
   }
 }
 
@@ -44,7 +44,7 @@ function periodsText(question: Question, { by, periods }: Known<'periods'>): str
     );
     return `${rows.join(', ')} of ${population(question)} by ${by}`;
   }
-  return `${name(first.label)}${first.coverage.text} to ${name(last.label)}${last.coverage.text} of ${population(question)} by ${by}, ${periods.length} in all`;
+  return `${name(first.label)}${first.coverage.text} to ${name(last.label)}${last.coverage.text} of ${population(question)} in ${periods.length} ${by}s`;
 }
 
 const ends = ({ low, high }: Known<'range'> | Known<'interval'>) => `${low.text} to ${high.text}`;
@@ -52,9 +52,9 @@ const ends = ({ low, high }: Known<'range'> | Known<'interval'>) => `${low.text}
 /** One number for a coverage, where a sentence needs one: `38%`, and the middle of a range. */
 export function shareText({ coverage, known }: SharesGroup): string {
   if (known.kind === 'given') return coverage.text;
-  return known.kind === 'interval'
-    ? `${Number((coverage.value * 100).toFixed(10))}%`
-    : percent(coverage.value, 'short');
+  return known.kind === 'sample' || known.kind === 'periods'
+    ? percent(coverage.value, 'short')
+    : `${Number((coverage.value * 100).toFixed(10))}%`;
 }
 
 /** What the share of the cases would be if both groups had them equally often. */
@@ -64,9 +64,10 @@ export function expectedShare(group: SharesGroup): string {
       return group.coverage.text;
     case 'range':
       return ends(group.known);
+    case 'growth':
+      return shareText(group);
     case 'interval':
     case 'sample':
-    case 'growth':
     case 'periods':
       return `about ${shareText(group)}`;
   }
@@ -98,12 +99,12 @@ function courseText({ by, periods }: Known<'periods'>): string {
   const texts = periods.map(({ coverage }) => coverage.text);
   return texts.length <= mostPeriods
     ? `was ${texts.join(', then ')}, by ${by}`
-    : `went from ${texts[0] ?? ''} to ${texts.at(-1) ?? ''} over ${texts.length} ${by}s`;
+    : `went from ${texts[0] ?? ''} to ${texts.at(-1) ?? ''}`;
 }
 
-/** "whose group is known", behind the cases, where some are of unknown group. */
-export const whoseGroupIsKnown = (question: Question) =>
-  question.kind === 'shares' && question.unknownCases !== null ? ' whose group is known' : '';
+/** "of known group", behind the cases, where some are of unknown group. */
+export const ofKnownGroup = (question: Question) =>
+  question.kind === 'shares' && question.unknownCases !== null ? ' of known group' : '';
 
 /** "Of 12 more the group is not known.", in front of a sentence about the others. */
 export const unknownSentence = ({ unknownCases }: SharesQuestion) =>
@@ -139,9 +140,9 @@ export function coverageCaution(question: SharesQuestion): string {
     case 'range':
       return `The interval covers every coverage from ${ends(known)}, ${same}.`;
     case 'interval':
-      return `${ends(known)} is taken as chance alone${known.level === null ? ', at 95%' : `, at ${known.level.text}`}, ${same}.`;
+      return `${ends(known)} is taken as chance alone (${known.level?.text ?? '95%'}), ${same}.`;
     case 'sample':
-      return `The interval covers chance in the sample of ${count(known.sampled)}, not who was asked: it has to stand ${same}.`;
+      return `Chance in the sample of ${count(known.sampled)} is allowed for; other people, place or time are not.`;
     case 'growth':
     case 'periods':
       return coverageChanged(question);
@@ -154,11 +155,11 @@ const capitalised = (text: string) => text.slice(0, 1).toUpperCase() + text.slic
 export const coverageChanged = ({ groups }: SharesQuestion) =>
   groups.some(({ known }) => known.kind === 'growth')
     ? 'Coverage changed while the cases were counted, so the ratio depends on when they came.'
-    : 'The coverage that counts is the one when the cases arose, not when they were reported.';
+    : 'Coverage counts when cases arise, not when reported.';
 
-/** "The group of 12 of 87 cases is not known ..." */
+/** "Of all 87 cases, 12 have no known group." */
 export function unknownCaution(question: SharesQuestion): string {
   const unknown = question.unknownCases?.value ?? 0;
   const all = unknown + (question.totalCases?.value ?? 0);
-  return `The group of ${count(unknown)} of all ${count(all)} ${casesAsTyped(question)} is not known; nothing says that they split like the others.`;
+  return `Of all ${count(all)} ${casesAsTyped(question)}, ${count(unknown)} have no known group.`;
 }

@@ -2,7 +2,7 @@ import type { CountsQuestion, SharesQuestion } from '../../../grammar/question.t
 import type { Reading, ReadingId } from '../../report/reading.ts';
 import { readingsOf } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
-import { assumption, coveragePhrase, unknownSentence, whoseGroupIsKnown } from './coverage-words.ts';
+import { assumption, coveragePhrase, unknownSentence, ofKnownGroup } from './coverage-words.ts';
 import { shownDirection } from './headline.ts';
 import { changeText, limitsText } from './interval-text.ts';
 import { capital, cases, casesAsTyped, Label, label, perOne } from './labels.ts';
@@ -230,7 +230,7 @@ function sharesPosts(report: Report, question: SharesQuestion): Post[] {
     ratioReading.estimate === null
       ? {
           reading: 'risk-ratio',
-          text: `${made} No ratio can be given without ${withoutWhat(question, ratioReading.of)} (${intervalNote(ratioReading)}).`,
+          text: `${made} No ratio can be given ${wanting(question, ratioReading.of)} (${intervalNote(ratioReading)}).`,
         }
       : {
           reading: 'risk-ratio',
@@ -253,11 +253,11 @@ function sharesPosts(report: Report, question: SharesQuestion): Post[] {
 }
 
 /** What is wanting for a ratio: cases in the reference group, or anybody of the group in the sample. */
-function withoutWhat(question: SharesQuestion, of: number): string {
+function wanting(question: SharesQuestion, of: number): string {
   const known = question.groups[of]?.known;
   return known?.kind === 'sample' && known.inGroup === 0
-    ? `anybody of ${label(question, of)} in the sample`
-    : `${cases(question)} in ${label(question, question.reference)}`;
+    ? `with nobody of ${label(question, of)} in the sample`
+    : `without ${cases(question)} in ${label(question, question.reference)}`;
 }
 
 /** The interval, with what it allows for beyond chance. */
@@ -274,7 +274,7 @@ function madeUp(report: Report, question: SharesQuestion, index: number): string
   const all = question.totalCases;
   const counted =
     group.cases !== null && all !== null
-      ? `${quantityText(group.cases)} of ${quantityText(all)} ${casesAsTyped(report.question)}${whoseGroupIsKnown(question)} (${share})`
+      ? `${quantityText(group.cases)} of ${quantityText(all)} ${casesAsTyped(report.question)}${ofKnownGroup(question)} (${share})`
       : `${quantityText(group.caseShare)} of the ${casesAsTyped(report.question)}`;
   return `${Label(report.question, index)} made up ${counted}${coveragePhrase(question, index)}.${unknownSentence(question)}`;
 }

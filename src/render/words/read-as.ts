@@ -32,7 +32,8 @@ export function readAs(question: Question): string {
           index === 0 && question.totalCases !== null && cases !== null
             ? ` of ${quantityText(question.totalCases)} ${casesAsTyped(question)}`
             : '';
-        return `${named(index)} ${share}${of}, ${coverageRead(question, index)}`;
+        const held = coverageRead(question, index);
+        return `${named(index)} ${share}${of}${held === '' ? '' : `, ${held}`}`;
       });
       if (question.unknownCases !== null)
         rows.push(`${quantityText(question.unknownCases)} of unknown group`);

@@ -252,13 +252,13 @@ const sources = {
   'sampled-coverage-fraction':
     '1 minus the Miettinen-Nurminen score limits of the risk ratio, cases against the sample (Miettinen & Nurminen 1985)',
   'effective-sample':
-    'the coverage as from a sample that would have its interval (effective sample), then the Miettinen-Nurminen score of the odds ratio (Miettinen & Nurminen 1985)',
+    'The coverage as from a sample that would have its interval (effective sample), then the Miettinen-Nurminen score of the odds ratio (Miettinen & Nurminen 1985)',
   'effective-sample-fraction':
-    'the coverage as from a sample that would have its interval (effective sample), then 1 minus the Miettinen-Nurminen score limits of the risk ratio (Miettinen & Nurminen 1985)',
+    'The coverage as from a sample that would have its interval (effective sample), then 1 minus the Miettinen-Nurminen score limits of the risk ratio (Miettinen & Nurminen 1985)',
   'growing-coverage':
-    'the wider of two assumptions, constant risk and evenly spread cases, each from the Wilson limits of the share (Wilson 1927)',
-  'coverage-by-period': 'score of the cases of all periods together (Farrington 1993)',
-  'as-given': 'the interval that came with the figure',
+    'The wider of two assumptions, constant risk and evenly spread cases, each from the Wilson limits of the share (Wilson 1927)',
+  'coverage-by-period': 'Score of the cases of all periods together (Farrington 1993)',
+  'as-given': 'The interval that came with the figure',
 } satisfies Record<IntervalMethod, string>;
 
 /** The name of an interval's method, with its source. */

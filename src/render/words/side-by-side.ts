@@ -17,6 +17,9 @@ export function sidesFor(report: Report): readonly Side[] {
 
 function sideOf(report: Report, question: SharesQuestion, variants: RatioVariants): Side {
   const of = plainLabel(question, variants.coverageOf);
+  // Only where it is not the group that the answer is about.
+  const whose =
+    variants.rows[0]?.of === variants.coverageOf ? '' : ` of ${label(question, variants.coverageOf)}`;
   const table = (first: string, name: (row: RatioVariant) => string) => [
     [first, 'Ratio', 'Interval'],
     ...variants.rows.map((row) => [name(row), valueText(row, 'full'), limitsText(row.interval)]),
@@ -44,7 +47,7 @@ function sideOf(report: Report, question: SharesQuestion, variants: RatioVariant
       return {
         topic: 'tried',
         title: `Ratio over several coverages of ${of}`,
-        line: `At a coverage of ${label(question, variants.coverageOf)} of ${triedList(variants)}.`,
+        line: `Ratio at a coverage${whose} of ${triedList(variants)}.`,
         table: table(`Coverage, ${of}`, ({ coverage }) => share(coverage)),
         working: 'Each coverage taken as exact, the cases as they are (Orenstein 1985).',
       };
@@ -127,7 +130,7 @@ function unknownLine(report: Report, question: SharesQuestion, { rows }: RatioVa
 }
 
 function triedList({ rows }: RatioVariants): string {
-  return rows.map((row) => `${share(row.coverage)} the ratio is ${valueText(row, 'short')}`).join(', of ');
+  return rows.map((row) => `${share(row.coverage)}: ${valueText(row, 'short')}`).join('; ');
 }
 
 /** From this slope on a percentage for one point would mislead: the curve bends too much. */
