@@ -91,7 +91,8 @@ export function joined(tokens: Tokens, start: number, { end, text, value, covera
 
 const type = (tokens: Tokens, at: number) => tokens[at]?.tokenType;
 const image = (tokens: Tokens, at: number) => tokens[at]?.image ?? '';
-const grew = /^(?:grew|grown|grows|rose|risen|rises|fell|fallen|falls|went|up|down|dropped|increased|climbed)$/i;
+const grew =
+  /^(?:grew|grown|grows|rose|risen|rises|fell|fallen|falls|went|up|down|dropped|increased|climbed)$/i;
 
 function formAt(tokens: Tokens, at: number): FoundForm | null {
   // "about" in front of a range says no more than the range does.

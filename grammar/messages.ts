@@ -70,7 +70,8 @@ export const messages = {
     'This is a rate over time or distance. I read counts of people or events so far: how many, out of how many?',
   'not-yet-change': () =>
     'This is a change over time. I read it so far as two groups: how many of how many before, and after.',
-  'coverage-no-share': () => 'Coverage is a share: a percentage, or how many of a sample, as in "310 of 500".',
+  'coverage-no-share': () =>
+    'Coverage is a share: a percentage, or how many of a sample, as in "310 of 500".',
   'coverage-upside-down': (low: string, high: string) =>
     `${low} to ${high}: the second end has to be the larger one. The other way round?`,
   'range-at-end': (end: string) =>
@@ -80,7 +81,8 @@ export const messages = {
   'growth-without-change': (from: string) => `From ${from} to ${from} is no change. Write ${from} alone.`,
   'growth-at-one-end': (from: string) =>
     `Coverage of ${from} all the time leaves nobody to compare with. One end may be 0% or 100%, not both.`,
-  'coverage-two-forms': () => 'The two coverages do not complete each other. Give one; the other is what remains.',
+  'coverage-two-forms': () =>
+    'The two coverages do not complete each other. Give one; the other is what remains.',
   'coverage-form-of-several': () =>
     'With three or more groups I read each coverage as one number. Send two groups at a time.',
   'sample-as-count': (share: string, total: string) =>
@@ -103,7 +105,8 @@ export const messages = {
     `The cases by period add up to ${periods}, those of the groups to ${groups}. They have to be the same cases.`,
   'period-at-end': (coverage: string) =>
     `In a period with a coverage of ${coverage} there is nobody to compare with. Leave it out, with its cases.`,
-  'periods-need-counts': () => 'Coverage by period needs each group as a whole number of cases, and all of them known.',
+  'periods-need-counts': () =>
+    'Coverage by period needs each group as a whole number of cases, and all of them known.',
   'unknown-not-counted': () =>
     'Cases of unknown group are read as a count beside the counts of two groups: "no helmet 44, helmet 31, unknown 12".',
   'try-without-coverage': () => '"try" works the ratio out at several coverages, and this line has none.',

@@ -16,7 +16,9 @@ export function coverageText(
 ): string {
   if (known.kind !== 'periods') return '';
   const { by, periods } = known;
-  const shares = periods.map(({ label, coverage }) => `${label === null ? '' : `${spelled(label)} `}${coverage.text}`);
+  const shares = periods.map(
+    ({ label, coverage }) => `${label === null ? '' : `${spelled(label)} `}${coverage.text}`,
+  );
   const of = name === null ? '' : ` of ${spelled(name)}`;
   const what = unit === null ? '' : ` of ${unit}`;
   const counts = periods.map(({ allCases }) => grouped(allCases)).join(', ');

@@ -27,7 +27,8 @@ export function heldCoverage({ figure, stated, span }: Item, setting: Setting): 
       setting.typed,
     );
     if (!total.ok) return total;
-    if (total.value.value === 0) return refused(diagnosis('total-zero', figure.total.span, ['A sample of 0']));
+    if (total.value.value === 0)
+      return refused(diagnosis('total-zero', figure.total.span, ['A sample of 0']));
     if (figure.kind === 'share' && figure.share.coverage !== undefined)
       return refused(diagnosis('mixed-figures', span));
     const counted =
@@ -39,9 +40,7 @@ export function heldCoverage({ figure, stated, span }: Item, setting: Setting): 
     const at = { from: place.from, to: figure.total.span.to };
     if (figure.kind === 'share' && counted.value.precision !== 'exact') {
       const line = `${setting.typed.slice(0, at.from)}${grouped(Math.round(counted.value.value))} of ${total.value.text}`;
-      return refused(
-        diagnosis('sample-as-count', at, [figure.share.text, total.value.text], [line]),
-      );
+      return refused(diagnosis('sample-as-count', at, [figure.share.text, total.value.text], [line]));
     }
     return sample(counted.value, total.value, stated?.share ?? null, at);
   }
@@ -73,8 +72,7 @@ const percentText = (share: number) => `${Number((share * 100).toFixed(10))}%`;
 
 function given(share: ShareValue, span: Span): Settled<HeldCoverage> {
   if (share.value > 1) return refused(diagnosis('share-above-one', span, [share.text]));
-  if (share.value <= 0 || share.value >= 1)
-    return refused(diagnosis('coverage-at-end', span, [share.text]));
+  if (share.value <= 0 || share.value >= 1) return refused(diagnosis('coverage-at-end', span, [share.text]));
   return settled({ coverage: shareQuantity(share, span), known: { kind: 'given' } });
 }
 
@@ -107,7 +105,11 @@ function range(
 }
 
 /** One number with an interval of its own, which has to hold it. */
-function interval({ low, high, level }: Written<'interval'>, share: ShareValue, span: Span): Settled<HeldCoverage> {
+function interval(
+  { low, high, level }: Written<'interval'>,
+  share: ShareValue,
+  span: Span,
+): Settled<HeldCoverage> {
   const [least, most] = [end(low), end(high)];
   const value = percentText(share.value);
   if (most.value > 1) return refused(diagnosis('share-above-one', span, [most.text]));
@@ -118,7 +120,14 @@ function interval({ low, high, level }: Written<'interval'>, share: ShareValue, 
   if (at !== null && !(at.value >= 0.5 && at.value <= 0.9999))
     return refused(diagnosis('level-out-of-range', span, [at.text]));
   return settled({
-    coverage: { text: share.text, value: share.value, low: share.value, high: share.value, precision: 'exact', span },
+    coverage: {
+      text: share.text,
+      value: share.value,
+      low: share.value,
+      high: share.value,
+      precision: 'exact',
+      span,
+    },
     known: { kind: 'interval', low: least, high: most, level: at },
   });
 }
@@ -179,7 +188,11 @@ function sample(
 }
 
 /** Period by period, with all cases of each. */
-function periods({ by, periods: typed }: Written<'periods'>, share: ShareValue, span: Span): Settled<HeldCoverage> {
+function periods(
+  { by, periods: typed }: Written<'periods'>,
+  share: ShareValue,
+  span: Span,
+): Settled<HeldCoverage> {
   for (const { coverage, coverageAt, allCases, casesAt } of typed) {
     const held = end(coverage);
     if (held.value > 1) return refused(diagnosis('share-above-one', coverageAt, [held.text]));
@@ -221,7 +234,10 @@ export function restOfHeld(typed: readonly HeldCoverage[], span: Span): HeldCove
   if (only === undefined || typed.length > 1 || only.known.kind === 'given')
     return { coverage, known: { kind: 'given' } };
   const known = mirrored(only.known);
-  return { coverage: { ...coverage, text: mirroredText(known, coverage.value), precision: only.coverage.precision }, known };
+  return {
+    coverage: { ...coverage, text: mirroredText(known, coverage.value), precision: only.coverage.precision },
+    known,
+  };
 }
 
 function mirroredText(known: CoverageKnown, value: number): string {

@@ -45,8 +45,7 @@ export function apartUnknown<T extends Parts>(
   if (second !== undefined) return refused(diagnosis('same-name-twice', second.span, [label]));
   // "44 of 87, unknown 12": the 87 may hold the 12 or not.
   const totalled = parts.cases.some(({ figure }) => figure.total !== null || figure.kind === 'share');
-  if (totalled || item.figure.kind !== 'count')
-    return refused(diagnosis('unknown-not-counted', item.span));
+  if (totalled || item.figure.kind !== 'count') return refused(diagnosis('unknown-not-counted', item.span));
   const cases = countQuantity(item.figure.count, item.figure.countSpan, setting.typed);
   if (!cases.ok) return cases;
   if (cases.value.precision === 'range') return refused(diagnosis('unknown-not-counted', item.span));

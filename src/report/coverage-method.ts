@@ -6,7 +6,10 @@ import type { Period } from '../stats/coverage-by-period.ts';
 import { effectiveSample } from '../stats/effective-sample.ts';
 import { hullOfGrowth, ratioUnderConstantRisk, ratioUnderEvenCases } from '../stats/growing-coverage.ts';
 import type { Interval } from '../stats/interval.ts';
-import { sampledCoverageRatioInterval, sampledPopulationFractionInterval } from '../stats/sampled-coverage.ts';
+import {
+  sampledCoverageRatioInterval,
+  sampledPopulationFractionInterval,
+} from '../stats/sampled-coverage.ts';
 import { exactShareRatioInterval, shareRatioInterval } from '../stats/share-ratio.ts';
 import { wilsonInterval } from '../stats/wilson-interval.ts';
 import type { IntervalMethod } from './reading.ts';
@@ -46,12 +49,22 @@ export function coverageMethod(
     case 'given':
       return { ratio, fraction, ...overCoverages([coverage.value], level, exact), envelope: false };
     case 'range':
-      return { ratio, fraction, ...overCoverages([known.low.value, known.high.value], level, exact), envelope: true };
+      return {
+        ratio,
+        fraction,
+        ...overCoverages([known.low.value, known.high.value], level, exact),
+        envelope: true,
+      };
     case 'sample':
     case 'interval':
       return { ratio, fraction, ...sampled(known, coverage.value, level, exact), envelope: false };
     case 'growth':
-      return { ratio, fraction, ...growing(known.start.value, known.end.value, level, exact), envelope: false };
+      return {
+        ratio,
+        fraction,
+        ...growing(known.start.value, known.end.value, level, exact),
+        envelope: false,
+      };
     case 'periods':
       return byPeriod(
         known.periods.map((period) => ({ allCases: period.allCases, coverage: period.coverage.value })),

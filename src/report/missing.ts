@@ -24,7 +24,9 @@ export function missingFor(question: Question): readonly MissingId[] {
     case 'shares':
       return [
         ...(question.unknownCases === null ? [] : (['unknown-groups'] as const)),
-        ...(question.groups.some(({ known }) => known.kind === 'growth') ? (['cases-by-period'] as const) : []),
+        ...(question.groups.some(({ known }) => known.kind === 'growth')
+          ? (['cases-by-period'] as const)
+          : []),
         ...(question.groups.some(({ cases }) => cases === null) ? (['case-number'] as const) : []),
         ...(question.clauses.population === null ? (['group-sizes'] as const) : []),
         'same-people',

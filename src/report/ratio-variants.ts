@@ -78,7 +78,11 @@ function countsOf({ groups }: SharesQuestion, { of, against }: Pair): readonly [
   return [own.value, other.value];
 }
 
-function growthVariants(question: SharesQuestion, reading: Reading, { level, exact }: CountsOptions): RatioVariants[] {
+function growthVariants(
+  question: SharesQuestion,
+  reading: Reading,
+  { level, exact }: CountsOptions,
+): RatioVariants[] {
   const pair = pairOf(reading);
   const known = question.groups[pair.of]?.known;
   const counts = countsOf(question, pair);
@@ -99,7 +103,9 @@ function growthVariants(question: SharesQuestion, reading: Reading, { level, exa
     ),
     variant('even-cases', pair, null, even.estimate ?? Infinity, shown(even.interval)),
     // At 0% or 100% there is nobody to compare with at the end.
-    ...(closing > 0 && closing < 1 ? [atCoverage('closing-coverage', pair, counts, closing, closing, { level, exact })] : []),
+    ...(closing > 0 && closing < 1
+      ? [atCoverage('closing-coverage', pair, counts, closing, closing, { level, exact })]
+      : []),
   ];
   return [{ topic: 'growth', coverageOf: pair.of, rows, slope: null }];
 }
@@ -128,7 +134,11 @@ const fixedAt = (value: number): Pick<SharesGroup, 'coverage' | 'known'> => ({
   known: { kind: 'given' },
 });
 
-function unknownVariants(question: SharesQuestion, reading: Reading, { level, exact }: CountsOptions): RatioVariants[] {
+function unknownVariants(
+  question: SharesQuestion,
+  reading: Reading,
+  { level, exact }: CountsOptions,
+): RatioVariants[] {
   const pair = pairOf(reading);
   const group = question.groups[pair.of];
   const counts = countsOf(question, pair);
@@ -170,7 +180,11 @@ const typedGroup = ({ groups }: SharesQuestion) =>
     groups.findIndex(({ coverageImplied }) => !coverageImplied),
   );
 
-function triedVariants(question: SharesQuestion, reading: Reading, { level, exact }: CountsOptions): RatioVariants[] {
+function triedVariants(
+  question: SharesQuestion,
+  reading: Reading,
+  { level, exact }: CountsOptions,
+): RatioVariants[] {
   const pair = pairOf(reading);
   const counts = countsOf(question, pair);
   const tried = question.clauses.tryCoverages ?? [];

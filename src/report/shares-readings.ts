@@ -115,7 +115,10 @@ export interface CoverageEnd {
 }
 
 /** The ends of what the rounding of coverage allows. Two groups whose coverages complete each other are one number, not two. */
-export function coverageCorners({ coverage }: SharesGroup, { coverage: reference }: SharesGroup): CoverageEnd[] {
+export function coverageCorners(
+  { coverage }: SharesGroup,
+  { coverage: reference }: SharesGroup,
+): CoverageEnd[] {
   return coverageEnds(coverage).flatMap((own) =>
     complete(coverage, reference)
       ? [{ coverage: own, referenceCoverage: 1 - own }]

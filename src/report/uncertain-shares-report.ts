@@ -160,7 +160,8 @@ function caseShare(pair: Pair, index: number): Reading {
       ? clopperPearsonInterval(cases, cases + referenceCases, options.level)
       : wilsonInterval(cases, cases + referenceCases, options.level);
   // Seen from the other group the unknown cases lie on the other side.
-  const turned = pair.counted === null || index === of ? pair.counted : ([pair.counted[1], pair.counted[0]] as const);
+  const turned =
+    pair.counted === null || index === of ? pair.counted : ([pair.counted[1], pair.counted[0]] as const);
   const interval = limitsOf(
     { ...pair, counted: turned, method: { ...pair.method, envelope: false } },
     someCases(proportion),
@@ -182,7 +183,11 @@ const someCases =
     cases + referenceCases === 0 ? { low: 0, high: 1 } : limits(cases, referenceCases);
 
 /** The coverage itself: what was given, or what its sample or its own interval says. */
-function populationShare({ coverage, known, coverageImplied }: SharesGroup, of: number, { level, exact }: CountsOptions): Reading {
+function populationShare(
+  { coverage, known, coverageImplied }: SharesGroup,
+  of: number,
+  { level, exact }: CountsOptions,
+): Reading {
   const common = { id: 'population-share', of, estimate: coverage.value } as const;
   const ends = { low: coverage.low, high: coverage.high };
   switch (known.kind) {

@@ -3,6 +3,7 @@ import { messages } from '../../grammar/messages.ts';
 import { readLine } from '../../grammar/read-line.ts';
 import { placeExcerpt } from '../../grammar/place-excerpt.ts';
 import { commandLineLimits, slackLimits } from '../../src/answer/answer-line.ts';
+import { coverageRefusals } from './coverage-lines.ts';
 
 function refusal(line: string, limits = commandLineLimits) {
   const reading = readLine(line, limits);
@@ -70,9 +71,7 @@ const refused: readonly (readonly [string, string, string])[] = [
   ['alarm: sensitivity 92%, specificity 97%, prevalence 0.4%', 'not-yet-alarm', 'sensitivity'],
   ['water alarm 92% accurate, 1 in 250 wells bad', 'not-yet-alarm', 'accurate'],
   ['tp 46 fp 30 fn 4 tn 920', 'not-yet-alarm', 'tp'],
-  ['coverage: helmet 55-65%; cases: no helmet 44, helmet 31', 'not-yet-coverage', 'helmet 55-65%'],
   ['18 of 1,204 vs 9 of 2,377; says "twice"', 'not-yet-clause', 'says'],
-  ['18 of 1,204 vs 9 of 2,377; try 30%, 38%', 'not-yet-clause', 'try'],
   [
     'by age: under 40: night 3 of 900 vs day 40 of 9,000 | 40 and over: night 80 of 2,000 vs day 6 of 100',
     'not-yet-layers',
@@ -88,9 +87,8 @@ const refused: readonly (readonly [string, string, string])[] = [
   ['5 a week vs 3 a week', 'not-yet-rate', 'a week'],
   ['240 ms vs 310 ms', 'measurement', 'ms'],
   ['4.2 days vs 3.1 days', 'measurement', 'days'],
-  ['coverage by month: Jan 20%, Feb 30%; cases by month: 30, 25', 'not-yet-coverage', 'coverage by'],
-  ['cases: no helmet 44, helmet 31; coverage: helmet 38% (34 to 42)', 'not-yet-coverage', 'coverage:'],
   ['harbour ward: 31 of 9,240 vs all: 210 of 88,000', 'not-yet-whole', 'all: 210 of 88,000'],
+  ...coverageRefusals,
 ];
 
 describe('a line that cannot be read', () => {

@@ -103,7 +103,9 @@ function partLines(
           ...words.rows.map(({ name, value }) => `${name}: ${value}`),
           ...words.sides.flatMap(({ title, line, table: rows }) => [
             ...(rows === null ? [line] : []),
-            ...(rows ?? []).slice(1).map((cells) => `${title}, ${cells[0] ?? ''}: ${cells[1] ?? ''} (interval ${cells[2] ?? ''})`),
+            ...(rows ?? [])
+              .slice(1)
+              .map((cells) => `${title}, ${cells[0] ?? ''}: ${cells[1] ?? ''} (interval ${cells[2] ?? ''})`),
           ]),
           ...words.posts.slice(hasFirstPost(words) ? 1 : 0).map((post) => `To post: ${postLine(post)}`),
           ...shortLine(words),

@@ -1,7 +1,13 @@
 import type { CautionId } from '../../report/cautions.ts';
 import { readingsOf } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
-import { coverageCaution, coverageChanged, expectedShare, unknownCaution, ofKnownGroup } from './coverage-words.ts';
+import {
+  coverageCaution,
+  coverageChanged,
+  expectedShare,
+  unknownCaution,
+  ofKnownGroup,
+} from './coverage-words.ts';
 import { cases } from './labels.ts';
 import { fixed, percent } from './numbers.ts';
 

@@ -44,7 +44,11 @@ function periodsText(question: Question, { by, periods }: Known<'periods'>): str
     );
     return `${rows.join(', ')} of ${population(question)} by ${by}`;
   }
-  return `${name(first.label)}${first.coverage.text} to ${name(last.label)}${last.coverage.text} of ${population(question)} in ${periods.length} ${by}s`;
+  const when =
+    first.label === null || last.label === null
+      ? ` in ${periods.length} ${by}s`
+      : `, ${first.label} to ${last.label}`;
+  return `${first.coverage.text} to ${last.coverage.text} of ${population(question)}${when}`;
 }
 
 const ends = ({ low, high }: Known<'range'> | Known<'interval'>) => `${low.text} to ${high.text}`;

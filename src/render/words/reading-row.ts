@@ -68,9 +68,12 @@ const isFewer = ({ readings }: Report, { of }: Reading) =>
 
 function valueOf(question: Question, reading: Reading): string {
   const estimate = estimateText(reading, 'full') ?? (reading.unbounded ? 'no upper end' : 'no value');
-  const parts = [intervalPart(reading), exactPart(reading), roundingPart(question, reading), limitPart(reading)].filter(
-    (part) => part !== null,
-  );
+  const parts = [
+    intervalPart(reading),
+    exactPart(reading),
+    roundingPart(question, reading),
+    limitPart(reading),
+  ].filter((part) => part !== null);
   return parts.length === 0 ? estimate : `${estimate} (${parts.join('; ')})`;
 }
 

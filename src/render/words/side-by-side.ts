@@ -62,8 +62,7 @@ function sideOf(report: Report, question: SharesQuestion, variants: RatioVariant
   }
 }
 
-const share = (value: number | null) =>
-  value === null ? '' : `${Number((value * 100).toFixed(10))}%`;
+const share = (value: number | null) => (value === null ? '' : `${Number((value * 100).toFixed(10))}%`);
 
 function valueText({ estimate, unbounded }: RatioVariant, digits: Digits): string {
   if (estimate === null) return unbounded ? 'no upper end' : 'no value';
