@@ -1,6 +1,6 @@
 import { readingsOf } from '../../report/report.ts';
 import type { Direction, Report } from '../../report/report.ts';
-import { cases, label, perOne } from './labels.ts';
+import { capital, cases, label, perOne } from './labels.ts';
 import { count, ratio } from './numbers.ts';
 import { intervalNote } from './ratio-words.ts';
 
@@ -23,9 +23,18 @@ export function boundsHeadline(report: Report, direction: Direction): string | n
     high === null
       ? `${low === null ? 'any ratio' : `${ratio(low, 'short')} times or more`}`
       : `${low === null ? 'up' : ratio(low, 'short')} to ${ratio(high, 'short')} times`;
-  if (direction === 'none-shown' || reading === undefined)
-    return `${range.slice(0, 1).toUpperCase()}${range.slice(1)}, however the ${count(unknown)} unknown split: no difference is shown, nor that there is none.`;
-  const line = `However the ${count(unknown)} unknown split, ${label(question, reading.of)} had ${range} as many ${cases(question)} ${perOne(question)} as ${label(question, reading.against ?? 0)}`;
-  const full = `${line} (${intervalNote(reading)}).`;
-  return full.length <= within ? full : `${line}.`;
+  if (reading === undefined) return null;
+  const note = ` (${intervalNote(reading)})`;
+  const [start, end] =
+    direction === 'none-shown'
+      ? [
+          `${capital(range)}, however the ${count(unknown)} unknown split`,
+          ': no difference is shown, nor that there is none.',
+        ]
+      : [
+          `However the ${count(unknown)} unknown split, ${label(question, reading.of)} had ${range} as many ${cases(question)} ${perOne(question)} as ${label(question, reading.against ?? 0)}`,
+          '.',
+        ];
+  const full = `${start}${note}${end}`;
+  return full.length <= within ? full : `${start}${end}`;
 }
