@@ -3,6 +3,7 @@ import type { Reading, ReadingId } from '../../report/reading.ts';
 import { readingsOf } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
 import { assumption, coveragePhrase, unknownSentence, ofKnownGroup } from './coverage-words.ts';
+import { grantedNote, wanting } from './coverage-posts.ts';
 import { shownDirection } from './headline.ts';
 import { changeText, limitsText } from './interval-text.ts';
 import { capital, cases, casesAsTyped, Label, label, perOne } from './labels.ts';
@@ -251,20 +252,6 @@ function sharesPosts(report: Report, question: SharesQuestion): Post[] {
         ];
   return [ratioPost, ...shareChangePost(report, made, reference), ...sharePost];
 }
-
-/** What is wanting for a ratio: cases in the reference group, or anybody of the group in the sample. */
-function wanting(question: SharesQuestion, of: number): string {
-  const known = question.groups[of]?.known;
-  return known?.kind === 'sample' && known.inGroup === 0
-    ? `with nobody of ${label(question, of)} in the sample`
-    : `without ${cases(question)} in ${label(question, question.reference)}`;
-}
-
-/** The interval, with what it allows for beyond chance. */
-const grantedNote = (reading: Reading) =>
-  reading.interval?.unknownToEitherSide === true
-    ? `${intervalNote(reading)} however they split`
-    : intervalNote(reading);
 
 /** "“No helmet” made up 44 of 75 admitted (59%) and 38% of riders." */
 function madeUp(report: Report, question: SharesQuestion, index: number): string {
