@@ -91,6 +91,8 @@ export const messages = {
     `${sample} is ${gives}, and the line has ${stated}. Leave one of them out.`,
   'population-and-form': (population: string) =>
     `With a population of ${population} every figure comes from counts, and those need one coverage and known groups.`,
+  'exact-and-form': () =>
+    'There are exact limits for one coverage and for a sample, not for coverage like this. Leave out "exact".',
   'periods-without-cases': (by: string) =>
     `Coverage by ${by} needs the cases by ${by} too: all of them, whatever their group.`,
   'periods-without-coverage': (by: string) =>

@@ -61,7 +61,7 @@ export function checkForms(
   unknown: Quantity | null,
   setting: Setting,
 ): Settled<null> {
-  const form = groups.find(({ known }) => known.kind !== 'given');
+  const form = groups.find(({ known, coverageImplied }) => known.kind !== 'given' && !coverageImplied);
   const { trySpan } = setting.given;
   if (trySpan !== undefined && groups.length !== 2)
     return refused(diagnosis('coverage-form-of-several', trySpan));
@@ -74,6 +74,11 @@ export function checkForms(
     const { from, to } = population.span;
     const without = `${setting.typed.slice(0, from).replace(/[;|\s]+$/, '')}${setting.typed.slice(to)}`;
     return refused(diagnosis('population-and-form', population.span, [population.text], [without.trim()]));
+  }
+  const kind = form?.known.kind;
+  if (setting.given.clauses.exact && (kind === 'interval' || kind === 'growth' || kind === 'periods')) {
+    const without = setting.typed.replace(/[;|\s]*\bexact(?=\s*(?:[;|\n]|$))/i, '');
+    return refused(diagnosis('exact-and-form', place, [], [without.trim()]));
   }
   const counted = groups.map(({ cases }) => cases).filter((cases) => cases !== null);
   if (unknown !== null && counted.length < groups.length)

@@ -55,7 +55,7 @@ export function ratioVariants(
     ...growthVariants(question, ratio, options),
     ...unknownVariants(question, ratio, options),
     ...triedVariants(question, ratio, options),
-    ...sensitivityVariants(question, ratio),
+    ...sensitivityVariants(question, ratio, options),
   ];
 }
 
@@ -71,11 +71,23 @@ const variant = (
 
 const pairOf = ({ of, against }: Reading): Pair => ({ of, against: against ?? 0 });
 
-/** The cases of the two groups, where both are known to a number. */
-function countsOf({ groups }: SharesQuestion, { of, against }: Pair): readonly [number, number] | null {
-  const [own, other] = [groups[of]?.cases ?? null, groups[against]?.cases ?? null];
-  if (own === null || other === null || own.precision === 'range' || other.precision === 'range') return null;
-  return [own.value, other.value];
+interface Figures {
+  readonly cases: number;
+  readonly referenceCases: number;
+  /** False for shares of cases, and where a count is hidden: then there are estimates and no intervals. */
+  readonly counted: boolean;
+}
+
+function figuresOf({ groups }: SharesQuestion, { of, against }: Pair): Figures | null {
+  const [own, other] = [groups[of], groups[against]];
+  if (own === undefined || other === undefined) return null;
+  const whole = own.cases !== null && other.cases !== null;
+  const [x, y] = [own, other].map((group) => (whole ? group.cases : group.caseShare));
+  return {
+    cases: x?.value ?? NaN,
+    referenceCases: y?.value ?? NaN,
+    counted: whole && x?.precision !== 'range' && y?.precision !== 'range',
+  };
 }
 
 function growthVariants(
@@ -85,14 +97,14 @@ function growthVariants(
 ): RatioVariants[] {
   const pair = pairOf(reading);
   const known = question.groups[pair.of]?.known;
-  const counts = countsOf(question, pair);
-  if (known?.kind !== 'growth' || counts === null) return [];
-  const [cases, referenceCases] = counts;
+  const figures = figuresOf(question, pair);
+  if (known?.kind !== 'growth' || figures === null) return [];
+  const { cases, referenceCases, counted } = figures;
   const from = { cases, referenceCases, start: known.start.value, end: known.end.value };
   const constant = ratioUnderConstantRisk(from, level);
   const even = ratioUnderEvenCases(from, level);
   const closing = known.end.value;
-  const shown = (interval: Interval) => (exact ? null : interval);
+  const shown = (interval: Interval) => (exact || !counted ? null : interval);
   const rows = [
     variant(
       'constant-risk',
@@ -104,7 +116,7 @@ function growthVariants(
     variant('even-cases', pair, null, even.estimate ?? Infinity, shown(even.interval)),
     // At 0% or 100% there is nobody to compare with at the end.
     ...(closing > 0 && closing < 1
-      ? [atCoverage('closing-coverage', pair, counts, closing, closing, { level, exact })]
+      ? [atCoverage('closing-coverage', pair, figures, closing, closing, { level, exact })]
       : []),
   ];
   return [{ topic: 'growth', coverageOf: pair.of, rows, slope: null }];
@@ -114,7 +126,7 @@ function growthVariants(
 function atCoverage(
   id: VariantId,
   pair: Pair,
-  [cases, referenceCases]: readonly [number, number],
+  { cases, referenceCases, counted }: Figures,
   coverage: number,
   shown: number,
   { level, exact }: Pick<CountsOptions, 'level' | 'exact'>,
@@ -125,7 +137,7 @@ function atCoverage(
     pair,
     shown,
     method.ratio(cases, referenceCases),
-    method.interval?.(cases, referenceCases) ?? null,
+    counted ? (method.interval?.(cases, referenceCases) ?? null) : null,
   );
 }
 
@@ -141,10 +153,10 @@ function unknownVariants(
 ): RatioVariants[] {
   const pair = pairOf(reading);
   const group = question.groups[pair.of];
-  const counts = countsOf(question, pair);
+  const figures = figuresOf(question, pair);
   const unknown = question.unknownCases?.value ?? 0;
-  if (group === undefined || counts === null || unknown === 0) return [];
-  const [cases, referenceCases] = counts;
+  if (group === undefined || figures === null || unknown === 0) return [];
+  const { cases, referenceCases, counted } = figures;
   const { ratio, interval } = coverageMethod(group, level, exact);
   const limits = interval ?? (() => ({ low: null, high: null }));
   const finite = (x: number, y: number) => {
@@ -152,7 +164,7 @@ function unknownVariants(
     return Number.isFinite(value) ? value : null;
   };
   const bounds = unknownGroupBounds({ cases, referenceCases, unknown }, finite, limits);
-  const shown = (x: number, y: number) => (interval === null ? null : interval(x, y));
+  const shown = (x: number, y: number) => (interval === null || !counted ? null : interval(x, y));
   const rows = [
     variant('like-the-known', pair, null, bounds.likeTheKnown ?? ratio(cases, referenceCases), null),
     variant(
@@ -186,47 +198,44 @@ function triedVariants(
   { level, exact }: CountsOptions,
 ): RatioVariants[] {
   const pair = pairOf(reading);
-  const counts = countsOf(question, pair);
+  const figures = figuresOf(question, pair);
   const tried = question.clauses.tryCoverages ?? [];
-  if (tried.length === 0) return [];
+  if (tried.length === 0 || figures === null) return [];
   const coverageOf = typedGroup(question);
   const unknown = question.unknownCases?.value ?? 0;
   const rows = tried.map(({ value }) => {
     const own = coverageOf === pair.of ? value : 1 - value;
-    if (counts === null) return variant('at-coverage', pair, value, ratioAt(question, pair, own), null);
-    const at = atCoverage('at-coverage', pair, counts, own, value, { level, exact });
+    const at = atCoverage('at-coverage', pair, figures, own, value, { level, exact });
     return unknown === 0 ? at : { ...at, interval: null };
   });
   return [{ topic: 'tried', coverageOf, rows, slope: null }];
 }
 
-/** The ratio at another coverage, from counts or from shares of cases. */
-function ratioAt({ groups }: SharesQuestion, { of, against }: Pair, coverage: number): number {
-  const [own, other] = [groups[of], groups[against]];
-  if (own === undefined || other === undefined) return NaN;
-  const x = own.cases ?? own.caseShare;
-  const y = other.cases ?? other.caseShare;
-  return (x.value * (1 - coverage)) / (y.value * coverage);
-}
-
 const point = 0.01;
 
 /** What one point less and one point more of coverage does to the ratio, where it is one number. */
-function sensitivityVariants(question: SharesQuestion, reading: Reading): RatioVariants[] {
+function sensitivityVariants(
+  question: SharesQuestion,
+  reading: Reading,
+  options: CountsOptions,
+): RatioVariants[] {
   const pair = pairOf(reading);
   const coverageOf = typedGroup(question);
   const group = question.groups[coverageOf];
+  const figures = figuresOf(question, pair);
+  if (figures === null) return [];
   if (group?.known.kind !== 'given' || reading.estimate === null || reading.estimate === 0) return [];
   const rows = [-point, 0, point]
     .map((step) => Number((group.coverage.value + step).toPrecision(15)))
     .filter((coverage) => coverage > 0 && coverage < 1)
     .map((coverage) =>
-      variant(
+      atCoverage(
         'at-coverage',
         pair,
+        { ...figures, counted: false },
+        coverageOf === pair.of ? coverage : 1 - coverage,
         coverage,
-        ratioAt(question, pair, coverageOf === pair.of ? coverage : 1 - coverage),
-        null,
+        options,
       ),
     );
   const slope = coverageSensitivity(group.coverage.value) * (coverageOf === pair.of ? 1 : -1);

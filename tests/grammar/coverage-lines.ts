@@ -139,6 +139,8 @@ export const coverageRefusals: readonly (readonly [string, string, string])[] = 
   [`${unknown}; population 84,000`, 'population-and-form', 'population 84,000'],
   [`${tried}; population 84,000`, 'population-and-form', 'population 84,000'],
   [`${cases}; coverage: no helmet 38% (30% CI 34 to 42)`, 'level-out-of-range', '38% (30% CI 34 to 42)'],
+  [`${cases}; coverage: no helmet 38% (34 to 42); exact`, 'exact-and-form', '38% (34 to 42)'],
+  [`${cases}; coverage: helmet from 20% to 60%; exact; level 90%`, 'exact-and-form', 'from 20% to 60%'],
   [`${cases}; coverage: helmet from 38% to 38%`, 'growth-without-change', 'from 38% to 38%'],
   [`${cases}; coverage: helmet from 0% to 0%`, 'growth-at-one-end', 'from 0% to 0%'],
   [`${cases}; coverage: helmet from 20% to 160%`, 'share-above-one', 'from 20% to 160%'],

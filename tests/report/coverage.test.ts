@@ -99,13 +99,6 @@ describe('coverage with an interval of its own', () => {
     expect(usual.interval).toEqual(said.interval);
     expect(narrower.interval?.low).toBeGreaterThan(usual.interval?.low ?? NaN);
   });
-
-  it('has no exact limits', () => {
-    expect(readingFor(`${cases}no helmet 38% (34 to 42); exact`, 'risk-ratio')).toMatchObject({
-      interval: null,
-      whyNoInterval: 'no-exact-form',
-    });
-  });
 });
 
 describe('coverage as a range', () => {
@@ -172,6 +165,13 @@ describe('coverage that grew', () => {
     ).toBeGreaterThan(0);
     const full = variantsOf('cases: helmet 8, no helmet 67; coverage: helmet from 40% to 100%', 'growth');
     expect(full.rows.map(({ id }) => id)).toEqual(['constant-risk', 'even-cases']);
+  });
+
+  it('without a number of cases has both estimates and no interval', () => {
+    const { rows } = variantsOf('helmet: 40% of cases; coverage from 20% to 60%', 'growth');
+    expect(rows.map(({ interval }) => interval)).toEqual([null, null, null]);
+    close(rows[0]?.estimate, 1);
+    close(rows[1]?.estimate, 1);
   });
 
   it('asks for the cases by month first', () => {

@@ -132,6 +132,7 @@ export function coverageCaution(question: SharesQuestion): string {
   const same = 'for the same people, place and time';
   if (group === undefined) return `Coverage is taken as exact, ${same}.`;
   const { known, coverage } = group;
+  const hasInterval = question.groups.every(({ cases }) => cases !== null);
   switch (known.kind) {
     case 'given': {
       const about = question.remarks.find(
@@ -142,11 +143,15 @@ export function coverageCaution(question: SharesQuestion): string {
         : `${capitalised(about.text)} is taken as ${coverage.text}, ${same}.`;
     }
     case 'range':
-      return `The interval covers every coverage from ${ends(known)}, ${same}.`;
+      return hasInterval
+        ? `The interval covers every coverage from ${ends(known)}, ${same}.`
+        : `Every coverage from ${ends(known)} is possible, ${same}.`;
     case 'interval':
       return `${ends(known)} is taken as chance alone (${known.level?.text ?? '95%'}), ${same}.`;
     case 'sample':
-      return `Chance in the sample of ${count(known.sampled)} is allowed for; other people, place or time are not.`;
+      return hasInterval
+        ? `Chance in the sample of ${count(known.sampled)} is allowed for; other people, place or time are not.`
+        : `The sample of ${count(known.sampled)} is taken as exact for want of an interval, ${same}.`;
     case 'growth':
     case 'periods':
       return coverageChanged(question);

@@ -32,7 +32,7 @@ function sideOf(report: Report, question: SharesQuestion, variants: RatioVariant
         line: growthLine(variants),
         table: table('If', growthName),
         working:
-          'Constant risk: the mean coverage (person-time argument). Even cases: the ratio R at which the mean of Rc/(1 - c + Rc) over the coverage is the share of cases; derived for this program, checked by quadrature. Each with the Wilson limits of the share (Wilson 1927).',
+          'Constant risk: the mean coverage (person-time argument). Even cases: the ratio R at which the mean of Rc/(1 - c + Rc) over the coverage is the share of cases; derived for this program, checked by quadrature. Each with the limits of the share of cases carried through (Wilson 1927).',
       };
     case 'unknown':
       return {
