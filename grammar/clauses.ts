@@ -11,6 +11,7 @@ export type ClausePart =
       readonly name: ClauseName;
       readonly body: string;
       readonly number: WrittenNumber | null;
+      readonly numbers?: readonly WrittenNumber[];
     }
   | { readonly kind: 'no-value'; readonly word: string; readonly example: string }
   | { readonly kind: 'not-yet'; readonly word: string };
@@ -41,7 +42,10 @@ const textClauses = new Map<unknown, 'reference' | 'among' | 'period' | 'source'
 export function clauseOf(part: Part, folded: string): ClausePart | null {
   const { tokens } = part;
   const [first, second, third] = tokens;
-  if (first === undefined || isNamed(part)) return null;
+  if (first === undefined) return null;
+  const worded = wordClause(part);
+  if (worded !== null) return worded;
+  if (isNamed(part)) return null;
   const afterWord = first.startOffset + first.image.length;
   const rest = folded
     .slice(afterWord, part.end)
@@ -95,7 +99,7 @@ export function clauseOf(part: Part, folded: string): ClausePart | null {
     case token.Says:
       return { kind: 'not-yet', word: 'says' };
     default:
-      return wordClause(part) ?? notYet(part);
+      return notYet(part);
   }
 }
 
@@ -105,6 +109,7 @@ function wordClause({ tokens }: Part): ClausePart | null {
   if (/^design effect\b/.test(words.join(' '))) {
     const at = tokens[2]?.tokenType === token.Colon ? 3 : 2;
     const number = tokens[at];
+    if (at === 3 && tokens.length > 4) return null;
     if (number?.tokenType !== token.NumberToken || tokens.length > at + 1)
       return { kind: 'no-value', word: 'design effect', example: 'design effect 1.8' };
     return {
@@ -126,11 +131,26 @@ function numberAfterColon({ tokens }: Part): WrittenNumber | null {
 
 /** Clauses of the language that later kinds of question bring. */
 function notYet({ tokens }: Part): ClausePart | null {
-  const [first, second] = tokens;
+  const [first] = tokens;
   if (first === undefined) return null;
-  if (/^try$/i.test(first.image) && second?.tokenType === token.NumberToken)
-    return { kind: 'not-yet', word: 'try' };
-  return null;
+  return /^try$/i.test(first.image) ? tryClause(tokens) : null;
+}
+
+/** `try 30%, 38%, 50%`: coverages to work the ratio out at; the sign may stand behind the last one alone. */
+function tryClause(tokens: Part['tokens']): ClausePart | null {
+  if (tokens.length === 1) return { kind: 'no-value', word: 'try', example: 'try 30%, 38%, 50%' };
+  const [, ...rest] = tokens;
+  const signs: ReadonlySet<unknown> = new Set([token.Percent, token.Comma, token.And]);
+  const numbers = rest.filter(({ tokenType }) => tokenType === token.NumberToken);
+  if (rest.at(-1)?.tokenType !== token.Percent) return null;
+  if (!rest.every(({ tokenType }) => tokenType === token.NumberToken || signs.has(tokenType))) return null;
+  return {
+    kind: 'clause',
+    name: 'try',
+    body: rest.map(({ image }) => image).join(' '),
+    number: null,
+    numbers: numbers.map(({ image }) => writtenNumber(image, null)),
+  };
 }
 
 /** Whether a later colon leads to a figure, so that the first word belongs to a name. */

@@ -1,4 +1,5 @@
 import type { IToken } from 'chevrotain';
+import { coverageShareOf } from './coverage-forms.ts';
 import { is, numberAt, numberOrWordAt, roundBase } from './number-tokens.ts';
 import { fractionOf, group, writtenNumber } from './numbers.ts';
 import type { WrittenNumber } from './numbers.ts';
@@ -61,6 +62,8 @@ const mostNounWords = 6;
 
 /** The figure that starts at this token, or `null`. Looks ahead at most a fixed number of tokens. */
 export function figureAt(tokens: Tokens, at: number): Figure | null {
+  const coverage = coverageShareOf(tokens[at]);
+  if (coverage !== null) return shareWithTotal(tokens, at, coverage, at + 1);
   const fraction = fractionAt(tokens, at);
   if (fraction !== null) return fraction;
   const range = rangeAt(tokens, at);

@@ -57,6 +57,8 @@ export const messages = {
     `A design effect of ${text} cannot be: it is 1 where all come singly, and larger where they come together.`,
   'exact-with-design-effect': () =>
     'Exact limits need whole counts, and a design effect divides them. Leave one of the two out.',
+  'design-effect-and-form': () =>
+    'I take a design effect into account where coverage is one number and every group is known. Leave one of the two out.',
   'clause-twice': (word: string) => `"${word}" stands twice. Once is enough.`,
   'reference-unknown': (name: string, known: string) => `There is no group ${name}. The groups are ${known}.`,
   'clauses-only': () => 'There is no figure here, only what goes with one. Put the figure first.',
@@ -94,8 +96,49 @@ export const messages = {
   'units-differ': (one: string, other: string) =>
     `One is over ${one}, the other over ${other}. Give both in one unit.`,
   'exposure-zero': (text: string) => `${text}: over nothing. A time or distance has to be above 0.`,
-  'not-yet-coverage': () =>
-    'I read coverage as one number so far, not as a range or as something that grew. Send the line once for each end.',
+  'coverage-no-share': () =>
+    'Coverage is a share: a percentage, or how many of a sample, as in "310 of 500".',
+  'coverage-upside-down': (low: string, high: string) =>
+    `${low} to ${high}: the second end has to be the larger one. The other way round?`,
+  'range-at-end': (end: string) =>
+    `A range of coverage cannot reach ${end}: one of the groups could be nobody. Give a narrower one.`,
+  'interval-without-value': (value: string, low: string, high: string) =>
+    `${value} does not lie between ${low} and ${high}. An interval has to hold the figure that it belongs to.`,
+  'growth-without-change': (from: string) => `From ${from} to ${from} is no change. Write ${from} alone.`,
+  'growth-at-one-end': (from: string) =>
+    `Coverage of ${from} all the time leaves nobody to compare with. One end may be 0% or 100%, not both.`,
+  'coverage-two-forms': () =>
+    'The two coverages do not complete each other. Give one; the other is what remains.',
+  'coverage-form-of-several': () =>
+    'With three or more groups I read each coverage as one number. Send two groups at a time.',
+  'sample-as-count': (share: string, total: string) =>
+    `Several counts out of ${total} are ${share}. Write the count of the sample itself.`,
+  'sample-and-percentage': (sample: string, gives: string, stated: string) =>
+    `${sample} is ${gives}, and the line has ${stated}. Leave one of them out.`,
+  'population-and-form': (population: string) =>
+    `With a population of ${population} every figure comes from counts, and those need one coverage and known groups.`,
+  'exact-and-form': () =>
+    'There are exact limits for one coverage and for a sample, not for coverage like this. Leave out "exact".',
+  'periods-without-cases': (by: string) =>
+    `Coverage by ${by} needs the cases by ${by} too: all of them, whatever their group.`,
+  'periods-without-coverage': (by: string) =>
+    `These are cases by ${by}. Add the coverage by ${by}, or leave them out.`,
+  'periods-unread': (by: string) =>
+    `I need one percentage for each ${by}, and one number of cases for each, in the same order.`,
+  'periods-unequal': (by: string, coverages: string, cases: string) =>
+    `Coverage by ${by} has ${coverages} figures, the cases have ${cases}. Each ${by} needs both, and two at least.`,
+  'period-names': (cases: string, coverage: string) =>
+    `The cases have ${cases} where the coverage has ${coverage}. The two lists have to go together.`,
+  'periods-do-not-add-up': (periods: string, groups: string) =>
+    `The cases by period add up to ${periods}, those of the groups to ${groups}. They have to be the same cases.`,
+  'period-at-end': (coverage: string) =>
+    `In a period with a coverage of ${coverage} there is nobody to compare with. Leave it out, with its cases.`,
+  'periods-need-counts': () =>
+    'Coverage by period needs each group as a whole number of cases, and all of them known.',
+  'unknown-not-counted': () =>
+    'Cases of unknown group are read as a count beside the counts of two groups: "no helmet 44, helmet 31, unknown 12".',
+  'try-without-coverage': () => '"try" works the ratio out at several coverages, and this line has none.',
+  'too-many-tried': (most: string) => `"try" takes up to ${most} coverages. Send the rest in a second line.`,
   'not-yet-clause': (word: string) =>
     `I do not read "${word}" yet. Leave it out and I answer the figure itself.`,
   'not-yet-alarm': () =>

@@ -69,12 +69,6 @@ function oddAt(tokens: Tokens, at: number, folded: Folded): Odd | null {
       ['over the budget: 18 of 1,204 vs ... of ...'],
     );
   }
-  if (
-    is(at, token.CoverageWord) &&
-    (/^by$/i.test(image(at + 1)) || tokens.slice(at).some((_, place) => isOwnInterval(tokens, at + place)))
-  ) {
-    return odd('not-yet-coverage', at + 2, [], ['cases: no helmet 44, helmet 31; coverage: no helmet 38%']);
-  }
   if (is(at, token.Of) && /^(?:them|which|whom|these|those)$/i.test(image(at + 1)))
     return totalFirst(tokens, at, odd);
   if (is(at, token.Word)) {
@@ -162,12 +156,6 @@ function rowsWithOf({ text }: Folded, place: number): string {
   if (lines.every((line) => row(line) !== null)) return lines.map(withOf).join('; ');
   return withOf(text.slice(text.lastIndexOf('\n', place - 1) + 1).split(/[\n;|]/)[0] ?? '');
 }
-
-/** `38% (34 to 42)`: coverage with an interval of its own. */
-const isOwnInterval = (tokens: Tokens, at: number) =>
-  tokens[at]?.tokenType === token.Open &&
-  tokens[at + 1]?.tokenType === token.NumberToken &&
-  tokens.slice(at + 2, at + 4).some(({ tokenType }) => tokenType === token.To);
 
 /** `75 injured, 44 of them no helmet`: the total is the first number, the count the one beside "of them". */
 function totalFirst(

@@ -1,4 +1,5 @@
 import type { IToken } from 'chevrotain';
+import { CoverageForm } from './coverage-forms.ts';
 import { figureAt } from './figures.ts';
 import * as token from './tokens.ts';
 
@@ -43,7 +44,7 @@ export function partsOf(tokens: readonly IToken[], length: number): readonly Par
     ) {
       close(each.startOffset);
     }
-    if (each.tokenType === token.NumberToken) seenFigure = true;
+    if (each.tokenType === token.NumberToken || each.tokenType === CoverageForm) seenFigure = true;
     current.push(each);
   }
   close(length);
@@ -90,7 +91,7 @@ const endsPart = (tokens: readonly IToken[], at: number) => {
 /** Whether a complete figure stands directly before, so that `per 1,000` is no part of it. */
 function completeBefore(tokens: readonly IToken[], at: number): boolean {
   const before = tokens[at - 1]?.tokenType;
-  if (before === token.Percent || before === token.Close) return true;
+  if (before === token.Percent || before === token.Close || before === CoverageForm) return true;
   for (let back = at - 1; back >= Math.max(0, at - 8); back -= 1) {
     if (tokens[back]?.tokenType === token.NumberToken) {
       const connector = tokens[back - 1]?.tokenType;

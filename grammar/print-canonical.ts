@@ -1,5 +1,6 @@
 import { unitOfOne } from './exposures.ts';
 import { grouped } from './numbers.ts';
+import { coverageText, withUnit } from './print-coverage.ts';
 import type { Question, Quantity, RatesGroup, SharesQuestion, StrataQuestion } from './question.ts';
 
 /** The canonical spelling of a question. Reading it again gives the same question. */
@@ -113,6 +114,10 @@ function sharesPart(question: Extract<Question, { kind: 'shares' }>): string {
         ? `; of ${totalCases.text} ${noun}`
         : '';
     const coverage = `${first.coverage.text}${of === '' ? '' : of}`;
+    if (first.known.kind === 'periods')
+      return `${named(first.label)}${share}; ${coverageText(first, null, unit, bare)}${total}`;
+    if (first.known.kind !== 'given')
+      return `${named(first.label)}${share}; coverage ${withUnit(first, unit)}${total}`;
     return of === ''
       ? `${named(first.label)}${share}; coverage ${coverage}${total}`
       : `${named(first.label)}${share}, ${coverage}${total}`;
@@ -121,9 +126,11 @@ function sharesPart(question: Extract<Question, { kind: 'shares' }>): string {
     ({ label, cases: counted, caseShare }) =>
       `${bare(label)} ${counted !== null && counted.precision !== 'range' ? countOf(counted) : counted?.text.startsWith('<') === true ? counted.text : caseShare.text}`,
   );
-  const coverage = groups
-    .filter(({ coverageImplied }) => !coverageImplied)
-    .map(({ label, coverage: held }) => `${bare(label)} ${held.text}${of}`);
+  const { unknownCases } = question;
+  if (unknownCases !== null) cases.push(`unknown ${unknownCases.text}`);
+  const stated = groups.filter(({ coverageImplied }) => !coverageImplied);
+  const byPeriod = stated.find(({ known }) => known.kind === 'periods');
+  const coverage = stated.map((group) => `${bare(group.label)} ${withUnit(group, unit)}`);
   const withTotal = groups.some(
     ({ cases: counted }) =>
       counted === null || (counted.precision === 'range' && !counted.text.startsWith('<')),
@@ -132,7 +139,11 @@ function sharesPart(question: Extract<Question, { kind: 'shares' }>): string {
     totalCases !== null && (withTotal || caseNoun !== null)
       ? `; of ${totalCases.text} ${caseNoun ?? 'cases'}`
       : '';
-  return `cases: ${cases.join(', ')}; coverage: ${coverage.join(', ')}${total}`;
+  const held =
+    byPeriod === undefined
+      ? `coverage: ${coverage.join(', ')}`
+      : coverageText(byPeriod, byPeriod.label, unit, bare);
+  return `cases: ${cases.join(', ')}; ${held}${total}`;
 }
 
 /** Names that a reader could take for something else stand in quotation marks. */
@@ -175,6 +186,9 @@ function clauseParts({ clauses }: Question): string[] {
     ...(period === null ? [] : [`period ${quote(period)}`]),
     ...(source === null ? [] : [`source ${/^https?:\/\/[^\s|;"]+$/.test(source) ? source : quote(source)}`]),
     ...(note === null ? [] : [`note ${quote(note)}`]),
+    ...(clauses.tryCoverages === undefined
+      ? []
+      : [`try ${clauses.tryCoverages.map(({ text }) => text).join(', ')}`]),
     ...(exact ? ['exact'] : []),
     ...(designEffect === null ? [] : [`design effect ${designEffect.text}`]),
     ...(everyone ? ['counted: everyone'] : []),

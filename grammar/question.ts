@@ -49,6 +49,8 @@ export interface Clauses {
   /** These are all the cases there were, a whole register, not a sample. */
   readonly everyone: boolean;
   readonly onlyMe: boolean;
+  /** Coverages to work the ratio out at, from `try 30%, 38%, 50%`; only for shares. */
+  readonly tryCoverages?: readonly TypedShare[];
 }
 
 /** How the line was read where that may surprise the person who typed it. `text` is the typed piece it is about. */
@@ -111,9 +113,48 @@ export interface SharesQuestion extends QuestionBase {
   readonly groups: readonly SharesGroup[];
   /** Index of the group that the others are compared with. */
   readonly reference: number;
-  /** All cases together, where it is known: the sum of the cases, or from `of 75 cases`. */
+  /** All cases together, where it is known: the sum of the cases, or from `of 75 cases`. Without those of unknown group. */
   readonly totalCases: Quantity | null;
+  /** Cases whose group is not known, `unknown 12`: they may belong to either of the two groups. */
+  readonly unknownCases: Quantity | null;
 }
+
+/** A share as it was typed, `20%`, with its value. */
+export interface TypedShare {
+  readonly text: string;
+  readonly value: number;
+}
+
+/** One period of coverage that was given period by period, with all cases of that period. */
+export interface CoveragePeriod {
+  /** `Jan`; `null` where the periods stand without names. */
+  readonly label: string | null;
+  readonly coverage: TypedShare;
+  readonly allCases: number;
+}
+
+/**
+ * How a group's coverage is known. Anything but `given` is of two groups that are everybody; the implied group's is the
+ * mirror image of the typed one's.
+ * - `given`: one number, taken as it stands.
+ * - `range`: `55-65%`, somewhere between two ends.
+ * - `interval`: `38% (34 to 42)`, with an interval of its own; `level` is `null` where none was said.
+ * - `sample`: `310 of 500`, counted in a sample of the population.
+ * - `growth`: `from 20% to 60%`, it grew (or fell) while the cases were counted; 0% and 100% may be an end.
+ * - `periods`: `Jan 20%, Feb 30%`, with all cases by period.
+ */
+export type CoverageKnown =
+  | { readonly kind: 'given' }
+  | { readonly kind: 'range'; readonly low: TypedShare; readonly high: TypedShare }
+  | {
+      readonly kind: 'interval';
+      readonly low: TypedShare;
+      readonly high: TypedShare;
+      readonly level: TypedShare | null;
+    }
+  | { readonly kind: 'sample'; readonly inGroup: number; readonly sampled: number }
+  | { readonly kind: 'growth'; readonly start: TypedShare; readonly end: TypedShare }
+  | { readonly kind: 'periods'; readonly by: string; readonly periods: readonly CoveragePeriod[] };
 
 export interface SharesGroup {
   /** `null` for the implied other group of `44 of 75 no helmet, coverage 38%`. */
@@ -122,8 +163,12 @@ export interface SharesGroup {
   readonly cases: Quantity | null;
   /** The group's share of all cases, in (0, 1) or at its ends where cases are 0 or all. */
   readonly caseShare: Quantity;
-  /** The group's share of the population, in (0, 1), both ends left out. */
+  /**
+   * The group's share of the population, in (0, 1), both ends left out (a sample may have nobody or everybody in the group).
+   * One number for what is not one: a range's middle, a sample's share, the mean of growth, the mean over the cases of periods.
+   */
   readonly coverage: Quantity;
+  readonly known: CoverageKnown;
   /** True where coverage was not typed but is what remains of 100%. */
   readonly coverageImplied: boolean;
   readonly span: Span;

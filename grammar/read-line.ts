@@ -1,5 +1,6 @@
 import { grouped } from './numbers.ts';
 import type { IRecognitionException, IToken } from 'chevrotain';
+import { joinCoverages } from './coverage-by-period.ts';
 import { diagnosis, linesToTry } from './diagnosis.ts';
 import { fold, typedSpan } from './fold.ts';
 import type { Folded } from './fold.ts';
@@ -39,9 +40,11 @@ export function readLine(line: string, limits: LineLimits): LineReading {
   const table = typed.text.includes('\n') ? tableOf(typed) : ({ kind: 'none' } as const);
   if (table.kind === 'fault') return refusal(table.fault);
   const folded = table.kind === 'line' ? table.folded : typed;
-  const { tokens: fine, remarks } = withoutAbout(joinSpacedNumbers(fineTokensOf(folded.text)), folded);
+  const { tokens: single, remarks } = withoutAbout(joinSpacedNumbers(fineTokensOf(folded.text)), folded);
+  const { tokens: fine, fault: coverageFault } = joinCoverages(single, folded);
   if (/^[\s?]*$/.test(folded.text))
     return refusal(diagnosis('empty-line', { from: 0, to: line.length }, [], linesToTry));
+  if (coverageFault !== null) return refusal(coverageFault);
   const { tags: tagged, fault, hasFigure } = tagLine(fine, folded);
   if (fault !== null) return refusal(fault);
   if (

@@ -1,3 +1,4 @@
+import { plainShare } from './coverage-forms.ts';
 import { diagnosis } from './diagnosis.ts';
 import { countQuantity, refused, settled } from './quantities.ts';
 import type { Settled } from './quantities.ts';
@@ -12,6 +13,8 @@ export interface SettledClauses {
   readonly ofCases: { readonly quantity: Quantity; readonly noun: string | null } | null;
   /** Where `reference` stood, for a name that is no group. */
   readonly referenceSpan: Span | null;
+  /** Where `try` stood, for a question without coverage. */
+  readonly trySpan?: Span;
 }
 
 const none: Clauses = {
@@ -37,6 +40,8 @@ const clauseWords: Partial<Record<ClausePart['name'], string>> = {
   designEffect: 'design effect',
   everyone: 'counted: everyone',
 };
+/** How many coverages a table of ratios may have: more do not fit a message. */
+const mostTried = 6;
 
 /** Settles the clauses one by one; the first that cannot be is refused with its place. */
 export function settleClauses(parts: readonly ClausePart[], typed: string): Settled<SettledClauses> {
@@ -106,5 +111,13 @@ function withClause(found: SettledClauses, part: ClausePart, typed: string): Set
       return set({ exact: true });
     case 'onlyMe':
       return set({ onlyMe: true });
+    case 'try': {
+      const shares = part.numbers.map((number) => ({ text: `${number.text}%`, value: plainShare(number) }));
+      const odd = shares.find(({ value }) => value <= 0 || value >= 1);
+      if (odd !== undefined) return refused(diagnosis('coverage-at-end', part.span, [odd.text]));
+      if (shares.length > mostTried)
+        return refused(diagnosis('too-many-tried', part.span, [String(mostTried)]));
+      return settled({ ...found, clauses: { ...clauses, tryCoverages: shares }, trySpan: part.span });
+    }
   }
 }

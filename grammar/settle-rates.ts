@@ -6,7 +6,7 @@ import { countQuantity, refused, settled } from './quantities.ts';
 import type { Settled } from './quantities.ts';
 import type { Quantity, RatesGroup, RatesQuestion, ReadingRemark } from './question.ts';
 import type { Setting } from './setting.ts';
-import { checkNames, namingOf, referenceOf } from './settle-groups.ts';
+import { checkNames, namingOf, referenceOf } from './naming.ts';
 import type { Item, ItemExposure, ItemFigureCount } from './tree.ts';
 
 /** Rates: every group has its events and what they were counted over, all in one unit. */

@@ -2,12 +2,15 @@ import { caseRows } from './case-rows.ts';
 import type { Row, Rows } from './case-rows.ts';
 import { diagnosis } from './diagnosis.ts';
 import { nameKey } from './labels.ts';
-import { refused, restOf, settled, shareQuantity } from './quantities.ts';
+import { refused, settled } from './quantities.ts';
 import type { Settled } from './quantities.ts';
 import type { Quantity, SharesGroup, SharesQuestion } from './question.ts';
 import type { Setting } from './setting.ts';
-import { checkNames, referenceOf } from './settle-groups.ts';
+import { completeEachOther, heldCoverage, restOfHeld } from './settle-coverage.ts';
+import type { HeldCoverage } from './settle-coverage.ts';
+import { checkNames, referenceOf } from './naming.ts';
 import type { Item } from './tree.ts';
+import { apartUnknown, checkForms } from './uncertain-shares.ts';
 
 /** The cases (or shares of cases) and the coverages of a line. `headed`: with the words `cases:` or `coverage:`. */
 export interface SharesParts {
@@ -17,7 +20,10 @@ export interface SharesParts {
 }
 
 /** Shares: cases by group beside each group's share of the population, the implied group and its coverage filled in. */
-export function settleShares(parts: SharesParts, setting: Setting): Settled<SharesQuestion> {
+export function settleShares(typed: SharesParts, setting: Setting): Settled<SharesQuestion> {
+  const apart = apartUnknown(typed, setting);
+  if (!apart.ok) return apart;
+  const { parts, unknown } = apart.value;
   const rows = caseRows(parts.cases, setting);
   if (!rows.ok) return rows;
   const coverages = coverageRows(parts, rows.value.rows, setting);
@@ -33,7 +39,7 @@ export function settleShares(parts: SharesParts, setting: Setting): Settled<Shar
       ]),
     );
   }
-  if (groups.some(({ coverage }) => coverage.value <= 0)) {
+  if (groups.some(({ coverage, known }) => coverage.value <= 0 && known.kind !== 'sample')) {
     return refused(diagnosis('coverage-at-end', firstCoverage?.span ?? { from: 0, to: 0 }, ['100%']));
   }
   const labels = groups.map(({ label }) => label);
@@ -41,6 +47,8 @@ export function settleShares(parts: SharesParts, setting: Setting): Settled<Shar
   if (!names.ok) return names;
   const reference = referenceOf(labels, setting);
   if (!reference.ok) return reference;
+  const forms = checkForms(groups, unknown, setting);
+  if (!forms.ok) return forms;
   const { population } = setting.given.clauses;
   const short = groups.some(
     ({ cases, coverage }) =>
@@ -54,6 +62,7 @@ export function settleShares(parts: SharesParts, setting: Setting): Settled<Shar
     groups,
     reference: reference.value,
     totalCases: rows.value.total,
+    unknownCases: unknown,
     clauses: setting.given.clauses,
     unit: coverages.value.unit,
     // "cases" is what they are called where nobody says.
@@ -64,7 +73,7 @@ export function settleShares(parts: SharesParts, setting: Setting): Settled<Shar
 }
 
 interface Coverages {
-  readonly byRow: readonly (Quantity | null)[];
+  readonly byRow: readonly (HeldCoverage | null)[];
   /** Groups that have coverage but no cases were refused; this is the name of the implied other group, where one was typed. */
   readonly otherLabel: string | null;
   readonly unit: string | null;
@@ -85,18 +94,12 @@ function coverageRows(
       diagnosis('coverage-missing', at, [name], [`${setting.typed.trim()}; coverage: ${name} ...%`]),
     );
   }
-  const byRow: (Quantity | null)[] = rows.map(() => null);
+  const byRow: (HeldCoverage | null)[] = rows.map(() => null);
   let otherLabel: string | null = null;
   for (const item of coverages) {
-    const { figure } = item;
-    if (figure.kind !== 'share' || figure.total !== null || figure.share.precision === 'range') {
-      return refused(diagnosis('not-yet-coverage', item.span));
-    }
-    const { share, shareSpan } = figure;
-    if (share.value > 1) return refused(diagnosis('share-above-one', shareSpan, [share.text]));
-    if (share.value <= 0 || share.value >= 1)
-      return refused(diagnosis('coverage-at-end', shareSpan, [share.text]));
-    const label = item.name?.text ?? (headed ? (item.after?.text ?? null) : null);
+    const held = heldCoverage(item, setting);
+    if (!held.ok) return held;
+    const label = coverageLabel(item, headed, rows);
     const index =
       label === null
         ? coverages.length === 1
@@ -104,12 +107,12 @@ function coverageRows(
           : coverages.indexOf(item)
         : rows.findIndex((row) => row.label !== null && nameKey(row.label) === nameKey(label));
     if (index !== -1 && index < rows.length) {
-      byRow[index] = shareQuantity(share, shareSpan);
+      byRow[index] = held.value;
       continue;
     }
     const implied = rows.findIndex((row) => row.label === null);
     if (implied !== -1 && rows.length === 2 && label !== null) {
-      byRow[implied] = shareQuantity(share, shareSpan);
+      byRow[implied] = held.value;
       otherLabel = label;
       continue;
     }
@@ -117,22 +120,43 @@ function coverageRows(
       diagnosis('coverage-unknown-group', item.name?.span ?? item.span, [names.join(' and '), label ?? '']),
     );
   }
+  const [one, second] = byRow.filter((held) => held !== null);
+  if (one !== undefined && second !== undefined && byRow.length === 2) {
+    if (!completeEachOther(one, second)) return refused(diagnosis('coverage-two-forms', first.span));
+    // What the second says follows from the first.
+    if (one.known.kind !== 'given') byRow[1] = null;
+  }
   const open = byRow.filter((coverage) => coverage === null).length;
   if (open > 1) return refused(diagnosis('coverage-of-several', first.span));
-  const nouns = coverages.map(({ figure }) => (figure.kind === 'share' ? (figure.noun?.text ?? null) : null));
+  const nouns = coverages.map((item) => {
+    const { figure, after } = item;
+    if (figure.kind === 'share' && figure.total === null) return figure.noun?.text ?? null;
+    // "310 of 500 riders": what the words behind a sample name, unless they name the group.
+    return coverageLabel(item, headed, rows) === after?.text ? null : (after?.text ?? null);
+  });
   return settled({ byRow, otherLabel, unit: nouns.find((noun) => noun !== null) ?? null });
+}
+
+/** Whose coverage an item is: the words in front of it, or behind it; behind a sample only where they name a group. */
+function coverageLabel({ name, after, figure }: Item, headed: boolean, rows: readonly Row[]): string | null {
+  if (name !== null) return name.text;
+  if (!headed || after === null) return null;
+  const isGroup = rows.some(({ label }) => label !== null && nameKey(label) === nameKey(after.text));
+  return figure.total === null || isGroup ? after.text : null;
 }
 
 function groupsOf({ rows, total }: Rows, { byRow, otherLabel }: Coverages): SharesGroup[] {
   const typed = byRow.filter((coverage) => coverage !== null);
   return rows.map((row, index) => {
     const given = byRow[index] ?? null;
+    const { coverage, known } = given ?? restOfHeld(typed, row.span);
     const share = row.caseShare ?? shareWithin(row, rows, total);
     return {
       label: row.label ?? otherLabel,
       cases: row.cases,
       caseShare: share,
-      coverage: given ?? restOf(typed, row.span),
+      coverage,
+      known,
       coverageImplied: given === null,
       span: row.span,
     };

@@ -12,6 +12,7 @@ import { layersOf, loneLayer, settleStrata } from './settle-strata.ts';
 import { settleShares } from './settle-shares.ts';
 import type { SharesParts } from './settle-shares.ts';
 import type { Item, ItemFigureShare, TreePart } from './tree.ts';
+import { isUnknown } from './uncertain-shares.ts';
 
 type List = Extract<TreePart, { kind: 'list' }>;
 
@@ -58,6 +59,8 @@ function settleItems(
   const shares = sharesParts(lists, items, setting);
   if (shares !== null) return settleShares(shares, setting);
   if (areRates(items)) return settleRates(items, setting);
+  const { trySpan } = setting.given;
+  if (trySpan !== undefined) return refused(diagnosis('try-without-coverage', trySpan));
   const everyCount = items.every(({ figure }) => figure.kind === 'count');
   const everyShare = items.every(({ figure }) => figure.kind === 'share' && figure.total === null);
   if (everyShare) return stated(items, setting);
@@ -94,7 +97,12 @@ function sharesParts(lists: readonly List[], items: readonly Item[], setting: Se
   if (coverageHead.length > 0 || casesHead.length > 0) {
     return { cases: [...casesHead, ...rest], coverages: coverageHead, headed: true };
   }
-  return pairedShares(items, setting);
+  const unknown = items.filter(isUnknown);
+  const paired = pairedShares(
+    items.filter((item) => !isUnknown(item)),
+    setting,
+  );
+  return paired === null ? null : { ...paired, cases: [...paired.cases, ...unknown] };
 }
 
 /** `no helmet: 44 of 75 injured, 38% of riders`, a line for each group or one line for one group. */

@@ -2,6 +2,7 @@ import { createToken } from 'chevrotain';
 import type { IToken, TokenType } from 'chevrotain';
 import type { WrittenNumber } from './numbers.ts';
 import type { Precision } from './question.ts';
+import type { WrittenCoverage } from './written-coverage.ts';
 
 /** What the tagging pass makes of the fine tokens: few types, each with its meaning already settled, so that LL(1) suffices. */
 
@@ -63,6 +64,8 @@ export interface ShareValue {
   readonly high: number;
   readonly precision: Precision;
   readonly form: 'percentage' | 'frequency';
+  /** Coverage that is not one number: only inside a coverage. */
+  readonly coverage?: WrittenCoverage;
 }
 
 /** A count as typed. `suppressed`: `<5`, anything from 0 to one less. */
@@ -84,7 +87,8 @@ export type ClauseName =
   | 'onlyMe'
   | 'designEffect'
   | 'everyone'
-  | 'ofCases';
+  | 'ofCases'
+  | 'try';
 
 export type TagPayload =
   | { readonly kind: 'text'; readonly text: string }
@@ -96,6 +100,8 @@ export type TagPayload =
       readonly name: ClauseName;
       readonly body: string;
       readonly number: WrittenNumber | null;
+      /** The coverages of `try`. */
+      readonly numbers?: readonly WrittenNumber[];
     }
   | { readonly kind: 'none' };
 

@@ -64,6 +64,7 @@ export type TreePart =
       readonly name: ClauseName;
       readonly body: string;
       readonly number: WrittenNumber | null;
+      readonly numbers: readonly WrittenNumber[];
       readonly span: Span;
     };
 
@@ -98,6 +99,7 @@ function partOf(node: CstNode, folded: Folded): TreePart {
       name: payload.name,
       body: payload.body,
       number: payload.number,
+      numbers: payload.numbers ?? [],
       span: spanOf(clause, folded),
     };
   }

@@ -4,7 +4,7 @@ import { exactCount, refused, settled } from './quantities.ts';
 import type { Settled } from './quantities.ts';
 import type { CountsGroup } from './question.ts';
 import type { Setting } from './setting.ts';
-import { referenceOf } from './settle-groups.ts';
+import { referenceOf } from './naming.ts';
 
 /** The groups without one that contains the others, and the reference among them where it moved. */
 interface Apart {

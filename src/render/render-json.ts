@@ -6,6 +6,7 @@ import { layerName } from './words/strata-words.ts';
 import { whyText } from './words/reading-row.ts';
 import { plainLabel } from './words/labels.ts';
 import { tell } from './words/tell.ts';
+import type { Telling } from './words/telling.ts';
 
 /** The version of the JSON report; it changes when a field changes its meaning or goes. */
 const schema = 1;
@@ -21,6 +22,9 @@ export function renderJson(line: string, report: Report): string {
       kind: question.overTime && question.kind !== 'strata' ? 'change' : question.kind,
       canonical: printCanonical(question),
       unit: question.unit,
+      ...(question.kind === 'shares' && question.unknownCases !== null
+        ? { unknownCases: question.unknownCases.value }
+        : {}),
       clauses: clausesOf(question),
     },
     groups: groupsOf(question),
@@ -35,6 +39,7 @@ export function renderJson(line: string, report: Report): string {
       agrees,
       remarks: [],
     })),
+    beside: besideOf(report, words.sides),
     says: null,
     remarks: words.remarks,
     cautions: words.cautions,
@@ -72,11 +77,12 @@ function groupsOf(question: Question): readonly object[] {
         ...rangeOf('total', total),
       }));
     case 'shares':
-      return question.groups.map(({ cases, caseShare, coverage }, index) => ({
+      return question.groups.map(({ cases, caseShare, coverage, known }, index) => ({
         label: plainLabel(question, index),
         cases: cases === null ? null : cases.value,
         caseShare: caseShare.value,
         coverage: coverage.value,
+        ...(known.kind === 'given' ? {} : { coverageKnown: known }),
       }));
     case 'stated':
       return question.groups.map(({ share }, index) => ({
@@ -103,12 +109,45 @@ function groupsOf(question: Question): readonly object[] {
   }
 }
 
+/** Ratios under other assumptions, side by side; numbers as in the readings. */
+function besideOf({ question, variants = [] }: Report, sides: Telling['sides']) {
+  return variants.map(({ topic, coverageOf, rows, slope }, index) => ({
+    topic,
+    coverageOf: plainLabel(question, coverageOf),
+    ...(slope === null ? {} : { slope }),
+    ratios: rows.map(({ id, of, against, coverage, estimate, unbounded, interval }) => ({
+      id,
+      of: plainLabel(question, of),
+      against: plainLabel(question, against),
+      coverage,
+      estimate,
+      ...(unbounded ? { unbounded } : {}),
+      interval,
+    })),
+    text: sides[index]?.line ?? '',
+  }));
+}
+
 function rangeOf(name: string, { low, high }: { readonly low: number; readonly high: number }) {
   return low === high ? {} : { [`${name}Range`]: { low, high } };
 }
 
 function clausesOf(question: Question) {
-  const { level, per, reference, population, among, period, source, note, exact, onlyMe } = question.clauses;
+  const {
+    level,
+    per,
+    reference,
+    population,
+    among,
+    period,
+    source,
+    note,
+    exact,
+    designEffect,
+    everyone,
+    onlyMe,
+    tryCoverages,
+  } = question.clauses;
   return {
     level: level?.value ?? null,
     per,
@@ -119,7 +158,10 @@ function clausesOf(question: Question) {
     source,
     note,
     exact,
+    designEffect: designEffect?.value ?? null,
+    countedEveryone: everyone,
     onlyMe,
+    ...(tryCoverages === undefined ? {} : { try: tryCoverages.map(({ value }) => value) }),
   };
 }
 
@@ -163,4 +205,6 @@ function readingOf(question: Question, reading: Reading, formula: string) {
 }
 
 const methodId = ({ interval }: Reading) =>
-  interval === null ? '' : `${interval.method}${interval.envelope ? ', outer envelope' : ''}`;
+  interval === null
+    ? ''
+    : `${interval.method}${interval.envelope ? ', outer envelope' : ''}${interval.unknownToEitherSide === true ? ', unknown cases to either side' : ''}`;

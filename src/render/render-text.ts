@@ -30,11 +30,15 @@ export function renderText(report: Report, strong: Emphasis): string {
     ),
     ...section('Better not', words.avoid.map(avoidLine), strong),
     ...(words.table === null ? [] : [strong('Table'), ...columns(words.table), '']),
+    ...words.sides.flatMap(({ title, line, table }) =>
+      table === null ? [] : [strong(title), `  ${line}`, ...columns(table), ''],
+    ),
     strong('All readings'),
     ...words.rows.map(({ name, value }) => `  ${name}: ${value}`),
+    ...words.sides.flatMap(({ line, table }) => (table === null ? [`  ${line}`] : [])),
     '',
     strong('Working'),
-    ...words.rows.map(workingLine).map((line) => `  ${line}`),
+    ...[...words.rows.map(workingLine), ...words.sides.map(sideWorking)].map((line) => `  ${line}`),
     '',
     words.limits,
   ].join('\n');
@@ -44,6 +48,9 @@ export function renderText(report: Report, strong: Emphasis): string {
 export function workingLine({ name, formula, long, method }: Telling['rows'][number]): string {
   return `${name}: ${formula} = ${long}.${method === '' ? '' : ` ${method}.`}`;
 }
+
+/** The working of what stands side by side. */
+export const sideWorking = ({ title, working }: Telling['sides'][number]) => `${title}: ${working}`;
 
 /** A sentence to post; one that does not fit 280 characters says so. */
 export const postLine = ({ text }: { readonly text: string }) =>

@@ -14,6 +14,7 @@ import { isReversed, pooledAndCrude } from './reversal.ts';
  * the renderer's catalogue.
  */
 export const cautionIds = [
+  'whole-register',
   'reversal',
   'layers-too-small',
   'layers-not-alike',
@@ -21,6 +22,8 @@ export const cautionIds = [
   'rows-chosen-by-outcome',
   'totals-missing',
   'base-rate',
+  'unknown-group',
+  'coverage-changed',
   'all-cases-in-one-group',
   'no-cases',
   'suppressed-cell',
@@ -44,8 +47,13 @@ const mostCautions = 2;
 
 /** The cautions that these inputs call for. */
 export function cautionsFor(question: Question, readings: readonly Reading[]): readonly CautionId[] {
-  const found = new Set(applying(question, readings));
+  const found = new Set([...applying(question, readings), ...always(question)]);
   return cautionIds.filter((id) => found.has(id)).slice(0, mostCautions);
+}
+
+/** What the clauses of any question call for. */
+function always({ clauses }: Question): readonly CautionId[] {
+  return clauses.everyone ? ['whole-register'] : [];
 }
 
 function applying(question: Question, readings: readonly Reading[]): readonly CautionId[] {
@@ -76,14 +84,14 @@ function applying(question: Question, readings: readonly Reading[]): readonly Ca
 const fewOf = (groups: readonly { readonly cases: Quantity }[]): readonly CautionId[] =>
   groups.some(({ cases }) => cases.high < 5) ? ['few-cases'] : [];
 
-function ratesCautions({ groups, overTime }: RatesQuestion): readonly CautionId[] {
+function ratesCautions({ groups, overTime, clauses }: RatesQuestion): readonly CautionId[] {
   const stated = groups.some(({ asStated }) => asStated);
   return [
     ...(stated ? (['as-stated'] as const) : []),
     ...(groups.every(({ cases }) => cases.value === 0) ? (['no-cases'] as const) : []),
     ...(groups.length > 2 ? (['picked-comparison'] as const) : []),
     ...(stated ? [] : fewOf(groups)),
-    ...(stated ? [] : (['events-singly'] as const)),
+    ...(stated || clauses.designEffect !== null ? [] : (['events-singly'] as const)),
     ...(overTime ? (['picked-starting-point'] as const) : []),
     groups.length === 1 ? 'one-group' : 'groups-may-differ',
   ];
@@ -151,8 +159,11 @@ function sharesCautions(question: SharesQuestion): readonly CautionId[] {
   const counted = cases.filter((quantity) => quantity !== null);
   const caseShares = groups.reduce((sum, { caseShare }) => sum + caseShare.value, 0);
   const coverages = groups.reduce((sum, { coverage }) => sum + coverage.value, 0);
+  const changed = groups.some(({ known }) => known.kind === 'growth' || known.kind === 'periods');
   return [
     'base-rate',
+    ...(question.unknownCases === null ? [] : (['unknown-group'] as const)),
+    ...(changed ? (['coverage-changed'] as const) : []),
     ...(Math.abs(caseShares - 1) > 1e-9 || Math.abs(coverages - 1) > 1e-9
       ? (['shares-do-not-add-up'] as const)
       : []),

@@ -7,6 +7,8 @@ export type MissingId =
   | 'counts-behind' // percentages without counts
   | 'totals' // counts without totals
   | 'second-group' // one group only
+  | 'unknown-groups' // shares: which group the cases of unknown group belong to
+  | 'cases-by-period' // coverage that grew: all cases, and coverage, period by period
   | 'everybody' // rows chosen by outcome: how many in all, ill and well, in each group
   | 'same-people' // shares: do cases and coverage belong to the same people, place and time
   | 'same-time' // counts: were the groups watched equally long, and could one be counted twice
@@ -25,6 +27,10 @@ export function missingFor(question: Question): readonly MissingId[] {
       return [...(question.groups.length === 1 ? (['second-group'] as const) : []), 'same-time', ...who];
     case 'shares':
       return [
+        ...(question.unknownCases === null ? [] : (['unknown-groups'] as const)),
+        ...(question.groups.some(({ known }) => known.kind === 'growth')
+          ? (['cases-by-period'] as const)
+          : []),
         ...(question.groups.some(({ cases }) => cases === null) ? (['case-number'] as const) : []),
         ...(question.clauses.population === null ? (['group-sizes'] as const) : []),
         'same-people',

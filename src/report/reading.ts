@@ -54,7 +54,14 @@ export type IntervalMethod =
   | 'pooled-conditional-exact'
   | 'pooled-shares-score'
   | 'pooled-shares-exact'
-  | 'log-delta';
+  | 'log-delta'
+  | 'sampled-coverage' // coverage from a sample: the score interval of that odds ratio
+  | 'sampled-coverage-fraction' // the same as a share of all cases: 1 minus a risk ratio
+  | 'effective-sample' // coverage with an interval of its own, as from a sample that would have given it
+  | 'effective-sample-fraction'
+  | 'growing-coverage' // the wider of two assumptions about coverage that grew
+  | 'coverage-by-period'
+  | 'as-given'; // an interval that came with the figure
 
 /** Why a reading has no interval. */
 export type NoInterval =
@@ -62,6 +69,9 @@ export type NoInterval =
   | 'no-totals' // counts without totals
   | 'no-case-number' // shares of cases without the number of cases
   | 'given' // a figure taken as given, not estimated
+  | 'range-given' // coverage as a range: the estimate is its middle
+  | 'mean-of-growth' // coverage that grew: the estimate is the mean of its ends
+  | 'mean-over-cases' // coverage by period: the estimate is its mean over all cases
   | 'no-exact-form' // `exact` was asked for, and this reading has no exact interval of the same family
   | 'spans-none' // one extra case per K: the difference's interval includes none, so K runs through infinity
   | 'no-cases-at-all' // a standardised risk of 0 has no interval on the log scale
@@ -73,6 +83,8 @@ export interface ReadingInterval extends Interval {
   readonly envelope: boolean;
   /** What the counts were divided by before the limits were worked out; 1 where they stand as they are. */
   readonly designEffect: number;
+  /** The outermost limits over all cases of unknown group on one side, then on the other. */
+  readonly unknownToEitherSide?: boolean;
 }
 
 /** Two ranges that run through infinity: one extra case for every K at least `more` or, the other way, at least `fewer`. */

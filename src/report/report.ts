@@ -1,6 +1,7 @@
 import type { Quantity, Question } from '../../grammar/question.ts';
 import type { CautionId } from './cautions.ts';
 import type { MissingId } from './missing.ts';
+import type { RatioVariants } from './ratio-variants.ts';
 import type { Reading, ReadingId } from './reading.ts';
 
 /** A percentage that stood beside counts, held against them. */
@@ -27,6 +28,8 @@ export interface Report {
   /** Most important first. */
   readonly cautions: readonly CautionId[];
   readonly missing: readonly MissingId[];
+  /** Ratios that stand beside the headline's, each under an assumption of its own. */
+  readonly variants?: readonly RatioVariants[];
 }
 
 /** The level used where the line names none: 95%, common practice. */

@@ -11,7 +11,7 @@ import { reading } from './reading.ts';
 import type { NoInterval, Reading, ReadingInterval } from './reading.ts';
 
 /** Below this many cases in a group the exact limits stand beside the score limits (common practice). */
-const fewCases = 5;
+export const fewCases = 5;
 
 /** The group's share of all cases. With `population` no interval of its own: every interval then comes from the counts rows. */
 export function caseShareReading(
@@ -41,15 +41,21 @@ export function caseShareReading(
 function shareInterval(
   question: SharesQuestion,
   of: number,
-  { level, exact }: CountsOptions,
+  { level, exact, designEffect }: CountsOptions,
 ): ReadingInterval | null {
   const all = caseQuantities(question);
   if (all === null) return null;
-  return intervalOver(all, level, exact ? 'clopper-pearson' : 'wilson', (values) => {
-    const total = values.reduce((sum, x) => sum + x, 0);
-    const cases = values[of] ?? NaN;
-    return exact ? clopperPearsonInterval(cases, total, level) : wilsonInterval(cases, total, level);
-  });
+  return intervalOver(
+    all,
+    level,
+    exact ? 'clopper-pearson' : 'wilson',
+    (values) => {
+      const total = values.reduce((sum, x) => sum + x, 0);
+      const cases = values[of] ?? NaN;
+      return exact ? clopperPearsonInterval(cases, total, level) : wilsonInterval(cases, total, level);
+    },
+    designEffect,
+  );
 }
 
 function caseQuantities({ groups }: SharesQuestion): Quantity[] | null {
@@ -66,7 +72,7 @@ export function shareRatioReadings(question: SharesQuestion, of: number, options
 function shareRatioReading(
   { groups, reference }: SharesQuestion,
   of: number,
-  { level, exact }: CountsOptions,
+  { level, exact, designEffect }: CountsOptions,
 ): Reading {
   const group = groups[of];
   const other = groups[reference];
@@ -87,10 +93,15 @@ function shareRatioReading(
   };
   const interval =
     counted &&
-    intervalOver(counted, level, exact ? 'clopper-pearson-share-odds' : 'wilson-share-odds', (at) =>
-      limits(at, here, level, exact),
+    intervalOver(
+      counted,
+      level,
+      exact ? 'clopper-pearson-share-odds' : 'wilson-share-odds',
+      (at) => limits(at, here, level, exact),
+      designEffect,
     );
-  const few = counted !== null && counted.some(({ value }) => value < fewCases);
+  // A design effect leaves no whole counts, which exact limits need.
+  const few = designEffect === 1 && counted !== null && counted.some(({ value }) => value < fewCases);
   return reading({
     id: 'risk-ratio',
     of,
@@ -109,13 +120,16 @@ function shareRatioReading(
 const ratioOf = ({ cases, referenceCases, coverage, referenceCoverage }: SharePair) =>
   (cases * referenceCoverage) / (referenceCases * coverage);
 
-interface CoverageEnd {
+export interface CoverageEnd {
   readonly coverage: number;
   readonly referenceCoverage: number;
 }
 
 /** The ends of what the rounding of coverage allows. Two groups whose coverages complete each other are one number, not two. */
-function coverageCorners({ coverage }: SharesGroup, { coverage: reference }: SharesGroup): CoverageEnd[] {
+export function coverageCorners(
+  { coverage }: SharesGroup,
+  { coverage: reference }: SharesGroup,
+): CoverageEnd[] {
   return coverageEnds(coverage).flatMap((own) =>
     complete(coverage, reference)
       ? [{ coverage: own, referenceCoverage: 1 - own }]
@@ -127,7 +141,7 @@ const complete = (one: Quantity, other: Quantity) => Math.abs(one.value + other.
 
 const coverageEnds = ({ low, high }: Quantity) => (low === high ? [low] : [low, high]);
 
-function ratioRoundingRange(
+export function ratioRoundingRange(
   numerators: readonly [Quantity, Quantity],
   coverages: readonly CoverageEnd[],
 ): { low: number | null; high: number | null } | null {

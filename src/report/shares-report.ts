@@ -1,11 +1,12 @@
 import type { Quantity, SharesQuestion } from '../../grammar/question.ts';
 import { cautionsFor } from './cautions.ts';
 import { pairReadings, riskReading } from './counts-readings.ts';
-import type { CountsOptions, CountsRow } from './counts-readings.ts';
+import type { CountsRow } from './counts-readings.ts';
 import { missingFor } from './missing.ts';
+import { optionsOf } from './options.ts';
+import { ratioVariants } from './ratio-variants.ts';
 import { reading } from './reading.ts';
 import type { Reading } from './reading.ts';
-import { usualLevel } from './report.ts';
 import type { Report } from './report.ts';
 import {
   breakEvenReading,
@@ -13,6 +14,7 @@ import {
   populationFraction,
   shareRatioReadings,
 } from './shares-readings.ts';
+import { isUncertain, uncertainSharesReport } from './uncertain-shares-report.ts';
 
 /**
  * Shares of cases beside shares of the population: the ratio per person without anybody's total. With `population` the
@@ -21,11 +23,8 @@ import {
  */
 export function sharesReport(question: SharesQuestion): Report {
   const { groups, reference, clauses } = question;
-  const options: CountsOptions = {
-    level: clauses.level?.value ?? usualLevel,
-    exact: clauses.exact,
-    per: clauses.per,
-  };
+  const options = optionsOf(clauses);
+  if (isUncertain(question)) return uncertainSharesReport(question, options);
   const others = groups.map((_, index) => index).filter((index) => index !== reference);
   const rows = rowsInPopulation(question);
   const population = groups.map(({ coverage, coverageImplied }, of) =>
@@ -64,6 +63,11 @@ export function sharesReport(question: SharesQuestion): Report {
     stated: [],
     cautions: cautionsFor(question, readings),
     missing: missingFor(question),
+    variants: ratioVariants(
+      question,
+      readings.find(({ id }) => id === 'risk-ratio'),
+      options,
+    ),
   };
 }
 

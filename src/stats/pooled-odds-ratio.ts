@@ -84,8 +84,8 @@ function totals(strata: Strata, t: number): { readonly gap: number; readonly var
 }
 
 function fitted(groups: TwoGroups, t: number): { readonly excess: number; readonly variance: number } {
-  const { cases, variance } = fittedTable(groups, t);
-  return { excess: groups.cases - cases, variance: variance * varianceFactor(groups) };
+  const { excess, variance } = fittedTable(groups, t);
+  return { excess, variance: variance * varianceFactor(groups) };
 }
 
 /** Whether a layer's possible tables are counted one by one. */

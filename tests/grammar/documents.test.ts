@@ -30,6 +30,8 @@ describe('grammar/GRAMMAR.md', () => {
   it.each([
     ['Counts', 'counts'],
     ['Shares', 'shares'],
+    ['Coverage that is not one number', 'shares'],
+    ['Cases of unknown group', 'shares'],
     ['Stated percentages and frequencies', 'stated'],
     ['Bare counts', 'bare-counts'],
     ['Clauses', 'counts'],

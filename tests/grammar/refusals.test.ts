@@ -3,6 +3,7 @@ import { messages } from '../../grammar/messages.ts';
 import { readLine } from '../../grammar/read-line.ts';
 import { placeExcerpt } from '../../grammar/place-excerpt.ts';
 import { commandLineLimits, slackLimits } from '../../src/answer/answer-line.ts';
+import { coverageRefusals } from './coverage-lines.ts';
 
 function refusal(line: string, limits = commandLineLimits) {
   const reading = readLine(line, limits);
@@ -61,9 +62,7 @@ const refused: readonly (readonly [string, string, string])[] = [
   ['alarm: sensitivity 92%, specificity 97%, prevalence 0.4%', 'not-yet-alarm', 'sensitivity'],
   ['water alarm 92% accurate, 1 in 250 wells bad', 'not-yet-alarm', 'accurate'],
   ['tp 46 fp 30 fn 4 tn 920', 'not-yet-alarm', 'tp'],
-  ['coverage: helmet 55-65%; cases: no helmet 44, helmet 31', 'not-yet-coverage', 'helmet 55-65%'],
   ['18 of 1,204 vs 9 of 2,377; says "twice"', 'not-yet-clause', 'says'],
-  ['18 of 1,204 vs 9 of 2,377; try 30%, 38%', 'not-yet-clause', 'try'],
   ['of 75 injured, 44 wore no helmet', 'total-first', 'of 75'],
   ['75 injured, 44 of them no helmet', 'total-first', 'of them'],
   ['1,204 staff, of which 18 sick', 'total-first', 'of which'],
@@ -100,9 +99,16 @@ const refused: readonly (readonly [string, string, string])[] = [
   ['night\t18\t12\nday\t9\t2,377', 'second-column', '18\t12'],
   ['240 ms vs 310 ms', 'measurement', 'ms'],
   ['4.2 days vs 3.1 days', 'measurement', 'days'],
-  ['coverage by month: Jan 20%, Feb 30%; cases by month: 30, 25', 'not-yet-coverage', 'coverage by'],
-  ['cases: no helmet 44, helmet 31; coverage: helmet 38% (34 to 42)', 'not-yet-coverage', 'coverage:'],
-  ['harbour ward: 31 of 9,240 vs all: 210 of 88,000', 'not-yet-whole', 'all: 210 of 88,000'],
+  ['harbour ward: 31 of 9,240 vs all: 21 of 88,000', 'whole-too-small', 'all: 21 of 88,000'],
+  ['harbour ward: <5 of 9,240 vs all: 210 of 88,000', 'whole-not-exact', 'all: 210 of 88,000'],
+  ['18 of 1,204 vs 9 of 2,377; design effect 0.5', 'design-effect-range', 'design effect 0.5'],
+  ['18 of 1,204 vs 9 of 2,377; design effect 2; exact', 'exact-with-design-effect', 'design effect 2'],
+  [
+    'cases: no helmet 44, helmet 31; coverage: helmet 55-65%; design effect 2',
+    'design-effect-and-form',
+    '55-65%',
+  ],
+  ...coverageRefusals,
 ];
 
 describe('a line that cannot be read', () => {

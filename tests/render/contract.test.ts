@@ -41,6 +41,7 @@ describe.each(Object.entries(scenarios))('%s: every renderer tells the same', (_
     avoid: { text: string; because: string }[];
     limits: string;
     readings: { id: string; estimate: number | null }[];
+    beside: { text: string; ratios: unknown[] }[];
   };
   const root = renderRoot(line, report, context);
   const reply = renderReply(report, context);
@@ -91,6 +92,20 @@ describe.each(Object.entries(scenarios))('%s: every renderer tells the same', (_
       expect(working).toContain(long);
     }
     expect(json.readings).toHaveLength(words.rows.length);
+  });
+
+  it('shows what stands side by side in text, in JSON and in Slack, with the same digits', () => {
+    const readings = shown(parts.readings.blocks);
+    const working = shown(parts.working.blocks);
+    for (const { line: sentence, table: rows, working: how } of words.sides) {
+      expect(text).toContain(sentence);
+      expect(`${readings} ${shown(reply.blocks)}`).toContain(sentence);
+      expect(text).toContain(how);
+      expect(working).toContain(how);
+      for (const row of rows ?? []) for (const cell of row) expect(text).toContain(cell);
+      for (const row of rows?.slice(1) ?? []) for (const cell of row) expect(readings).toContain(cell);
+    }
+    expect(json.beside.map((beside) => beside.text)).toEqual(words.sides.map((side) => side.line));
   });
 
   it('says in the text of every message each number that its blocks show', () => {

@@ -10,6 +10,18 @@ export const scenarios = {
   'helmets-protective': 'cases: helmet 9, no helmet 41; coverage: helmet 62%',
   'three-doses-of-training':
     'cases: none 40, one course 12, two courses 23; coverage: none 30%, one course 15%, two courses 55%',
+  'helmets-coverage-range': 'cases: no helmet 44, helmet 31; coverage: helmet 55-65% of riders',
+  'helmets-coverage-sample': 'cases: no helmet 44, helmet 31; coverage: no helmet 190 of 500 riders',
+  'helmets-nobody-in-the-sample': 'cases: no helmet 6, helmet 61; coverage: no helmet 0 of 120 riders',
+  'helmets-coverage-interval': 'no helmet: 44 of 75 injured, 38% (34 to 42) of riders',
+  'helmets-coverage-about': 'cases: no helmet 44, helmet 31; coverage: no helmet about 38%',
+  'helmets-coverage-grew': 'cases: helmet 31, no helmet 44; coverage: helmet from 20% to 60% of riders',
+  'helmets-coverage-grew-far': 'cases: helmet 8, no helmet 67; coverage: helmet from 5% to 90% of riders',
+  'helmets-coverage-by-month':
+    'helmet: 31 of 75 injured; coverage by month: Mar 20%, Apr 30%, May 45%, Jun 60% of riders; cases by month: 30, 25, 12, 8',
+  'helmets-group-unknown': 'cases: no helmet 44, helmet 31, unknown 12; coverage: no helmet 38%',
+  'helmets-many-unknown': 'cases: no helmet 90, helmet 15, unknown 60; coverage: no helmet 38% of riders',
+  'helmets-try-coverages': 'cases: no helmet 44, helmet 31; coverage: no helmet 38%; try 30%, 38%, 50%',
   'night-and-day-shifts': 'night shift: 18 of 1,204 vs day shift: 9 of 2,377',
   'shifts-with-nouns': 'night: 18 incidents out of 1,204 shifts vs day: 9 incidents out of 2,377 shifts',
   'shifts-not-shown': 'night shift: 3 of 900 vs day shift: 4 of 800',
@@ -46,6 +58,9 @@ export const scenarios = {
   'pasted-table':
     'age\tnight cases\tnight total\tday cases\tday total\nunder 40\t30\t900\t200\t9,000\n40 and over\t160\t2,000\t6\t100',
   'layers-too-small': 'by ward: north: night 1 of 4 vs day 2 of 9 | south: night 3 of 12 vs day 1 of 14',
+  'ward-and-town': 'harbour ward: 31 of 9,240 vs all: 210 of 88,000',
+  'whole-register-in-clusters':
+    'night shift: 18 of 1,204 vs day shift: 9 of 2,377; design effect 1.8; counted: everyone',
   'stated-percentages': '4.2% vs 2.6%',
   'stated-frequencies': '1 in 250 vs 1 in 400',
   'bare-counts': 'night 18 vs day 9',

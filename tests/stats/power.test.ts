@@ -46,28 +46,29 @@ const bothSides = ({ above, below }: DetectableRatio, expected: Found) =>
   Math.max(errorOf(above, expected.above), errorOf(below, expected.below));
 
 describe('the smallest ratios that would have shown, by full enumeration in Python', () => {
-  const inGroups = reference.riskRatios.map((row) => ({
-    row,
-    answer: detectableRiskRatio(plan(row.groups), Number(row.level), row.power),
-  }));
-  const enumerated = inGroups.filter(({ answer }) => answer.method === 'enumeration');
+  const inGroups = () =>
+    reference.riskRatios.map((row) => ({
+      row,
+      answer: detectableRiskRatio(plan(row.groups), Number(row.level), row.power),
+    }));
+  const enumerated = () => inGroups().filter(({ answer }) => answer.method === 'enumeration');
 
-  it('are met to 1e-12 by risk ratios of groups of 1 to 900, where every outcome was put to the test in whole numbers', () => {
-    const rows = enumerated.filter(({ row }) => row.exact);
+  it('are met to 1e-11 by risk ratios of groups of 1 to 900, where every outcome was put to the test in whole numbers', () => {
+    const rows = enumerated().filter(({ row }) => row.exact);
     const found = worst(rows, ({ row, answer }) => bothSides(answer, row));
     expect(rows).toHaveLength(18);
-    expect(found.error, JSON.stringify(found.row)).toBeLessThan(1e-12);
+    expect(found.error, JSON.stringify(found.row)).toBeLessThan(1e-11);
   });
 
   it('are met to 1e-9 by risk ratios of groups of 150 to 20,000', () => {
-    const rows = enumerated.filter(({ row }) => !row.exact);
+    const rows = enumerated().filter(({ row }) => !row.exact);
     const found = worst(rows, ({ row, answer }) => bothSides(answer, row));
     expect(rows).toHaveLength(6);
     expect(found.error, JSON.stringify(found.row)).toBeLessThan(1e-9);
   });
 
   it('are met to 0.2% of the distance from 1 where more than 30 on each side of the mean are usual and the normal approximation is used', () => {
-    const rows = inGroups.filter(({ answer }) => answer.method === 'normal-approximation');
+    const rows = inGroups().filter(({ answer }) => answer.method === 'normal-approximation');
     const found = worst(rows, ({ row, answer }) =>
       Math.max(
         errorOf((answer.above ?? NaN) - 1, String(Number(row.above) - 1)),

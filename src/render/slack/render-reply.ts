@@ -2,7 +2,7 @@ import { avoidLine } from '../words/avoid.ts';
 import type { KnownBlock } from '@slack/types';
 import { printCanonical } from '../../../grammar/print-canonical.ts';
 import type { Report } from '../../report/report.ts';
-import { postLine, shortLine, workingLine } from '../render-text.ts';
+import { postLine, shortLine, sideWorking, workingLine } from '../render-text.ts';
 import { tell } from '../words/tell.ts';
 import type { Telling } from '../words/telling.ts';
 import { lackingText } from '../words/missing-words.ts';
@@ -26,7 +26,9 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
   const words = tell(report);
   // Three or more groups, and layers, have a table instead; a large one and their sentences stand with the readings.
   const shownTable = tableShown(words);
-  const post = words.table === null ? words.posts[0] : undefined;
+  const post = hasFirstPost(words) ? words.posts[0] : undefined;
+  // What one point more does stands with the readings.
+  const beside = words.sides.filter(({ table: rows }) => rows !== null).map(({ line }) => line);
   const lacking = lackingText(report);
   const careful = words.cautions.map(({ text }) => text).join(' ');
   const foot =
@@ -37,6 +39,7 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
   const blocks: KnownBlock[] = [
     paragraph(bold(words.headline)),
     paragraph(plain([words.readAs, ...words.remarks].join(' '))),
+    ...beside.map((line) => paragraph(plain(line))),
     ...(post === undefined ? [] : [paragraph(bold('To post:')), quotation(postLine(post))]),
     paragraph(bold('Careful: '), plain(careful)),
     ...(shownTable === null ? [] : [table(shownTable)]),
@@ -56,6 +59,7 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
     words.headline,
     words.readAs,
     ...words.remarks,
+    ...beside,
     ...(post === undefined ? [] : [`To post: ${postLine(post)}`]),
     `Careful: ${careful}`,
     ...(shownTable ?? []).map((row) => row.join('; ')),
@@ -72,6 +76,12 @@ const tableLength = 330;
 function tableShown({ table: rows }: Telling): Telling['table'] {
   return rows !== null && rows.flat().join('').length <= tableLength ? rows : null;
 }
+/**
+ * Whether the first sentence to post stands in the answer. Three or more groups have a table instead, and a sentence that takes
+ * something for granted needs the others beside it: those stand with the readings.
+ */
+const hasFirstPost = ({ table: rows, sides }: Telling) =>
+  rows === null && !sides.some(({ topic }) => topic === 'growth' || topic === 'unknown');
 
 /** One of the parts behind the answer's buttons, for the person who pressed. */
 export function renderPart(line: string, report: Report, part: PartBehind): SlackMessage {
@@ -102,12 +112,18 @@ function partLines(
             ? (words.table ?? []).map((row) => row.filter((cell) => cell !== '').join('; '))
             : []),
           ...words.rows.map(({ name, value }) => `${name}: ${value}`),
-          ...words.posts.slice(words.table === null ? 1 : 0).map((post) => `To post: ${postLine(post)}`),
+          ...words.sides.flatMap(({ title, line, table: rows }) => [
+            ...(rows === null ? [line] : []),
+            ...(rows ?? [])
+              .slice(1)
+              .map((cells) => `${title}, ${cells[0] ?? ''}: ${cells[1] ?? ''} (interval ${cells[2] ?? ''})`),
+          ]),
+          ...words.posts.slice(hasFirstPost(words) ? 1 : 0).map((post) => `To post: ${postLine(post)}`),
           ...shortLine(words),
         ],
       };
     case 'working':
-      return { title: 'Working', lines: words.rows.map(workingLine) };
+      return { title: 'Working', lines: [...words.rows.map(workingLine), ...words.sides.map(sideWorking)] };
     case 'questions':
       return { title: 'Questions to send', lines: words.missing.map(({ text }) => text) };
     case 'avoid':

@@ -2,6 +2,13 @@ import type { Question } from '../../../grammar/question.ts';
 import type { CautionId } from '../../report/cautions.ts';
 import { readingsOf } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
+import {
+  coverageCaution,
+  coverageChanged,
+  expectedShare,
+  unknownCaution,
+  ofKnownGroup,
+} from './coverage-words.ts';
 import { cases } from './labels.ts';
 import { fixed, percent } from './numbers.ts';
 
@@ -13,6 +20,11 @@ interface CautionEntry {
 
 /** The catalogue of cautions: one or two stand in an answer, chosen by its inputs. */
 export const cautionCatalogue = {
+  'whole-register': {
+    source: 'Brillinger 1986, Biometrics 42:693; APHO technical briefing 3, 2008',
+    text: () =>
+      'These are all the cases, so the figure is exact for that time; the interval says how far apart chance alone puts two groups of this size.',
+  },
   reversal: {
     source: 'Bickel, Hammel & O\u2019Connell 1975, Science 187:398; Julious & Mullee 1994, BMJ 309:1480',
     text: () =>
@@ -44,6 +56,14 @@ export const cautionCatalogue = {
       'Counts without totals say nothing about how often: the larger group may simply have more of everything.',
   },
   'base-rate': { source: 'Orenstein et al. 1985, Bull. World Health Organ. 63:1055', text: baseRate },
+  'unknown-group': {
+    source: 'Horowitz & Manski 2000, JASA 95:77',
+    text: ({ question }) => (question.kind === 'shares' ? unknownCaution(question) : ''),
+  },
+  'coverage-changed': {
+    source: 'Farrington 1993, International Journal of Epidemiology 22:742',
+    text: ({ question }) => (question.kind === 'shares' ? coverageChanged(question) : ''),
+  },
   'all-cases-in-one-group': {
     source: 'Hanley & Lippman-Hand 1983, JAMA 249:1743',
     text: () => 'All cases are in one group. None in the other does not mean that none can happen there.',
@@ -86,7 +106,7 @@ export const cautionCatalogue = {
   'events-singly': {
     source: 'Glynn & Buring 1996, BMJ 312:364',
     text: () =>
-      'The limits take cases as coming one by one; several at once, or the same people again, make them too narrow.',
+      'The limits take cases as coming one by one; several at once, or the same people again, make them too narrow (give a design effect).',
   },
   'picked-starting-point': {
     source: 'Barnett et al. 2005, Int. J. Epidemiol. 34:215',
@@ -114,8 +134,9 @@ function baseRate(report: Report): string {
   const { question } = report;
   const of = readingsOf(report, 'risk-ratio')[0]?.of ?? 0;
   const share = readingsOf(report, 'case-share').find((reading) => reading.of === of)?.estimate ?? NaN;
-  const held = question.kind === 'shares' ? (question.groups[of]?.coverage.text ?? '') : '';
-  return `${percent(share, 'short')} is a share of the ${cases(question)}, not a risk; it would be ${held} if both groups had ${cases(question)} equally often.`;
+  const group = question.kind === 'shares' ? question.groups[of] : undefined;
+  const held = group === undefined ? '' : expectedShare(group);
+  return `${percent(share, 'short')} is a share of the ${cases(question)}${ofKnownGroup(question)}, not a risk; it would be ${held} if both groups had ${cases(question)} equally often.`;
 }
 
 function fewCases({ question }: Report): string {
@@ -149,7 +170,7 @@ function smallRisk({ question, readings }: Report): string {
 }
 
 function coverageAsGiven({ question }: Report): string {
-  if (question.kind !== 'shares') return 'Coverage is taken as exact, for the same people, place and time.';
-  const held = question.groups.find(({ coverageImplied }) => !coverageImplied)?.coverage.text ?? 'Coverage';
-  return `${held} is taken as exact, for the same people, place and time.`;
+  return question.kind === 'shares'
+    ? coverageCaution(question)
+    : 'Coverage is taken as exact, for the same people, place and time.';
 }

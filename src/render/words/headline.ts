@@ -2,6 +2,7 @@ import type { Question } from '../../../grammar/question.ts';
 import type { Reading } from '../../report/reading.ts';
 import { readingsOf, shownDirection } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
+import { boundsHeadline } from './bounds-headline.ts';
 import { changeText, countedMore, estimateText, levelText, limitsText } from './interval-text.ts';
 import { cases, Label, label, perOne, plainLabel, capital } from './labels.ts';
 import { percent, ratio } from './numbers.ts';
@@ -42,6 +43,8 @@ function twoGroups(report: Report, reading: Reading): string {
   }
   if (question.kind === 'strata') return strataHeadline(report, question, reading);
   const direction = shownDirection(report, reading);
+  const bounds = boundsHeadline(report, direction);
+  if (bounds !== null) return bounds;
   if (direction === 'none-shown') {
     const what = reading.interval === null ? 'These figures are few' : `These figures fit ${fits(reading)}`;
     return `${what}: ${neitherShown}.`;

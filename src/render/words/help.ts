@@ -8,7 +8,7 @@ export interface Help {
 }
 
 const clauses =
-  'After a ; you can add: level 90%, per 1,000, reference day shift, among "registered riders, May", source https://..., note "...", exact, only me.';
+  'After a ; you can add: level 90%, per 1,000, reference day shift, among "registered riders, May", source https://..., note "...", exact, design effect 1.8, counted: everyone, only me.';
 
 /** The help for each topic: what to type and what comes back. */
 export const helpTopics = {
@@ -42,6 +42,7 @@ export const helpTopics = {
     title: 'Cases by group, beside the share of everybody that each group has.',
     lines: [
       'From the two comes the ratio per rider (or per shift, per person), which the share of cases alone does not tell.',
+      'Coverage may be a range, a sample, a figure with its interval, or have grown or fallen; cases may be of unknown group; "try 30%, 38%" shows the ratio at several coverages.',
       clauses,
     ],
     examples: [
@@ -49,6 +50,13 @@ export const helpTopics = {
       'no helmet: 44 of 75 injured, 38% of riders',
       'no helmet: 58.7% of cases, 38% of riders; of 75 cases',
       'cases: no helmet 44, helmet 31; coverage: no helmet 38%; population 84,000',
+      'cases: no helmet 44, helmet 31; coverage: helmet 55-65%',
+      'cases: no helmet 44, helmet 31; coverage: helmet 310 of 500',
+      'cases: no helmet 44, helmet 31; coverage: helmet 62% (58 to 66)',
+      'cases: no helmet 44, helmet 31; coverage: helmet from 20% to 60%',
+      'helmet: 31 of 75; coverage by month: Jan 20%, Feb 30%, Mar 45%; cases by month: 30, 25, 20',
+      'cases: no helmet 44, helmet 31, unknown 12; coverage: no helmet 38%',
+      'cases: no helmet 44, helmet 31; coverage: no helmet 38%; try 30%, 38%, 50%',
     ],
   },
   stated: {

@@ -17,6 +17,10 @@ export function missingText(question: Question, id: MissingId): string {
       return `Out of how many? ${question.groups.map((group, index) => `${plainLabel(question, index)} ${'cases' in group && group.cases !== null ? quantityText(group.cases) : ''} of ...`).join(', ')}`;
     case 'second-group':
       return 'What is it to be compared with: how many, out of how many, in a second group?';
+    case 'unknown-groups':
+      return `Which group do the ${unknownCount(question)} ${casesAsTyped(question)} of unknown group belong to?`;
+    case 'cases-by-period':
+      return `How many ${casesAsTyped(question)} were there in each month, all groups together, and what was the coverage then? With that the ratio needs no assumption.`;
     case 'everybody':
       return 'How many were there in all in each group, with and without the outcome? With that a risk can be given.';
     case 'same-people':
@@ -36,6 +40,9 @@ export function missingText(question: Question, id: MissingId): string {
   }
 }
 
+const unknownCount = (question: Question) =>
+  question.kind === 'shares' && question.unknownCases !== null ? quantityText(question.unknownCases) : '';
+
 function shares(question: Question): string {
   if (question.kind === 'rates') return 'the rates';
   if (question.kind !== 'stated') return 'the percentages';
@@ -50,6 +57,10 @@ export function lackingText({ question, missing }: Report): string | null {
       return `No risk without the number of ${question.unit ?? 'people in all'}.`;
     case 'case-number':
       return `No interval without the number of ${casesAsTyped(question)}.`;
+    case 'unknown-groups':
+      return `Knowing the group of the ${unknownCount(question)} would narrow this.`;
+    case 'cases-by-period':
+      return 'Give cases by month to settle it.';
     case 'counts-behind':
       return `No interval without the counts behind the ${question.kind === 'rates' ? 'rates' : 'percentages'}.`;
     case 'totals':

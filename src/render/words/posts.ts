@@ -3,8 +3,10 @@ import type { Reading, ReadingId } from '../../report/reading.ts';
 import { readingsOf, shownDirection } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
 import { changePosts } from './change-posts.ts';
+import { assumption, coveragePhrase, unknownSentence, ofKnownGroup } from './coverage-words.ts';
+import { grantedNote, wanting } from './coverage-posts.ts';
 import { changeText, countedMore, limitsText } from './interval-text.ts';
-import { capital, cases, casesAsTyped, Label, label, perOne, population } from './labels.ts';
+import { capital, cases, casesAsTyped, Label, label, perOne } from './labels.ts';
 import { amount, beside, fixed, percent, points, ratio } from './numbers.ts';
 import { compared, comparison, intervalNote } from './ratio-words.ts';
 import { noneShown } from './none-shown.ts';
@@ -46,7 +48,7 @@ export function shortPost(report: Report): string | null {
   if (reading?.estimate == null || reading.against === null || question.groups.length !== 2) return null;
   if (question.kind === 'bare-counts' || question.kind === 'strata' || report.headline === 'odds-ratio')
     return null;
-  if (shownDirection(report, reading) === 'none-shown') return null;
+  if (shownDirection(report, reading) === 'none-shown' || assumption(question) !== null) return null;
   const { words, joiner, figure } = comparison(
     reading.estimate,
     question.kind === 'shares'
@@ -144,6 +146,15 @@ function shareChangePost(report: Report, rows: string, reference: string): Post[
   const [change] = readingsOf(report, 'relative-change');
   if (change?.estimate == null || change.interval === null) return [];
   const more = countedMore(changeText(change.estimate, 'short'));
+  const granted = assumption(report.question);
+  if (granted !== null) {
+    return [
+      {
+        reading: 'relative-change',
+        text: `${rows} ${granted} ${more} ${cases(report.question)} ${perOne(report.question)} than ${reference} (${countedMore(grantedNote(change))}).`,
+      },
+    ];
+  }
   return [
     {
       reading: 'relative-change',
@@ -223,19 +234,23 @@ function sharesPosts(report: Report, question: SharesQuestion): Post[] {
   if (shownDirection(report, ratioReading) === 'none-shown')
     return [{ reading: 'risk-ratio', text: noneShown(ratioReading, made) }];
   const per = capital(perOne(report.question));
+  const granted = assumption(report.question);
   const ratioPost: Post =
     ratioReading.estimate === null
       ? {
           reading: 'risk-ratio',
-          text: `${made} No ratio can be given without ${cases(report.question)} in ${reference} (${intervalNote(ratioReading)}).`,
+          text: `${made} No ratio can be given ${wanting(question, ratioReading.of)} (${intervalNote(ratioReading)}).`,
         }
       : {
           reading: 'risk-ratio',
-          text: `${made} ${per}, that is ${compared(ratioReading, `many ${cases(report.question)}`, reference)}.`,
+          text:
+            granted === null
+              ? `${made} ${per}, that is ${compared(ratioReading, `many ${cases(report.question)}`, reference)}.`
+              : `${made} ${granted} ${compared(ratioReading, `many ${cases(report.question)} ${perOne(question)}`, reference, grantedNote(ratioReading))}.`,
         };
   const share = readingsOf(report, 'case-share').find(({ of }) => of === ratioReading.of);
   const sharePost: Post[] =
-    share?.interval == null
+    share?.interval == null || question.unknownCases !== null
       ? []
       : [
           {
@@ -254,9 +269,9 @@ function madeUp(report: Report, question: SharesQuestion, index: number): string
   const all = question.totalCases;
   const counted =
     group.cases !== null && all !== null
-      ? `${quantityText(group.cases)} of ${quantityText(all)} ${casesAsTyped(report.question)} (${share})`
+      ? `${quantityText(group.cases)} of ${quantityText(all)} ${casesAsTyped(report.question)}${ofKnownGroup(question)} (${share})`
       : `${quantityText(group.caseShare)} of the ${casesAsTyped(report.question)}`;
-  return `${Label(report.question, index)} made up ${counted} and ${group.coverage.text} of ${population(report.question)}.`;
+  return `${Label(report.question, index)} made up ${counted}${coveragePhrase(question, index)}.${unknownSentence(question)}`;
 }
 
 function statedPosts(report: Report): Post[] {

@@ -18,6 +18,9 @@ export function intervalNote(reading: Reading): string {
       return 'interval: see the risk ratio';
     case 'no-counts':
     case 'given':
+    case 'range-given':
+    case 'mean-of-growth':
+    case 'mean-over-cases':
     case 'spans-none':
     case 'no-cases-at-all':
     case null:

@@ -1,6 +1,7 @@
 import type { Quantity, Question, RatesQuestion, ReadingRemark } from '../../../grammar/question.ts';
 import type { Report } from '../../report/report.ts';
-import { casesAsTyped, one, plainLabel, population } from './labels.ts';
+import { coverageRead } from './coverage-words.ts';
+import { casesAsTyped, one, plainLabel } from './labels.ts';
 import { count, percent } from './numbers.ts';
 
 /** A typed number as it was read: counts grouped, percentages and frequencies in their own spelling. */
@@ -26,15 +27,18 @@ export function readAs(question: Question): string {
       return `Read as: ${rows.join('; ')}${against}.`;
     }
     case 'shares': {
-      const rows = question.groups.map(({ cases, caseShare, coverage }, index) => {
+      const rows = question.groups.map(({ cases, caseShare }, index) => {
         const share =
           cases === null ? `${quantityText(caseShare)} of ${casesAsTyped(question)}` : quantityText(cases);
         const of =
           index === 0 && question.totalCases !== null && cases !== null
             ? ` of ${quantityText(question.totalCases)} ${casesAsTyped(question)}`
             : '';
-        return `${named(index)} ${share}${of}, ${coverage.text}${index === 0 ? ` of ${population(question)}` : ''}`;
+        const held = coverageRead(question, index);
+        return `${named(index)} ${share}${of}${held === '' ? '' : `, ${held}`}`;
       });
+      if (question.unknownCases !== null)
+        rows.push(`${quantityText(question.unknownCases)} of unknown group`);
       return `Read as: ${rows.join('; ')}${against}.`;
     }
     case 'stated':

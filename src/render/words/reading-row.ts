@@ -1,6 +1,7 @@
 import type { Question } from '../../../grammar/question.ts';
 import type { IntervalMethod, NoInterval, Reading, ReadingInterval } from '../../report/reading.ts';
 import type { Report } from '../../report/report.ts';
+import { coverageFormula } from './coverage-formulas.ts';
 import { estimateText, levelText, limitsText, workingText } from './interval-text.ts';
 import { cases, plainLabel } from './labels.ts';
 import { amount, beside, fixed } from './numbers.ts';
@@ -97,9 +98,12 @@ const isFewer = ({ readings }: Report, { of }: Reading) =>
 function valueOf(question: Question, reading: Reading): string {
   const plain = estimateText(reading, 'full') ?? (reading.unbounded ? 'no upper end' : 'no value');
   const estimate = `${plain}${unitOf(question, reading)}`;
-  const parts = [intervalPart(reading), exactPart(reading), roundingPart(reading), limitPart(reading)].filter(
-    (part) => part !== null,
-  );
+  const parts = [
+    intervalPart(reading),
+    exactPart(reading),
+    roundingPart(question, reading),
+    limitPart(reading),
+  ].filter((part) => part !== null);
   return parts.length === 0 ? estimate : `${estimate} (${parts.join('; ')})`;
 }
 
@@ -137,6 +141,12 @@ export function whyText(why: NoInterval): string {
       return 'no interval: the number of cases is not given';
     case 'given':
       return 'as given, taken as exact';
+    case 'range-given':
+      return 'the middle of the range given';
+    case 'mean-of-growth':
+      return 'the mean of its two ends';
+    case 'mean-over-cases':
+      return 'the mean over all cases';
     case 'no-exact-form':
       return 'no exact interval of this reading; leave out `exact` for the score interval';
     case 'no-cases-at-all':
@@ -154,10 +164,14 @@ function exactPart(reading: Reading): string | null {
     : `exact limits ${limitsText(reading, reading.exactBeside, 'full')}`;
 }
 
-function roundingPart(reading: Reading): string | null {
-  return reading.roundingRange === null
-    ? null
-    : `rounding alone allows ${limitsText(reading, reading.roundingRange, 'full')}`;
+function roundingPart(question: Question, reading: Reading): string | null {
+  if (reading.roundingRange === null) return null;
+  const limits = limitsText(reading, reading.roundingRange, 'full');
+  const isRange = question.kind === 'shares' && question.groups.some(({ known }) => known.kind === 'range');
+  if (reading.id === 'population-share' && reading.whyNoInterval !== 'given') return `from ${limits}`;
+  return isRange && reading.id !== 'case-share'
+    ? `the range alone allows ${limits}`
+    : `rounding alone allows ${limits}`;
 }
 
 function limitPart(reading: Reading): string | null {
@@ -175,6 +189,8 @@ function formulaOf(asked: Question, reading: Reading): string {
   const own = parts(question, reading.of);
   const other = reading.against === null ? null : parts(question, reading.against);
   const pair = other === null ? '' : `${own.risk} / (${other.risk})`;
+  const special = coverageFormula(question, reading);
+  if (special !== null) return special;
   switch (reading.id) {
     case 'risk':
     case 'rate':
@@ -324,6 +340,18 @@ const sources = {
   'pooled-shares-score': 'score (Farrington 1993)',
   'pooled-shares-exact': 'exact tails of the sum of binomial counts (Farrington 1993)',
   'log-delta': 'delta method on the log scale, weights as known',
+  'sampled-coverage':
+    'Miettinen-Nurminen score of the odds ratio, cases against the sample (Miettinen & Nurminen 1985)',
+  'sampled-coverage-fraction':
+    '1 minus the Miettinen-Nurminen score limits of the risk ratio, cases against the sample (Miettinen & Nurminen 1985)',
+  'effective-sample':
+    'The coverage as from a sample that would have its interval (effective sample), then the Miettinen-Nurminen score of the odds ratio (Miettinen & Nurminen 1985)',
+  'effective-sample-fraction':
+    'The coverage as from a sample that would have its interval (effective sample), then 1 minus the Miettinen-Nurminen score limits of the risk ratio (Miettinen & Nurminen 1985)',
+  'growing-coverage':
+    'The wider of two assumptions, constant risk and evenly spread cases, each from the Wilson limits of the share (Wilson 1927)',
+  'coverage-by-period': 'Score of the cases of all periods together (Farrington 1993)',
+  'as-given': 'The interval that came with the figure',
 } satisfies Record<IntervalMethod, string>;
 
 /** The name of an interval's method, with its source. */
@@ -337,6 +365,15 @@ function methodOf(reading: Reading): string {
   return methodText(reading.interval);
 }
 
-export function methodText({ method, envelope }: ReadingInterval): string {
-  return envelope ? `${sources[method]}, outermost limits over the range given` : sources[method];
+export function methodText({ method, envelope, unknownToEitherSide, designEffect }: ReadingInterval): string {
+  const over = envelope ? ', outermost limits over the range given' : '';
+  const unknown =
+    unknownToEitherSide === true
+      ? ', all unknown cases on one side, then on the other (Horowitz & Manski 2000)'
+      : '';
+  const divided =
+    designEffect === 1
+      ? ''
+      : `, counts divided by the design effect ${String(designEffect)} (Rao & Scott 1992)`;
+  return `${sources[method]}${over}${unknown}${divided}`;
 }

@@ -7,6 +7,7 @@ import { missingText } from './missing-words.ts';
 import { postsFor, shortPost } from './posts.ts';
 import { readAs, remarksText, statedText } from './read-as.ts';
 import { readingRow } from './reading-row.ts';
+import { sidesFor } from './side-by-side.ts';
 import type { Telling } from './telling.ts';
 
 /** What the answer is not. It stands last under every answer, since a figure about health, safety or law may come unannounced. */
@@ -25,6 +26,7 @@ export function tell(report: Report): Telling {
     missing: report.missing.map((id) => ({ id, text: missingText(report.question, id) })),
     rows: report.readings.map((reading) => readingRow(report, reading)),
     table: tableFor(report),
+    sides: sidesFor(report),
     avoid: avoidFor(report),
     limits: whatItIsNot,
   };

@@ -29,6 +29,17 @@ export interface ReadingRow {
   readonly method: string;
 }
 
+/** Ratios that stand beside the headline's, each under an assumption of its own. */
+export interface Side {
+  readonly topic: 'growth' | 'unknown' | 'tried' | 'sensitivity';
+  readonly title: string;
+  /** All of them in one sentence. */
+  readonly line: string;
+  /** One row each, the header first; `null` where the line says everything. */
+  readonly table: readonly (readonly string[])[] | null;
+  readonly working: string;
+}
+
 /** The answer in words. Every renderer draws from this one value, so that all of them say the same. */
 export interface Telling {
   /** Complete in itself; within 110 characters for labels of usual length. */
@@ -44,6 +55,7 @@ export interface Telling {
   readonly rows: readonly ReadingRow[];
   /** With three or more groups: one row a group, the header first. */
   readonly table: readonly (readonly string[])[] | null;
+  readonly sides: readonly Side[];
   readonly avoid: readonly Avoid[];
   readonly limits: string;
 }
