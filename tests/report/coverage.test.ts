@@ -77,6 +77,13 @@ describe('coverage from a sample', () => {
     });
   });
 
+  it('of two hidden counts, which may both be none, has no limit on either side', () => {
+    expect(readingFor('cases: a <5, b <5; coverage: a 310 of 500', 'risk-ratio').interval).toMatchObject({
+      low: 0,
+      high: null,
+    });
+  });
+
   it('tends to the answer for one coverage as the sample grows', () => {
     const large = readingFor(`${cases}no helmet 380,000,000 of 1,000,000,000`, 'risk-ratio');
     close(large.interval?.low, 1.46830884089, 5);

@@ -164,7 +164,7 @@ const capitalised = (text: string) => text.slice(0, 1).toUpperCase() + text.slic
 export const coverageChanged = ({ groups }: SharesQuestion) =>
   groups.some(({ known }) => known.kind === 'growth')
     ? 'Coverage changed while the cases were counted, so the ratio depends on when they came.'
-    : 'Coverage counts when cases arise, not when reported.';
+    : 'The coverage when cases arose counts, not when reported.';
 
 /** "Of all 87 cases, 12 have no known group." */
 export function unknownCaution(question: SharesQuestion): string {
