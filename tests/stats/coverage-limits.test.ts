@@ -479,7 +479,7 @@ describe('coverages that cannot be', () => {
     [
       'a growth from 1 to 1',
       'coverage-out-of-range',
-      () => ratioUnderConstantRisk(growthOf([8, 67], [1, 1]), 0.95),
+      () => ratioUnderEvenCases(growthOf([8, 67], [1, 1]), 0.95),
     ],
     [
       'a growth beyond 1',
