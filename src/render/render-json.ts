@@ -30,6 +30,7 @@ export function renderJson(line: string, report: Report): string {
     groups: groupsOf(question),
     readings: words.rows.map(({ reading, formula }) => readingOf(question, reading, formula)),
     headline: report.headline,
+    couldShow: report.couldShow ?? null,
     answer: words.headline,
     stated: report.stated.map(({ group, stated, computed, agrees }) => ({
       text: stated.text,
@@ -181,11 +182,13 @@ function readingOf(question: Question, reading: Reading, formula: string) {
     exactBeside,
     layer,
     test,
+    rest,
+    atOnce,
   } = reading;
   return {
     id,
     of: plainLabel(question, of),
-    against: against === null ? null : plainLabel(question, against),
+    against: rest ? 'the rest' : against === null ? null : plainLabel(question, against),
     estimate,
     ...(unbounded ? { unbounded } : {}),
     interval:
@@ -200,6 +203,7 @@ function readingOf(question: Question, reading: Reading, formula: string) {
     ...(exactBeside === null ? {} : { exact: { low: exactBeside.low, high: exactBeside.high } }),
     ...(layer === null || question.kind !== 'strata' ? {} : { layer: layerName(question, layer) }),
     ...(test === null ? {} : { statistic: test.statistic, test: `${test.name}, ${test.degrees} df` }),
+    ...(atOnce === null ? {} : { atOnce }),
     working: formula,
   };
 }

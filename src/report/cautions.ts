@@ -30,6 +30,7 @@ export const cautionIds = [
   'shares-do-not-add-up',
   'picked-comparison',
   'few-cases',
+  'could-have-shown',
   'small-risk',
   'odds-ratio-far',
   'coverage-as-given',
@@ -54,6 +55,11 @@ export function cautionsFor(question: Question, readings: readonly Reading[]): r
 /** What the clauses of any question call for. */
 function always({ clauses }: Question): readonly CautionId[] {
   return clauses.everyone ? ['whole-register'] : [];
+}
+
+/** A list of cautions with one more, which takes its place by importance. */
+export function withCaution(found: readonly CautionId[], id: CautionId): readonly CautionId[] {
+  return cautionIds.filter((each) => each === id || found.includes(each)).slice(0, mostCautions);
 }
 
 function applying(question: Question, readings: readonly Reading[]): readonly CautionId[] {

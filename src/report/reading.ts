@@ -30,6 +30,7 @@ export type ReadingId =
   | 'pooled-rate-difference'
   | 'standardised-risk-ratio'
   | 'homogeneity'
+  | 'overall-difference'
   | 'count-ratio'
   | 'percentage-ratio'
   | 'percentage-difference'
@@ -116,6 +117,10 @@ export interface Reading {
   readonly exactBeside: Interval | null;
   /** Index of the layer that it is about; `null` where it is about no single one. */
   readonly layer: number | null;
+  /** It is compared with all the other groups together, and `against` names none. */
+  readonly rest: boolean;
+  /** The wider limits that hold for several pairs at once, with how many pairs there are. */
+  readonly atOnce: (Interval & { readonly pairs: number }) | null;
   /** The test behind a p value, which is then the estimate. */
   readonly test: { readonly name: string; readonly statistic: number; readonly degrees: number } | null;
 }
@@ -136,6 +141,8 @@ export function reading(parts: Pick<Reading, 'id' | 'of' | 'estimate'> & Partial
     atLimit: parts.atLimit ?? null,
     exactBeside: parts.exactBeside ?? null,
     layer: parts.layer ?? null,
+    rest: parts.rest ?? false,
+    atOnce: parts.atOnce ?? null,
     test: parts.test ?? null,
   };
 }

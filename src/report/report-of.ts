@@ -1,14 +1,29 @@
 import type { Question } from '../../grammar/question.ts';
 import { bareCountsReport } from './bare-counts-report.ts';
+import { withCaution } from './cautions.ts';
+import { couldShow } from './could-show.ts';
 import { countsReport } from './counts-report.ts';
-import type { Report } from './report.ts';
+import { optionsOf } from './options.ts';
 import { ratesReport } from './rates-report.ts';
+import type { Reading } from './reading.ts';
+import { readingsOf } from './report.ts';
+import type { Report } from './report.ts';
+import { levelForAll, severalGroups } from './several-groups.ts';
 import { sharesReport } from './shares-report.ts';
 import { statedReport } from './stated-report.ts';
 import { strataReport } from './strata-report.ts';
 
 /** Works out the report of a question. */
 export function reportOf(question: Question): Report {
+  const report = reportOfKind(question);
+  const { overall, againstRest } = severalGroups(question, optionsOf(question.clauses));
+  const seen = couldShow(report, readingsOf(report, report.headline)[0]);
+  const readings = overall === null ? report.readings : [overall, ...atOnce(report)];
+  const cautions = seen === null ? report.cautions : withCaution(report.cautions, 'could-have-shown');
+  return { ...report, readings, cautions, againstRest, couldShow: seen };
+}
+
+function reportOfKind(question: Question): Report {
   switch (question.kind) {
     case 'counts':
       return countsReport(question);
@@ -23,4 +38,21 @@ export function reportOf(question: Question): Report {
     case 'bare-counts':
       return bareCountsReport(question);
   }
+}
+
+/** The ratios of several pairs with a second interval each, that holds for all the pairs at once. */
+function atOnce(report: Report): readonly Reading[] {
+  const { question, headline } = report;
+  const pairs = readingsOf(report, headline).length;
+  const value = levelForAll(report.level, pairs);
+  if (value === null) return report.readings;
+  const wider = reportOfKind({
+    ...question,
+    clauses: { ...question.clauses, level: { value, text: '' } },
+  });
+  const second = readingsOf(wider, headline);
+  return report.readings.map((each) => {
+    const limits = each.id === headline ? second.find(({ of }) => of === each.of)?.interval : null;
+    return limits == null ? each : { ...each, atOnce: { low: limits.low, high: limits.high, pairs } };
+  });
 }

@@ -1,4 +1,5 @@
 import type { Quantity, Question } from '../../grammar/question.ts';
+import type { DetectableRatio } from '../stats/detectable-ratio.ts';
 import type { CautionId } from './cautions.ts';
 import type { MissingId } from './missing.ts';
 import type { RatioVariants } from './ratio-variants.ts';
@@ -17,11 +18,21 @@ export interface StatedBeside {
 /** What the two groups show about each other. `none-shown`: the interval includes no difference. */
 export type Direction = 'higher' | 'lower' | 'same' | 'none-shown' | 'undefined';
 
+/** What figures of this size could have shown: asked where they do not show a difference. */
+export interface CouldShow extends DetectableRatio {
+  /** How many times as many cases it would take to show a doubling as often; `null` where no doubling is possible. */
+  readonly growthForDoubling: number | null;
+}
+
 /** Everything that can fairly be said about a question, in numbers and ids; no words. */
 export interface Report {
   readonly question: Question;
   readonly level: number;
   readonly readings: readonly Reading[];
+  /** Each of three or more groups against all the others together. */
+  readonly againstRest?: readonly Reading[];
+  /** What figures of this size could have shown, where they show no difference. */
+  readonly couldShow?: CouldShow | null;
   /** The reading that answers "per person". */
   readonly headline: ReadingId;
   readonly stated: readonly StatedBeside[];

@@ -27,6 +27,7 @@ import { isRange } from './corners.ts';
 import { ratioFollowers, relativeChange } from './ratio-followers.ts';
 import { ratePairReadings } from './rates-readings.ts';
 import { reading } from './reading.ts';
+import { sumOf } from './sum-of.ts';
 import { shareRatioReadings } from './shares-readings.ts';
 import type { IntervalMethod, NoInterval, Reading, ReadingId } from './reading.ts';
 
@@ -308,17 +309,6 @@ function ratioWithin(question: Layer['question'], { of, against }: Place, option
   }
 }
 
-/** The sum over all layers, with what the ranges of its parts allow. */
-function summed(layers: readonly Layer[], pick: (layer: Layer) => Quantity | null | undefined): Quantity {
-  const parts = layers.map(pick).filter((quantity) => quantity != null);
-  const sum = (end: 'value' | 'low' | 'high') => parts.reduce((all, quantity) => all + quantity[end], 0);
-  const precisions = parts.map(({ precision }) => precision);
-  return {
-    text: String(sum('value')),
-    value: sum('value'),
-    low: sum('low'),
-    high: sum('high'),
-    precision: precisions.includes('range') ? 'range' : precisions.includes('rounded') ? 'rounded' : 'exact',
-    span: parts[0]?.span ?? { from: 0, to: 0 },
-  };
-}
+/** The sum over all layers. */
+const summed = (layers: readonly Layer[], pick: (layer: Layer) => Quantity | null | undefined): Quantity =>
+  sumOf(layers.map(pick).filter((quantity) => quantity != null));

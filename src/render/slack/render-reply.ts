@@ -5,6 +5,7 @@ import type { Report } from '../../report/report.ts';
 import { postLine, shortLine, sideWorking, workingLine } from '../render-text.ts';
 import { tell } from '../words/tell.ts';
 import type { Telling } from '../words/telling.ts';
+import { restColumn } from '../words/group-table.ts';
 import { lackingText } from '../words/missing-words.ts';
 import type { CheckContext, PartBehind, SlackMessage } from './message.ts';
 import { bold, box, buttons, escape, list, paragraph, person, plain, quotation, table } from './rich-text.ts';
@@ -74,8 +75,12 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
 const tableLength = 330;
 
 function tableShown({ table: rows }: Telling): Telling['table'] {
-  return rows !== null && rows.flat().join('').length <= tableLength ? rows : null;
+  if (rows === null) return null;
+  // The last column of a wide table stands with the readings.
+  const narrow = rows.map((row) => (rows[0]?.at(-1) === restColumn ? row.slice(0, -1) : row));
+  return narrow.flat().join('').length <= tableLength ? narrow : null;
 }
+
 /**
  * Whether the first sentence to post stands in the answer. Three or more groups have a table instead, and a sentence that takes
  * something for granted needs the others beside it: those stand with the readings.

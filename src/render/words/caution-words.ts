@@ -10,7 +10,7 @@ import {
   ofKnownGroup,
 } from './coverage-words.ts';
 import { cases } from './labels.ts';
-import { fixed, percent } from './numbers.ts';
+import { amount, fixed, percent, probability, ratio } from './numbers.ts';
 
 interface CautionEntry {
   /** Where the advice comes from; `common practice` for a fact of the trade. */
@@ -82,12 +82,15 @@ export const cautionCatalogue = {
   },
   'picked-comparison': {
     source: 'Agresti et al. 2008, Statistics in Medicine 27:2870',
-    text: () =>
-      'With several groups one pair often looks different by chance: do not pick one after looking.',
+    text: pickedComparison,
   },
   'few-cases': {
     source: 'calibration of the intervals, see tests; common practice for small counts of people',
     text: fewCases,
+  },
+  'could-have-shown': {
+    source: 'Fleiss, Levin & Paik 2003, Statistical Methods for Rates and Proportions, ch. 4',
+    text: couldHaveShown,
   },
   'small-risk': { source: 'Cochrane Handbook, chapter 15', text: smallRisk },
   'odds-ratio-far': {
@@ -160,6 +163,25 @@ function casesOf(question: Question): readonly number[] {
     case 'bare-counts':
       return question.groups.map(({ cases: count }) => count.value);
   }
+}
+
+function couldHaveShown({ couldShow }: Report): string {
+  if (couldShow == null) return '';
+  const { above, below, growthForDoubling } = couldShow;
+  const least =
+    above !== null ? ratio(above, 'short') : below !== null && below > 0 ? ratio(below, 'short') : null;
+  const shown =
+    least === null
+      ? 'At this size no ratio would show four times in five'
+      : `At this size a ratio of ${least} shows four times in five`;
+  if (growthForDoubling === null || growthForDoubling <= 1) return `${shown}.`;
+  return `${shown}; a doubling takes ${amount(growthForDoubling, 'short')} times as many.`;
+}
+
+function pickedComparison({ readings }: Report): string {
+  const p = readings.find(({ id }) => id === 'overall-difference')?.estimate ?? null;
+  const all = p === null ? '' : ` (overall p ${probability(p)})`;
+  return `Of several pairs one often differs by chance${all}: do not pick one after looking.`;
 }
 
 function smallRisk({ question, readings }: Report): string {

@@ -6,6 +6,9 @@ import { percent, ratio } from './numbers.ts';
 import { quantityText, rateText } from './read-as.ts';
 import { strataTable } from './strata-words.ts';
 
+/** The heading of the last column, where the groups are everybody. */
+export const restColumn = 'Against the rest';
+
 /** With three or more groups: what was counted in each, and its ratio against the reference, the header first. */
 export function tableFor(report: Report): readonly (readonly string[])[] | null {
   const { question } = report;
@@ -13,12 +16,33 @@ export function tableFor(report: Report): readonly (readonly string[])[] | null 
   if (question.groups.length < 3) return null;
   const reference = plainLabel(question, question.reference);
   const what = question.kind === 'shares' ? 'Cases; coverage' : 'Given';
-  const header = ['Group', what, `Ratio against ${reference}`, 'Interval'];
+  const rest = report.againstRest ?? [];
+  const withRest = (of: number) => {
+    const reading = rest.find((each) => each.of === of);
+    if (reading === undefined) return [];
+    const value = reading.estimate === null ? 'no value' : ratio(reading.estimate, 'full');
+    return [
+      reading.interval === null ? value : `${value} (${limitsText(reading, reading.interval, 'full')})`,
+    ];
+  };
+  const header = [
+    'Group',
+    what,
+    `Ratio against ${reference}`,
+    'Interval',
+    ...(rest.length > 0 ? [restColumn] : []),
+  ];
   const ratios = readingsOf(report, report.headline);
   const rows = question.groups.map((_, index) => {
     const reading = ratios.find(({ of }) => of === index);
     if (reading === undefined)
-      return [plainLabel(question, index), given(report, index), '1 (compared with)', 'none'];
+      return [
+        plainLabel(question, index),
+        given(report, index),
+        '1 (compared with)',
+        'none',
+        ...withRest(index),
+      ];
     return [
       plainLabel(question, index),
       given(report, index),
@@ -28,6 +52,7 @@ export function tableFor(report: Report): readonly (readonly string[])[] | null 
           : 'no value'
         : ratio(reading.estimate, 'full'),
       reading.interval === null ? 'none' : limitsText(reading, reading.interval, 'full'),
+      ...withRest(index),
     ];
   });
   return [header, ...rows];

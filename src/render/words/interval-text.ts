@@ -87,6 +87,7 @@ function writer(reading: Reading, digits: Digits): (value: number) => string {
       return (value) => amount(value * per, digits);
     }
     case 'homogeneity':
+    case 'overall-difference':
       return probability;
     default:
       return (value) => amount(value, digits);

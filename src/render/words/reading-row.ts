@@ -25,7 +25,11 @@ export function readingRow(report: Report, reading: Reading): ReadingRow {
 
 function nameOf(question: Question, reading: Reading, fewer: boolean): string {
   const group = plainLabel(question, reading.of);
-  const against = reading.against === null ? '' : ` against ${plainLabel(question, reading.against)}`;
+  const against = reading.rest
+    ? ' against the rest'
+    : reading.against === null
+      ? ''
+      : ` against ${plainLabel(question, reading.against)}`;
   const within =
     reading.layer === null || question.kind !== 'strata' ? '' : ` in ${layerName(question, reading.layer)}`;
   switch (reading.id) {
@@ -75,6 +79,8 @@ function nameOf(question: Question, reading: Reading, fewer: boolean): string {
       return `Pooled odds ratio, ${group}${against}`;
     case 'standardised-risk-ratio':
       return `Standardised risk ratio, ${group}${against}`;
+    case 'overall-difference':
+      return 'Do the groups differ at all? (p value)';
     case 'homogeneity':
       return `Are the layers alike? (p value), ${group}${against}`;
     case 'rate-difference':
@@ -100,6 +106,7 @@ function valueOf(question: Question, reading: Reading): string {
   const estimate = `${plain}${unitOf(question, reading)}`;
   const parts = [
     intervalPart(reading),
+    atOncePart(reading),
     exactPart(reading),
     roundingPart(question, reading),
     limitPart(reading),
@@ -158,6 +165,11 @@ export function whyText(why: NoInterval): string {
   }
 }
 
+function atOncePart(reading: Reading): string | null {
+  if (reading.atOnce === null) return null;
+  return `for all ${reading.atOnce.pairs} pairs at once ${limitsText(reading, reading.atOnce, 'full')}`;
+}
+
 function exactPart(reading: Reading): string | null {
   return reading.exactBeside === null
     ? null
@@ -188,7 +200,11 @@ function formulaOf(asked: Question, reading: Reading): string {
       : (asked.layers[reading.layer]?.question ?? asked);
   const own = parts(question, reading.of);
   const other = reading.against === null ? null : parts(question, reading.against);
-  const pair = other === null ? '' : `${own.risk} / (${other.risk})`;
+  const pair = reading.rest
+    ? `${own.risk} / (all the others together)`
+    : other === null
+      ? ''
+      : `${own.risk} / (${other.risk})`;
   const special = coverageFormula(question, reading);
   if (special !== null) return special;
   switch (reading.id) {
@@ -201,6 +217,8 @@ function formulaOf(asked: Question, reading: Reading): string {
     case 'population-share':
       return own.coverage;
     case 'risk-ratio':
+      if (reading.rest && question.kind === 'shares')
+        return `${own.share} against all the others together, with ${own.coverage}`;
       return question.kind === 'shares'
         ? `${own.share} / (${other?.share ?? ''}) x ${other?.coverage ?? ''} / ${own.coverage}`
         : pair;
@@ -227,6 +245,7 @@ function formulaOf(asked: Question, reading: Reading): string {
       return 'the root t of sum(x1 - E(x1; t)), E given the margins';
     case 'standardised-risk-ratio':
       return 'sum(N p1) / sum(N p2), N both groups of the layer';
+    case 'overall-difference':
     case 'homogeneity':
       return reading.test === null
         ? ''
@@ -356,6 +375,7 @@ const sources = {
 
 /** The name of an interval's method, with its source. */
 function methodOf(reading: Reading): string {
+  if (reading.id === 'overall-difference') return 'Pearson 1900, times (N - 1)/N (Campbell 2007)';
   if (reading.id === 'homogeneity')
     return reading.test?.name === 'deviance'
       ? 'Deviance (Farrington 1993); misses most real differences'

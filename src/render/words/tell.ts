@@ -24,7 +24,7 @@ export function tell(report: Report): Telling {
     shortPost: shortPost(report),
     cautions: report.cautions.map((id) => ({ id, text: cautionText(report, id) })),
     missing: report.missing.map((id) => ({ id, text: missingText(report.question, id) })),
-    rows: report.readings.map((reading) => readingRow(report, reading)),
+    rows: [...report.readings, ...(report.againstRest ?? [])].map((reading) => readingRow(report, reading)),
     table: tableFor(report),
     sides: sidesFor(report),
     avoid: avoidFor(report),
