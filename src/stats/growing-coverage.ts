@@ -26,7 +26,7 @@ export interface RatioUnder {
  * @param level confidence level as a share, in [0.5, 0.9999]
  * @throws ArgumentError for cases or coverages out of range
  *
- * From E x1 : E x2 = R times the integrals of c and of 1 - c over time (person-time argument). Accuracy: 1e-14 relative.
+ * From E x1 : E x2 = R times the integrals of c and of 1 - c over time (person-time argument). Accuracy: 1e-13 relative.
  */
 export function ratioUnderConstantRisk(from: GrowingCoverage, level: number): RatioUnder {
   check(from);
