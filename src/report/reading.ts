@@ -75,6 +75,7 @@ export type NoInterval =
   | 'mean-over-cases' // coverage by period: the estimate is its mean over all cases
   | 'no-exact-form' // `exact` was asked for, and this reading has no exact interval of the same family
   | 'spans-none' // one extra case per K: the difference's interval includes none, so K runs through infinity
+  | 'too-large-for-exact' // layers with so many cases that exact limits would take too long
   | 'no-cases-at-all' // a standardised risk of 0 has no interval on the log scale
   | 'counts-rows-only'; // with `population` every interval comes from the counts rows
 

@@ -71,5 +71,6 @@ export function shownDirection(report: Report, ratioReading: Reading): Direction
   const odds = [...readingsOf(report, 'odds-ratio'), ...readingsOf(report, 'pooled-odds-ratio')].find(
     ({ of }) => of === ratioReading.of,
   );
-  return directionOf(odds ?? ratioReading);
+  // Without limits nothing is shown, whichever way the estimate points.
+  return odds?.interval == null ? 'none-shown' : directionOf(odds);
 }

@@ -1,5 +1,6 @@
 import type { Layer, Quantity, StrataQuestion } from '../../grammar/question.ts';
 import { rateRatioHomogeneity, riskRatioHomogeneity, shareRatioHomogeneity } from '../stats/homogeneity.ts';
+import { mostExactSums } from '../stats/convolution-tail.ts';
 import type { ChiSquaredTest } from '../stats/homogeneity.ts';
 import type { Interval, TwoGroups } from '../stats/interval.ts';
 import {
@@ -41,12 +42,17 @@ interface Pairs<T> {
   readonly hidden: boolean;
 }
 
-/** What is pooled over the layers: each measure with its interval, from one null test wherever there is one. */
-interface Measure<T> {
-  readonly id: ReadingId;
-  readonly estimate: (pairs: readonly T[]) => number | null;
+/** How a measure gets its limits; `null` where it has none, with the reason. */
+interface Limits<T> {
   readonly limits: ((pairs: readonly T[], level: number) => Interval | null) | null;
   readonly method: IntervalMethod;
+  readonly why?: NoInterval;
+}
+
+/** What is pooled over the layers: each measure with its interval, from one null test wherever there is one. */
+interface Measure<T> extends Limits<T> {
+  readonly id: ReadingId;
+  readonly estimate: (pairs: readonly T[]) => number | null;
   readonly per?: number;
 }
 
@@ -116,8 +122,9 @@ function countsReadings(layers: readonly Layer[], place: Place, options: CountsO
     pool({
       id: 'pooled-odds-ratio',
       estimate: pooledOddsRatio,
-      limits: options.exact && !pairs.hidden ? exactPooledOddsRatioInterval : pooledOddsRatioInterval,
-      method: options.exact && !pairs.hidden ? 'pooled-conditional-exact' : 'pooled-conditional-score',
+      ...(options.exact
+        ? exactly(pairs, exactPooledOddsRatioInterval, 'pooled-conditional-exact')
+        : { limits: pooledOddsRatioInterval, method: 'pooled-conditional-score' }),
     }),
     pool({
       id: 'standardised-risk-ratio',
@@ -159,17 +166,18 @@ function ratesReadings(
     options,
   );
   const pool = pooled(pairs, place, options);
-  const exact = options.exact && !pairs.hidden;
-  const limits = exact ? exactPooledRateRatioInterval : pooledRateRatioInterval;
-  const method = exact ? 'pooled-shares-exact' : 'pooled-shares-score';
-  const ratio = pool({ id: 'pooled-rate-ratio', estimate: pooledRateRatio, limits, method });
+  const { exact } = options;
+  const own: Limits<RatePair> = exact
+    ? exactly(pairs, exactPooledRateRatioInterval, 'pooled-shares-exact')
+    : { limits: pooledRateRatioInterval, method: 'pooled-shares-score' };
+  const ratio = pool({ id: 'pooled-rate-ratio', estimate: pooledRateRatio, ...own });
   return [
     ratio,
     relativeChange(ratio),
     crude({
       id: 'crude-rate-ratio',
       estimate: pooledRateRatio,
-      limits,
+      ...own,
       method: exact ? 'exact-rate-ratio' : 'rate-ratio-score',
     }),
     pool({
@@ -262,12 +270,12 @@ function pairsOf<T>(
 
 /** Pools one measure; where a count is hidden the interval is the outermost one over everything it may be. */
 function pooled<T>(pairs: Pairs<T>, place: Place, { level, designEffect }: CountsOptions) {
-  return ({ id, estimate, limits, method, per }: Measure<T>): Reading => {
+  return ({ id, estimate, limits, method, per, why: reason }: Measure<T>): Reading => {
     const value = estimate(pairs.middle);
     const lowest = limits?.(pairs.lowest, level) ?? null;
     const highest = pairs.hidden ? (limits?.(pairs.highest, level) ?? null) : lowest;
     const why: NoInterval | null =
-      limits === null ? 'no-exact-form' : lowest === null ? 'no-cases-at-all' : null;
+      limits === null ? (reason ?? 'no-exact-form') : lowest === null ? 'no-cases-at-all' : null;
     return reading({
       id,
       ...place,
@@ -281,6 +289,20 @@ function pooled<T>(pairs: Pairs<T>, place: Place, { level, designEffect }: Count
       per: per ?? null,
     });
   };
+}
+
+/** Exact limits, as long as the sum over the layers does not take too many values to go through one by one. */
+function exactly<T extends { readonly cases: number; readonly referenceCases: number }>(
+  pairs: Pairs<T>,
+  limits: (pairs: readonly T[], level: number) => Interval,
+  method: IntervalMethod,
+): Limits<T> {
+  const sums = Math.max(
+    ...[pairs.lowest, pairs.highest].map((layers) =>
+      layers.reduce((sum, { cases, referenceCases }) => sum + cases + referenceCases, 1),
+    ),
+  );
+  return sums > mostExactSums ? { limits: null, method, why: 'too-large-for-exact' } : { limits, method };
 }
 
 function alike(test: ChiSquaredTest | null, place: Place, name: 'Gart-Nam' | 'deviance'): Reading[] {

@@ -23,6 +23,7 @@ export function intervalNote(reading: Reading): string {
     case 'mean-over-cases':
     case 'spans-none':
     case 'no-cases-at-all':
+    case 'too-large-for-exact':
     case null:
       return 'no interval without counts';
   }

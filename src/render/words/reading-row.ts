@@ -156,6 +156,8 @@ export function whyText(why: NoInterval): string {
       return 'the mean over all cases';
     case 'no-exact-form':
       return 'no exact interval of this reading; leave out `exact` for the score interval';
+    case 'too-large-for-exact':
+      return 'no exact interval: too many cases to go through one by one; leave out `exact`';
     case 'no-cases-at-all':
       return 'no interval: a standardised risk is 0';
     case 'spans-none':

@@ -43,7 +43,9 @@ export function strataHeadline(report: Report, question: StrataQuestion, reading
     return `${capital(group)} had ${cases(question)} ${within} often than ${reference} in every ${layerWord(question)}, but ${together} often all together.`;
   }
   if (shownDirection(report, reading) === 'none-shown')
-    return `Within layers ${fits(reading)} fits: no difference is shown, nor that there is none.`;
+    return reading.interval === null
+      ? 'Within layers no difference is shown, nor that there is none: the ratio has no exact interval here.'
+      : `Within layers ${fits(reading)} fits: no difference is shown, nor that there is none.`;
   if (reading.estimate === null)
     return `Within layers no ratio can be given: ${reference} has no ${cases(question)}.`;
   const within = question.by === null ? 'Within layers' : `Within layers of ${question.by}`;
