@@ -35,18 +35,18 @@ export function withoutWhole(
   if (!exact) return refused(diagnosis('whole-not-exact', whole.span, [whole.label ?? '']));
   const cases = parts.reduce((left, part) => left - part.cases.value, whole.cases.value);
   const total = parts.reduce((left, part) => left - part.total.value, whole.total.value);
-  const text = `${whole.label ?? ''}: ${whole.cases.text} of ${whole.total.text}`;
+  const text = `${whole.cases.text} of ${whole.total.text}`;
   if (parts.length > 1 && cases === 0 && total === 0) {
     const known = labels.filter((_, index) => index !== at);
     const reference = referenceOf(known, setting);
     return reference.ok
       ? settled({ groups: parts, reference: reference.value }, [
-          { id: 'total-left-out', text, readAs: '', span: whole.span },
+          { id: 'total-left-out', text: `${whole.label ?? ''}: ${text}`, readAs: '', span: whole.span },
         ])
       : reference;
   }
   if (cases < 0 || total <= 0 || cases > total)
-    return refused(diagnosis('whole-too-small', whole.span, [text, sumOf(parts)]));
+    return refused(diagnosis('whole-too-small', whole.span, [`${whole.label ?? ''}: ${text}`, sumOf(parts)]));
   const others: CountsGroup = {
     label: rest,
     cases: exactCount(cases, grouped(cases), whole.span),

@@ -1,4 +1,5 @@
 import type { Quantity } from '../../grammar/question.ts';
+import { dividedByDesignEffect } from '../stats/design-effect.ts';
 import type { Interval } from '../stats/interval.ts';
 import { envelopeOverCorners, isRange } from './corners.ts';
 import type { IntervalMethod, Reading, ReadingInterval } from './reading.ts';
@@ -20,8 +21,7 @@ export function intervalOver(
   limits: (values: readonly number[]) => Interval,
   designEffect = 1,
 ): ReadingInterval {
-  const divided = (values: readonly number[]) =>
-    limits(designEffect === 1 ? values : values.map((value) => value / designEffect));
+  const divided = (values: readonly number[]) => limits(dividedByDesignEffect(values, designEffect));
   const envelope = quantities.some(isRange);
   const { low, high } = envelope
     ? envelopeOverCorners(quantities, divided)

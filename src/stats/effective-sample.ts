@@ -19,19 +19,3 @@ export function effectiveSample(share: number, low: number, high: number, level:
   }
   return share * (1 - share) * ((2 * z) / (high - low)) ** 2;
 }
-
-/**
- * The same for a sample of n out of a population of M known people: n(M - 1)/(M - n), by the finite population correction.
- *
- * @returns `null` where everybody was asked: there is no sampling error left
- * @throws ArgumentError unless 0 < n <= M
- */
-export function effectiveSampleOfFinite(sampled: number, population: number): number | null {
-  if (!(sampled > 0 && sampled <= population && population < Infinity)) {
-    throw new ArgumentError(
-      'sample-out-of-range',
-      `a sample must be above 0 and at most ${population}, not ${sampled}`,
-    );
-  }
-  return sampled === population ? null : (sampled * (population - 1)) / (population - sampled);
-}

@@ -109,7 +109,7 @@ function remarkText({ id, text, readAs: value }: ReadingRemark): string {
     case 'count-from-percentage':
       return `${text} was read as ${value}.`;
     case 'whole-taken-apart':
-      return `${text} contains the others; compared with the rest, ${value}.`;
+      return `The whole, ${text}, contains the others; the rest is ${value}.`;
     case 'total-left-out':
       return `${text} is the sum of the others and was left out.`;
     case 'total-row-left-out':
