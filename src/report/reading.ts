@@ -29,6 +29,7 @@ export type ReadingId =
   | 'pooled-rate-ratio'
   | 'pooled-rate-difference'
   | 'standardised-risk-ratio'
+  | 'standardised-rate'
   | 'homogeneity'
   | 'overall-difference'
   | 'count-ratio'
@@ -56,6 +57,7 @@ export type IntervalMethod =
   | 'pooled-shares-score'
   | 'pooled-shares-exact'
   | 'log-delta'
+  | 'fay-feuer'
   | 'sampled-coverage' // coverage from a sample: the score interval of that odds ratio
   | 'sampled-coverage-fraction' // the same as a share of all cases: 1 minus a risk ratio
   | 'effective-sample' // coverage with an interval of its own, as from a sample that would have given it

@@ -21,6 +21,7 @@ import {
 } from '../stats/pooled-share-ratio.ts';
 import type { RatePair } from '../stats/rate-ratio.ts';
 import type { SharePair } from '../stats/share-ratio.ts';
+import { fayFeuerInterval, standardisedRate } from '../stats/standardised-rate.ts';
 import { standardisedRisks, standardisedRiskRatioInterval } from '../stats/standardised-risk-ratio.ts';
 import type { CountsOptions } from './counts-readings.ts';
 import { pairReadings } from './counts-readings.ts';
@@ -187,10 +188,49 @@ function ratesReadings(
       method: 'pooled-score',
       per,
     }),
+    ...[place.of, place.against].map((of) => standardised(layers, of, per, options)),
     ...alike(rateRatioHomogeneity(pairs.tested), place, 'deviance'),
     ...ratioFollowers(ratio),
     ...inLayers(layers, place, options),
   ];
+}
+
+/** A group's rate as it would be if its layers were as large as those of all groups together. */
+function standardised(
+  layers: readonly Layer[],
+  of: number,
+  per: number,
+  { level, designEffect }: CountsOptions,
+): Reading {
+  const weighted = layers.flatMap(({ question }) => {
+    if (question.kind !== 'rates') return [];
+    const weight = question.groups.reduce((sum, { exposure }) => sum + exposure.value, 0);
+    const group = question.groups[of];
+    return group === undefined ? [] : [{ cases: group.cases, exposure: group.exposure.value, weight }];
+  });
+  const at = (end: 'low' | 'high' | 'value', divisor: number) =>
+    weighted.map(({ cases, exposure, weight }) => ({
+      cases: (isRange(cases) ? cases[end] : cases.value) / divisor,
+      exposure: exposure / divisor,
+      weight,
+    }));
+  const limits = [at('low', designEffect), at('high', designEffect)].map((ends) =>
+    fayFeuerInterval(ends, level),
+  );
+  return reading({
+    id: 'standardised-rate',
+    of,
+    estimate: standardisedRate(at('value', 1)),
+    interval: {
+      low: limits[0]?.low ?? null,
+      high: limits[1]?.high ?? null,
+      level,
+      method: 'fay-feuer',
+      envelope: weighted.some(({ cases }) => isRange(cases)),
+      designEffect,
+    },
+    per,
+  });
 }
 
 const total = (pairs: readonly RatePair[]): RatePair =>

@@ -128,6 +128,8 @@ describe.each(Object.entries(scenarios))('%s: every renderer tells the same', (_
           if (element.type !== 'button') throw new Error('only buttons are expected');
           expect(element.text.text.length).toBeLessThanOrEqual(75);
           expect(element.accessibility_label?.length ?? 0).toBeLessThanOrEqual(75);
+          // Somebody who speaks to the screen says the words that stand on the button (WCAG 2.5.3).
+          expect(element.accessibility_label).toContain(element.text.text);
         }
       }
     }

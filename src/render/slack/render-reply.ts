@@ -15,11 +15,11 @@ import { quoteOf } from './render-root.ts';
 const textLength = 3_900;
 
 const buttonWords = {
-  readings: { text: 'All readings', spoken: 'Show all readings of this figure' },
-  working: { text: 'Working', spoken: 'Show how each reading was worked out' },
-  questions: { text: 'Questions to send', spoken: 'Show questions to send to whoever gave the figure' },
-  avoid: { text: 'Better not posted', spoken: 'Show what is better not posted, and why' },
-  other: { text: 'Not what I meant', spoken: 'Show how to say the figure differently' },
+  readings: { text: 'All readings', spoken: 'All readings of this figure' },
+  working: { text: 'Working', spoken: 'Working: how each reading was worked out' },
+  questions: { text: 'Questions to send', spoken: 'Questions to send to whoever gave the figure' },
+  avoid: { text: 'Better not posted', spoken: 'Better not posted: what, and why' },
+  other: { text: 'Not what I meant', spoken: 'Not what I meant: say the figure differently' },
 } satisfies Record<PartBehind, { text: string; spoken: string }>;
 
 /** The full answer, for the thread: at most 750 characters before the buttons for figures of usual length. */

@@ -172,8 +172,8 @@ function couldHaveShown({ couldShow }: Report): string {
     above !== null ? ratio(above, 'short') : below !== null && below > 0 ? ratio(below, 'short') : null;
   const shown =
     least === null
-      ? 'At this size no ratio would show in four of five'
-      : `At this size ${least} times would show in four of five`;
+      ? 'At this size no ratio would show four times in five'
+      : `At this size a ratio of ${least} would show four times in five`;
   if (growthForDoubling === null || growthForDoubling <= 1) return `${shown}.`;
   return `${shown}; a doubling takes ${amount(growthForDoubling, 'short')} times as many.`;
 }

@@ -81,6 +81,7 @@ function writer(reading: Reading, digits: Digits): (value: number) => string {
     case 'standardised-risk-ratio':
       return (value) => ratio(value, digits);
     case 'rate':
+    case 'standardised-rate':
     case 'rate-difference':
     case 'pooled-rate-difference': {
       const per = reading.per ?? 1;

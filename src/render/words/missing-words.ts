@@ -54,7 +54,7 @@ export function lackingText({ question, missing }: Report): string | null {
   const [first] = missing;
   switch (first) {
     case 'group-sizes':
-      return `No risk without the number of ${question.unit ?? 'people in all'}.`;
+      return `No risk without the number of ${question.unit ?? 'people'}.`;
     case 'case-number':
       return `No interval without the number of ${casesAsTyped(question)}.`;
     case 'unknown-groups':

@@ -77,6 +77,8 @@ function nameOf(question: Question, reading: Reading, fewer: boolean): string {
       return `Pooled rate difference, ${group}${against}`;
     case 'pooled-odds-ratio':
       return `Pooled odds ratio, ${group}${against}`;
+    case 'standardised-rate':
+      return `Standardised rate, ${group}`;
     case 'standardised-risk-ratio':
       return `Standardised risk ratio, ${group}${against}`;
     case 'overall-difference':
@@ -116,7 +118,8 @@ function valueOf(question: Question, reading: Reading): string {
 
 /** What a rate, and one case for every K of exposure, are counted in. */
 function unitOf(question: Question, { id, per }: Reading): string {
-  if (id === 'pooled-rate-difference') return ` ${perExposure(question, per ?? 1)}`;
+  if (id === 'pooled-rate-difference' || id === 'standardised-rate')
+    return ` ${perExposure(question, per ?? 1)}`;
   if (question.kind !== 'rates') return '';
   if (id === 'rate' || id === 'rate-difference') return ` ${perExposure(question, per ?? 1)}`;
   return id === 'one-extra-per' && question.unit !== null ? ` ${question.unit}` : '';
@@ -245,6 +248,8 @@ function formulaOf(asked: Question, reading: Reading): string {
       return 'sum(x1 T2/T - x2 T1/T) / sum(T1 T2/T)';
     case 'pooled-odds-ratio':
       return 'the root t of sum(x1 - E(x1; t)), E given the margins';
+    case 'standardised-rate':
+      return 'sum(w x/T) / sum(w), w the exposure of all groups in the layer';
     case 'standardised-risk-ratio':
       return 'sum(N p1) / sum(N p2), N both groups of the layer';
     case 'overall-difference':
@@ -360,6 +365,7 @@ const sources = {
   'pooled-conditional-exact': 'exact conditional (Gart 1970)',
   'pooled-shares-score': 'score (Farrington 1993)',
   'pooled-shares-exact': 'exact tails of the sum of binomial counts (Farrington 1993)',
+  'fay-feuer': 'gamma limits (Fay & Feuer 1997)',
   'log-delta': 'delta method on the log scale, weights as known',
   'sampled-coverage':
     'Miettinen-Nurminen score of the odds ratio, cases against the sample (Miettinen & Nurminen 1985)',
