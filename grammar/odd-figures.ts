@@ -19,7 +19,6 @@ interface Odd {
   readonly suggestions: readonly string[];
 }
 
-const alarmWord = /^(?:sensitivity|specificity|prevalence|sens|spec|prev|tp|fp|tn|fn|ppv|npv|accurate)$/i;
 const measured = /^\d[\d.,]*(?:ms|s|sec|kg|g|km|m|cm|mm|mb|gb|px|ml|l|\u00b0c|db)$/i;
 const unitOfMeasure =
   /^(?:ms|sec|seconds?|kg|km|cm|mm|mb|gb|px|ml|litres?|metres?|degrees?|days?|hours?|minutes?)$/i;
@@ -80,9 +79,6 @@ function oddAt(tokens: Tokens, at: number, folded: Folded): Odd | null {
   if (is(at, token.Of) && /^(?:them|which|whom|these|those)$/i.test(image(at + 1)))
     return totalFirst(tokens, at, odd);
   if (is(at, token.Word)) {
-    if (/^caught$/i.test(each.image) && hasNumber(tokens, at + 1)) {
-      return odd('not-yet-alarm', at + 2, [], ['old filter: 18 of 1,204 vs new filter: 9 of 2,377']);
-    }
     if (
       /^a$/i.test(each.image) &&
       is(at - 1, token.NumberToken) &&
@@ -112,13 +108,6 @@ function oddAt(tokens: Tokens, at: number, folded: Folded): Odd | null {
     }
     if (measured.test(each.image) && !is(at - 1, token.Slash)) {
       return odd('measurement', at + 1, [each.image], ['slower than 300 ms: 31 of 91,000 vs ... of ...']);
-    }
-    if (
-      alarmWord.test(each.image) &&
-      (hasNumber(tokens, at + 1) || is(at - 1, token.Percent)) &&
-      !tokens.some(({ tokenType }) => tokenType === token.Of)
-    ) {
-      return odd('not-yet-alarm', at + 1, [], ['old filter: 18 of 1,204 vs new filter: 9 of 2,377']);
     }
     if (/^(?:up|down|rose|fell)$/i.test(each.image) && is(at + 1, token.From))
       return odd('not-yet-change', at + 2, [], [changeExample]);

@@ -27,7 +27,7 @@ export class LineParser extends CstParser {
     });
   });
 
-  /** part: Clause | [ CasesHead | CoverageHead ] list */
+  /** part: Clause | [ CasesHead | CoverageHead | AlarmHead ] list */
   readonly part = this.RULE('part', () => {
     this.OR([
       { ALT: () => this.CONSUME(tags.ClauseTag) },
@@ -41,6 +41,12 @@ export class LineParser extends CstParser {
         ALT: () => {
           this.CONSUME(tags.CoverageHeadTag);
           this.SUBRULE2(this.list);
+        },
+      },
+      {
+        ALT: () => {
+          this.CONSUME(tags.AlarmHeadTag);
+          this.SUBRULE4(this.list);
         },
       },
       { ALT: () => this.SUBRULE3(this.list) },

@@ -1,4 +1,5 @@
 import { grouped } from './numbers.ts';
+import { alarmFigures } from './print-alarm.ts';
 import type { Question, Quantity } from './question.ts';
 
 /** The canonical spelling of a question. Reading it again gives the same question. */
@@ -27,6 +28,8 @@ function figurePart(question: Question): string {
       );
       return groups.join(' vs ');
     }
+    case 'alarm':
+      return `${question.name === null ? 'alarm: ' : named(question.name)}${alarmFigures(question)}`;
     case 'bare-counts':
       return question.groups
         .map(

@@ -8,12 +8,13 @@ import { joinSpacedNumbers } from './odd-figures.ts';
 import { parseTags } from './parser.ts';
 import type { Diagnosis, HelpTopic, LineLimits, LineReading } from './question.ts';
 import { settleLine } from './settle.ts';
+import { tagAlarm } from './tag-alarm.ts';
 import { tagLine } from './tag.ts';
 import * as tags from './tags.ts';
 import { fineTokensOf } from './tokens.ts';
 import { partsOfTree } from './tree.ts';
 
-const topics: readonly HelpTopic[] = ['overview', 'counts', 'shares', 'stated', 'bare-counts'];
+const topics: readonly HelpTopic[] = ['overview', 'counts', 'shares', 'stated', 'bare-counts', 'alarm'];
 
 /** Reads one typed line. Pure, linear in the length of the line, and never throws whatever the line holds. */
 export function readLine(line: string, limits: LineLimits): LineReading {
@@ -29,7 +30,8 @@ export function readLine(line: string, limits: LineLimits): LineReading {
   const { tokens: fine, remarks } = withoutAbout(joinSpacedNumbers(fineTokensOf(folded.text)), folded);
   if (/^[\s?]*$/.test(folded.text))
     return refusal(diagnosis('empty-line', { from: 0, to: line.length }, [], linesToTry));
-  const { tags: tagged, fault, hasFigure } = tagLine(fine, folded);
+  const alarm = tagAlarm(fine, folded);
+  const { tags: tagged, fault, hasFigure } = alarm ?? tagLine(fine, folded);
   if (fault !== null) return refusal(fault);
   if (
     !hasFigure &&
@@ -43,7 +45,7 @@ export function readLine(line: string, limits: LineLimits): LineReading {
   const question = settleLine(
     partsOfTree(tree, folded),
     line,
-    [...folded.remarks, ...remarks],
+    [...folded.remarks, ...remarks, ...(alarm?.remarks ?? [])],
     limits.groups,
   );
   return question.ok ? { kind: 'question', question: question.value } : refusal(question.fault);

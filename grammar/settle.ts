@@ -3,6 +3,7 @@ import { printCanonical } from './print-canonical.ts';
 import { refused } from './quantities.ts';
 import type { Settled } from './quantities.ts';
 import type { Question, ReadingRemark } from './question.ts';
+import { settleAlarm } from './settle-alarm.ts';
 import { settleBareCounts, settleCounts, settleStated } from './settle-groups.ts';
 import { settleClauses } from './settle-clauses.ts';
 import type { Setting } from './setting.ts';
@@ -35,6 +36,8 @@ export function settleLine(
 }
 
 function settleItems(lists: readonly List[], items: readonly Item[], setting: Setting): Settled<Question> {
+  const alarm = lists.find(({ head }) => head === 'alarm');
+  if (alarm !== undefined) return settleAlarm(items, alarm.name, setting);
   const shares = sharesParts(lists, items, setting);
   if (shares !== null) return settleShares(shares, setting);
   const everyCount = items.every(({ figure }) => figure.kind === 'count');

@@ -22,6 +22,7 @@ export const SeparatorTag = tag('Separator', 'what stands between two groups');
 export const BreakTag = tag('Break', 'a semicolon, a bar or a new line');
 export const CasesHeadTag = tag('CasesHead', '"cases:"');
 export const CoverageHeadTag = tag('CoverageHead', '"coverage:"');
+export const AlarmHeadTag = tag('AlarmHead', '"alarm:", or the words of an alarm');
 export const ClauseTag = tag('Clause', 'a clause');
 
 export const tagTypes: readonly TokenType[] = [
@@ -39,6 +40,7 @@ export const tagTypes: readonly TokenType[] = [
   BreakTag,
   CasesHeadTag,
   CoverageHeadTag,
+  AlarmHeadTag,
   ClauseTag,
 ];
 

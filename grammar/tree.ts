@@ -42,7 +42,9 @@ export interface Item {
 export type TreePart =
   | {
       readonly kind: 'list';
-      readonly head: 'cases' | 'coverage' | null;
+      readonly head: 'cases' | 'coverage' | 'alarm' | null;
+      /** What the alarm is called, where the line names it. */
+      readonly name: Words | null;
       readonly items: readonly Item[];
       readonly span: Span;
     }
@@ -94,7 +96,10 @@ function partOf(node: CstNode, folded: Folded): TreePart {
         ? 'cases'
         : node.children['CoverageHead'] !== undefined
           ? 'coverage'
-          : null,
+          : node.children['AlarmHead'] !== undefined
+            ? 'alarm'
+            : null,
+    name: wordsOf(tokens(node, 'AlarmHead')[0], folded),
     items,
     span: joined([...heads.map((head) => spanOf(head, folded)), ...items.map(({ span }) => span)]),
   };

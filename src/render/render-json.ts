@@ -2,6 +2,8 @@ import { printCanonical } from '../../grammar/print-canonical.ts';
 import type { Diagnosis, Question } from '../../grammar/question.ts';
 import type { Reading } from '../report/reading.ts';
 import type { Report } from '../report/report.ts';
+import { statedPlaces } from '../report/alarm-report.ts';
+import { alarmParts } from './alarm-json.ts';
 import { whyText } from './words/reading-row.ts';
 import { plainLabel } from './words/labels.ts';
 import { tell } from './words/tell.ts';
@@ -20,6 +22,7 @@ export function renderJson(line: string, report: Report): string {
       kind: question.kind,
       canonical: printCanonical(question),
       unit: question.unit,
+      ...(question.kind === 'alarm' ? alarmParts(question) : {}),
       clauses: clausesOf(question),
     },
     groups: groupsOf(question),
@@ -29,7 +32,7 @@ export function renderJson(line: string, report: Report): string {
     stated: report.stated.map(({ group, stated, computed, agrees }) => ({
       text: stated.text,
       value: stated.value,
-      of: plainLabel(question, group),
+      of: question.kind === 'alarm' ? statedPlaces[group] : plainLabel(question, group),
       computed,
       agrees,
       remarks: [],
@@ -82,6 +85,8 @@ function groupsOf(question: Question) {
         label: plainLabel(question, index),
         share: share.value,
       }));
+    case 'alarm':
+      return [];
     case 'bare-counts':
       return question.groups.map(({ cases }, index) => ({
         label: plainLabel(question, index),

@@ -1,4 +1,5 @@
 import type { CountsQuestion, Question, SharesQuestion } from '../../grammar/question.ts';
+import { alarmCautions } from './alarm-cautions.ts';
 import type { Reading } from './reading.ts';
 
 /**
@@ -9,6 +10,7 @@ export const cautionIds = [
   'rows-chosen-by-outcome',
   'totals-missing',
   'base-rate',
+  'prevalence-decides',
   'all-cases-in-one-group',
   'no-cases',
   'suppressed-cell',
@@ -18,6 +20,7 @@ export const cautionIds = [
   'small-risk',
   'odds-ratio-far',
   'coverage-as-given',
+  'prevalence-as-given',
   'as-stated',
   'one-group',
   'groups-may-differ',
@@ -41,6 +44,8 @@ function applying(question: Question, readings: readonly Reading[]): readonly Ca
       return sharesCautions(question);
     case 'stated':
       return ['as-stated', 'groups-may-differ', ...smallRisk(readings)];
+    case 'alarm':
+      return alarmCautions(question);
     case 'bare-counts':
       return ['totals-missing', ...(question.groups.length > 2 ? (['picked-comparison'] as const) : [])];
   }

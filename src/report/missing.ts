@@ -1,4 +1,4 @@
-import type { Question } from '../../grammar/question.ts';
+import type { AlarmQuestion, Question } from '../../grammar/question.ts';
 
 /** What the line does not say and the source could: each becomes a question that can be forwarded. */
 export type MissingId =
@@ -10,6 +10,8 @@ export type MissingId =
   | 'everybody' // rows chosen by outcome: how many in all, ill and well, in each group
   | 'same-people' // shares: do cases and coverage belong to the same people, place and time
   | 'same-time' // counts: were the groups watched equally long, and could one be counted twice
+  | 'prevalence-source' // alarm: which place and time the prevalence belongs to
+  | 'taken-as-they-come' // alarm: four counts, and whether the sample was chosen by outcome
   | 'who-is-counted';
 
 /** What to ask whoever gave the figure, most useful first. */
@@ -28,7 +30,17 @@ export function missingFor(question: Question): readonly MissingId[] {
       ];
     case 'stated':
       return ['counts-behind', 'same-time', ...who];
+    case 'alarm':
+      return [...missingForAlarm(question), ...who];
     case 'bare-counts':
       return ['totals', 'same-time', ...who];
   }
+}
+
+function missingForAlarm({ sensitivity, specificity, prevalence }: AlarmQuestion): readonly MissingId[] {
+  const stated = [sensitivity, specificity].some(({ given }) => given.kind === 'share');
+  return [
+    ...(stated ? (['counts-behind'] as const) : []),
+    prevalence === null ? 'taken-as-they-come' : 'prevalence-source',
+  ];
 }

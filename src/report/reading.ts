@@ -21,7 +21,18 @@ export type ReadingId =
   | 'count-ratio'
   | 'percentage-ratio'
   | 'percentage-difference'
-  | 'hidden-cause-strength';
+  | 'hidden-cause-strength'
+  | AlarmReadingId;
+
+/** The readings of an alarm. */
+export type AlarmReadingId =
+  | 'sensitivity'
+  | 'specificity'
+  | 'prevalence'
+  | 'positive-predictive-value'
+  | 'negative-predictive-value'
+  | 'likelihood-ratio-positive'
+  | 'likelihood-ratio-negative';
 
 /** How an interval was worked out. An `envelope` is the outermost limits over every value that a range or a suppressed cell allows. */
 export type IntervalMethod =
@@ -30,7 +41,9 @@ export type IntervalMethod =
   | 'miettinen-nurminen'
   | 'conditional-exact'
   | 'wilson-share-odds'
-  | 'clopper-pearson-share-odds';
+  | 'clopper-pearson-share-odds'
+  | 'miettinen-nurminen-prevalence-odds'
+  | 'mover-prevalence-odds';
 
 /** Why a reading has no interval. */
 export type NoInterval =

@@ -1,4 +1,5 @@
 import type { Question } from '../../grammar/question.ts';
+import { alarmReport } from './alarm-report.ts';
 import { bareCountsReport } from './bare-counts-report.ts';
 import { countsReport } from './counts-report.ts';
 import type { Report } from './report.ts';
@@ -16,5 +17,7 @@ export function reportOf(question: Question): Report {
       return statedReport(question);
     case 'bare-counts':
       return bareCountsReport(question);
+    case 'alarm':
+      return alarmReport(question);
   }
 }

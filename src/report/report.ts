@@ -1,4 +1,4 @@
-import type { Quantity, Question } from '../../grammar/question.ts';
+import type { AlarmQuestion, GroupedQuestion, Quantity, Question } from '../../grammar/question.ts';
 import type { CautionId } from './cautions.ts';
 import type { MissingId } from './missing.ts';
 import type { Reading, ReadingId } from './reading.ts';
@@ -27,6 +27,14 @@ export interface Report {
   /** Most important first. */
   readonly cautions: readonly CautionId[];
   readonly missing: readonly MissingId[];
+}
+
+/** A report of a question that compares groups, and one of an alarm. */
+export interface GroupedReport extends Report {
+  readonly question: GroupedQuestion;
+}
+export interface AlarmReport extends Report {
+  readonly question: AlarmQuestion;
 }
 
 /** The level used where the line names none: 95%, common practice. */

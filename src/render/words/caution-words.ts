@@ -1,6 +1,7 @@
 import type { CautionId } from '../../report/cautions.ts';
 import { readingsOf } from '../../report/report.ts';
 import type { Report } from '../../report/report.ts';
+import { prevalenceAsGiven, prevalenceDecides } from './alarm-cautions.ts';
 import { cases } from './labels.ts';
 import { fixed, percent } from './numbers.ts';
 
@@ -23,6 +24,10 @@ export const cautionCatalogue = {
       'Counts without totals say nothing about how often: the larger group may simply have more of everything.',
   },
   'base-rate': { source: 'Orenstein et al. 1985, Bull. World Health Organ. 63:1055', text: baseRate },
+  'prevalence-decides': {
+    source: 'Altman & Bland 1994, BMJ 309:102',
+    text: ({ question }) => prevalenceDecides(question),
+  },
   'all-cases-in-one-group': {
     source: 'Hanley & Lippman-Hand 1983, JAMA 249:1743',
     text: () => 'All cases are in one group. None in the other does not mean that none can happen there.',
@@ -57,6 +62,10 @@ export const cautionCatalogue = {
     source: 'Deeks et al. 2011 (coverage error in the screening method); common practice',
     text: coverageAsGiven,
   },
+  'prevalence-as-given': {
+    source: 'Altman & Bland 1994, BMJ 309:102',
+    text: ({ question }) => prevalenceAsGiven(question),
+  },
   'as-stated': {
     source: 'common practice',
     text: () =>
@@ -84,6 +93,7 @@ function baseRate(report: Report): string {
 }
 
 function fewCases({ question }: Report): string {
+  if (question.kind === 'alarm') return 'Few cases or few false alarms: treat the limits as rough.';
   const few = question.groups.some(
     (group) => 'cases' in group && group.cases !== null && group.cases.value > 0 && group.cases.value < 5,
   );

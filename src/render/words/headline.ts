@@ -1,6 +1,6 @@
 import type { Reading } from '../../report/reading.ts';
 import { directionOf, readingsOf } from '../../report/report.ts';
-import type { Direction, Report } from '../../report/report.ts';
+import type { Direction, GroupedReport as Report } from '../../report/report.ts';
 import { limitsText } from './interval-text.ts';
 import { cases, Label, label, perOne, plainLabel, capital } from './labels.ts';
 import { percent, ratio } from './numbers.ts';

@@ -45,6 +45,11 @@ function isShare({ id }: Reading): boolean {
     case 'attributable-fraction':
     case 'prevented-fraction':
     case 'population-attributable-fraction':
+    case 'sensitivity':
+    case 'specificity':
+    case 'prevalence':
+    case 'positive-predictive-value':
+    case 'negative-predictive-value':
       return true;
     default:
       return false;
@@ -61,6 +66,8 @@ function writer(reading: Reading, digits: Digits): (value: number) => string {
     case 'odds-ratio':
     case 'count-ratio':
     case 'percentage-ratio':
+    case 'likelihood-ratio-positive':
+    case 'likelihood-ratio-negative':
       return (value) => ratio(value, digits);
     default:
       return (value) => amount(value, digits);

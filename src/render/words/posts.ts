@@ -1,7 +1,7 @@
 import type { CountsQuestion, SharesQuestion } from '../../../grammar/question.ts';
 import type { Reading, ReadingId } from '../../report/reading.ts';
 import { readingsOf } from '../../report/report.ts';
-import type { Report } from '../../report/report.ts';
+import type { GroupedReport as Report } from '../../report/report.ts';
 import { shownDirection } from './headline.ts';
 import { changeText, limitsText } from './interval-text.ts';
 import { capital, cases, casesAsTyped, Label, label, perOne, population } from './labels.ts';

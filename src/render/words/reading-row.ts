@@ -1,6 +1,8 @@
 import type { Question } from '../../../grammar/question.ts';
 import type { IntervalMethod, NoInterval, Reading, ReadingInterval } from '../../report/reading.ts';
 import type { Report } from '../../report/report.ts';
+import { alarmFormula, alarmMethod, alarmReadingNames } from './alarm-rows.ts';
+import { isRanged } from './alarm-words.ts';
 import { estimateText, levelText, limitsText, workingText } from './interval-text.ts';
 import { cases, plainLabel } from './labels.ts';
 import { amount, beside, fixed } from './numbers.ts';
@@ -13,7 +15,7 @@ export function readingRow(report: Report, reading: Reading): ReadingRow {
   return {
     reading,
     name: nameOf(question, reading, isFewer(report, reading)),
-    value: valueOf(reading),
+    value: valueOf(reading, question.kind === 'alarm' && isRanged(question)),
     formula: formulaOf(question, reading),
     long: workingText(reading),
     method: methodOf(reading),
@@ -58,6 +60,14 @@ function nameOf(question: Question, reading: Reading, fewer: boolean): string {
       return `Difference as stated, ${group}${against}`;
     case 'hidden-cause-strength':
       return `Hidden-cause strength, ${group}${against}`;
+    case 'sensitivity':
+    case 'specificity':
+    case 'prevalence':
+    case 'positive-predictive-value':
+    case 'negative-predictive-value':
+    case 'likelihood-ratio-positive':
+    case 'likelihood-ratio-negative':
+      return alarmReadingNames[reading.id];
   }
 }
 
@@ -65,11 +75,14 @@ function nameOf(question: Question, reading: Reading, fewer: boolean): string {
 const isFewer = ({ readings }: Report, { of }: Reading) =>
   (readings.find((each) => each.id === 'risk-difference' && each.of === of)?.estimate ?? 0) < 0;
 
-function valueOf(reading: Reading): string {
+function valueOf(reading: Reading, ranged: boolean): string {
   const estimate = estimateText(reading, 'full') ?? (reading.unbounded ? 'no upper end' : 'no value');
-  const parts = [intervalPart(reading), exactPart(reading), roundingPart(reading), limitPart(reading)].filter(
-    (part) => part !== null,
-  );
+  const parts = [
+    intervalPart(reading),
+    exactPart(reading),
+    roundingPart(reading, ranged),
+    limitPart(reading),
+  ].filter((part) => part !== null);
   return parts.length === 0 ? estimate : `${estimate} (${parts.join('; ')})`;
 }
 
@@ -114,10 +127,10 @@ function exactPart(reading: Reading): string | null {
     : `exact limits ${limitsText(reading, reading.exactBeside, 'full')}`;
 }
 
-function roundingPart(reading: Reading): string | null {
+function roundingPart(reading: Reading, ranged: boolean): string | null {
   return reading.roundingRange === null
     ? null
-    : `rounding alone allows ${limitsText(reading, reading.roundingRange, 'full')}`;
+    : `${ranged ? 'the range given' : 'rounding alone'} allows ${limitsText(reading, reading.roundingRange, 'full')}`;
 }
 
 function limitPart(reading: Reading): string | null {
@@ -165,6 +178,14 @@ function formulaOf(question: Question, reading: Reading): string {
       return 'c(ratio - 1) / (1 + c(ratio - 1)), c the coverage';
     case 'hidden-cause-strength':
       return 'ratio + root(ratio (ratio - 1)), the ratio inverted first if below 1';
+    case 'sensitivity':
+    case 'specificity':
+    case 'prevalence':
+    case 'positive-predictive-value':
+    case 'negative-predictive-value':
+    case 'likelihood-ratio-positive':
+    case 'likelihood-ratio-negative':
+      return alarmFormula(question, reading.id);
   }
 }
 
@@ -208,6 +229,8 @@ function parts(question: Question, index: number): FormulaParts {
       const group = question.groups[index];
       return { ...empty, risk: group === undefined ? '' : group.share.text };
     }
+    case 'alarm':
+      return empty;
     case 'bare-counts': {
       const group = question.groups[index];
       return { ...empty, risk: group === undefined ? '' : quantityText(group.cases) };
@@ -234,12 +257,16 @@ const sources = {
   'wilson-share-odds': 'Wilson limits of the share of cases, through its odds (Orenstein 1985; Wilson 1927)',
   'clopper-pearson-share-odds':
     'exact limits of the share of cases, through its odds (Orenstein 1985; Clopper & Pearson 1934)',
+  'miettinen-nurminen-prevalence-odds':
+    'Miettinen-Nurminen limits of the likelihood ratio (1985), through the odds of the prevalence (Bayes)',
+  'mover-prevalence-odds':
+    'Miettinen-Nurminen limits of the likelihood ratio (1985) and Wilson limits of the prevalence, combined on logs (Zou & Donner 2008)',
 } satisfies Record<IntervalMethod, string>;
 
 /** The name of an interval's method, with its source. */
 function methodOf(reading: Reading): string {
   if (reading.id === 'hidden-cause-strength') return 'VanderWeele & Ding 2017';
-  if (reading.interval === null) return '';
+  if (reading.interval === null) return alarmMethod(reading.id);
   return methodText(reading.interval);
 }
 
