@@ -141,8 +141,21 @@ export const messages = {
   'too-many-tried': (most: string) => `"try" takes up to ${most} coverages. Send the rest in a second line.`,
   'not-yet-clause': (word: string) =>
     `I do not read "${word}" yet. Leave it out and I answer the figure itself.`,
-  'not-yet-alarm': () =>
-    'I do not read tests and alarms yet. I can compare how often they went off: how many, out of how many.',
+  'alarm-missing': (missing: string) =>
+    `Missing: ${missing}. An alarm takes sensitivity, specificity and prevalence, or the four counts of alarms and silences.`,
+  'alarm-accuracy': (text: string) =>
+    `"${text}" can mean how many real cases are caught, or how many of all calls are right.`,
+  'alarm-result': (word: string) =>
+    `${word} is what I work out. It takes sensitivity, specificity and prevalence.`,
+  'alarm-share-due': (text: string) =>
+    `Is ${text} a percentage or a count? Put "%" behind it, or "of" and a total.`,
+  'alarm-word-twice': (word: string) => `"${word}" stands twice, with two figures. Which one is it?`,
+  'alarm-compared': () => 'I read one alarm at a time. Send each in a line of its own.',
+  'alarm-no-case': (words: string) => `${words} are both 0: nothing follows from nobody.`,
+  'alarm-clause': (word: string) => `"${word}" does not go with an alarm: there are no groups in it.`,
+  'prevalence-at-end': (text: string) =>
+    `With a prevalence of ${text} there is nothing to tell apart. It has to lie between 0% and 100%.`,
+  'unread-alarm': (text: string) => `I cannot place "${text}" in this alarm. Which of its figures is it?`,
 } satisfies Record<string, (...pieces: string[]) => string>;
 
 export type MessageId = keyof typeof messages;

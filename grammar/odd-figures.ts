@@ -19,7 +19,6 @@ interface Odd {
   readonly suggestions: readonly string[];
 }
 
-const alarmWord = /^(?:sensitivity|specificity|prevalence|sens|spec|prev|tp|fp|tn|fn|ppv|npv|accurate)$/i;
 const measured = /^\d[\d.,]*(?:ms|s|sec|kg|g|km|m|cm|mm|mb|gb|px|ml|l|\u00b0c|db)$/i;
 const unitOfMeasure =
   /^(?:ms|sec|seconds?|kg|km|cm|mm|mb|gb|px|ml|litres?|metres?|degrees?|days?|weeks?|months?|hours?|minutes?)$/i;
@@ -72,9 +71,6 @@ function oddAt(tokens: Tokens, at: number, folded: Folded): Odd | null {
   if (is(at, token.Of) && /^(?:them|which|whom|these|those)$/i.test(image(at + 1)))
     return totalFirst(tokens, at, odd);
   if (is(at, token.Word)) {
-    if (/^caught$/i.test(each.image) && hasNumber(tokens, at + 1)) {
-      return odd('not-yet-alarm', at + 2, [], ['old filter: 18 of 1,204 vs new filter: 9 of 2,377']);
-    }
     if (unitOfMoney.test(each.image) && is(at - 1, token.NumberToken) && !hasConnector(tokens)) {
       return odd(
         'money',
@@ -98,13 +94,6 @@ function oddAt(tokens: Tokens, at: number, folded: Folded): Odd | null {
     if (exponent.test(each.image)) return odd('not-a-number', at + 1, [each.image]);
     if (measured.test(each.image) && !is(at - 1, token.Slash)) {
       return odd('measurement', at + 1, [each.image], ['slower than 300 ms: 31 of 91,000 vs ... of ...']);
-    }
-    if (
-      alarmWord.test(each.image) &&
-      (hasNumber(tokens, at + 1) || is(at - 1, token.Percent)) &&
-      !tokens.some(({ tokenType }) => tokenType === token.Of)
-    ) {
-      return odd('not-yet-alarm', at + 1, [], ['old filter: 18 of 1,204 vs new filter: 9 of 2,377']);
     }
   }
   if (
@@ -179,8 +168,6 @@ function totalFirst(
 }
 
 const isPlainDigits = (text: string) => /^[\d,]+$/.test(text);
-const hasNumber = (tokens: Tokens, from: number) =>
-  tokens.slice(from, from + 3).some(({ tokenType }) => tokenType === token.NumberToken);
 const connectors: ReadonlySet<unknown> = new Set([token.Of, token.Slash, token.In, token.Per, token.Percent]);
 const hasConnector = (tokens: Tokens) => tokens.some(({ tokenType }) => connectors.has(tokenType));
 

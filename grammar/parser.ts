@@ -28,7 +28,7 @@ export class LineParser extends CstParser {
     });
   });
 
-  /** part: Clause | [ CasesHead | CoverageHead | ChangeHead ] list */
+  /** part: Clause | [ CasesHead | CoverageHead | ChangeHead | AlarmHead ] list */
   readonly part = this.RULE('part', () => {
     this.OR([
       { ALT: () => this.CONSUME(tags.ClauseTag) },
@@ -50,7 +50,13 @@ export class LineParser extends CstParser {
           this.SUBRULE3(this.list);
         },
       },
-      { ALT: () => this.SUBRULE4(this.list) },
+      {
+        ALT: () => {
+          this.CONSUME(tags.AlarmHeadTag);
+          this.SUBRULE4(this.list);
+        },
+      },
+      { ALT: () => this.SUBRULE5(this.list) },
     ]);
   });
 

@@ -1,5 +1,6 @@
 import { unitOfOne } from './exposures.ts';
 import { grouped } from './numbers.ts';
+import { alarmFigures } from './print-alarm.ts';
 import { coverageText, withUnit } from './print-coverage.ts';
 import type { Question, Quantity, RatesGroup, SharesQuestion, StrataQuestion } from './question.ts';
 
@@ -35,6 +36,8 @@ function figurePart(question: Question): string {
       );
       return groups.join(' vs ');
     }
+    case 'alarm':
+      return `${question.name === null ? 'alarm: ' : named(question.name)}${alarmFigures(question)}`;
     case 'bare-counts':
       return question.groups
         .map(({ label, cases }, index) => {
@@ -47,7 +50,13 @@ function figurePart(question: Question): string {
 
 /** `from 412 to 530`: a change whose times have no names of their own. */
 function changePart(question: Question): string | null {
-  if (!question.overTime || question.kind === 'shares' || question.kind === 'strata') return null;
+  if (
+    !question.overTime ||
+    question.kind === 'shares' ||
+    question.kind === 'strata' ||
+    question.kind === 'alarm'
+  )
+    return null;
   if (question.groups.length !== 2) return null;
   if (question.groups.map(({ label }) => label?.toLowerCase()).join() !== 'before,after') return null;
   const unit = question.unit === null ? '' : ` ${question.unit}`;

@@ -68,6 +68,7 @@ export interface ReadingRemark {
     | 'about-taken-as-given' // about 38% was taken as 38%
     | 'whole-taken-apart' // a part against the whole that contains it: the rest was taken
     | 'total-left-out' // a group that is the sum of the others
+    | 'words-left-out' // words beside an alarm's figures that say nothing about them
     | 'different-times'; // watched for different lengths of time
   readonly text: string;
   readonly readAs: string;
@@ -242,7 +243,46 @@ export interface LayeredGroup {
   readonly label: string | null;
 }
 
-export type Question =
+/**
+ * `alarm: sensitivity 92%, specificity 97%, prevalence 0.4%`: a test, a filter or an alert, how common real cases are, and so
+ * how many of its alarms are real.
+ */
+export interface AlarmQuestion extends QuestionBase {
+  readonly kind: 'alarm';
+  /** What the alarm is called; `null` for a plain `alarm`. */
+  readonly name: string | null;
+  readonly sensitivity: AlarmShare;
+  readonly specificity: AlarmShare;
+  /** In (0, 1); `null` where all four counts come from one sample and nothing else was said: the sample has its own. */
+  readonly prevalence: AlarmShare | null;
+}
+
+/** Sensitivity, specificity or prevalence as a share, and how it was given. */
+export interface AlarmShare {
+  readonly share: Quantity;
+  readonly given: AlarmGiven;
+}
+
+/**
+ * - `share`: a percentage or a frequency. `turned`: the other side was typed (`false alarm rate 3%` for a specificity of 97%).
+ * - `counts`: `46 of 50`; `turned`: those that went wrong were counted (`false alarms 6 of 200`).
+ * - `cells`: `caught 46, missed 4`, or `false alarms 30, quiet 920`.
+ */
+export type AlarmGiven =
+  | { readonly kind: 'share'; readonly typed: Quantity; readonly turned: boolean }
+  | {
+      readonly kind: 'counts';
+      readonly part: Quantity;
+      readonly whole: Quantity;
+      readonly turned: boolean;
+      /** A percentage that stood beside the counts, to be held against them. */
+      readonly stated: Quantity | null;
+    }
+  | { readonly kind: 'cells'; readonly right: Quantity; readonly wrong: Quantity };
+
+export type Question = GroupedQuestion | AlarmQuestion;
+/** The kinds that compare groups. */
+export type GroupedQuestion =
   CountsQuestion | SharesQuestion | StatedQuestion | BareCountsQuestion | RatesQuestion | StrataQuestion;
 export type QuestionKind = Question['kind'];
 

@@ -10,6 +10,7 @@ import { parseTags } from './parser.ts';
 import type { Diagnosis, HelpTopic, LineLimits, LineReading } from './question.ts';
 import { settleLine } from './settle.ts';
 import { tableOf } from './table.ts';
+import { tagAlarm } from './tag-alarm.ts';
 import { tagLine } from './tag.ts';
 import * as tags from './tags.ts';
 import { fineTokensOf } from './tokens.ts';
@@ -24,6 +25,7 @@ const topics: readonly HelpTopic[] = [
   'strata',
   'stated',
   'bare-counts',
+  'alarm',
 ];
 
 /** Reads one typed line. Pure, linear in the length of the line, and never throws whatever the line holds. */
@@ -45,7 +47,8 @@ export function readLine(line: string, limits: LineLimits): LineReading {
   if (/^[\s?]*$/.test(folded.text))
     return refusal(diagnosis('empty-line', { from: 0, to: line.length }, [], linesToTry));
   if (coverageFault !== null) return refusal(coverageFault);
-  const { tags: tagged, fault, hasFigure } = tagLine(fine, folded);
+  const alarm = tagAlarm(fine, folded);
+  const { tags: tagged, fault, hasFigure } = alarm ?? tagLine(fine, folded);
   if (fault !== null) return refusal(fault);
   if (
     !hasFigure &&
@@ -59,7 +62,7 @@ export function readLine(line: string, limits: LineLimits): LineReading {
   const question = settleLine(partsOfTree(tree, folded), {
     typed: line,
     by: layersBy(tree, folded),
-    remarks: [...folded.remarks, ...remarks],
+    remarks: [...folded.remarks, ...remarks, ...(alarm?.remarks ?? [])],
     mostGroups: limits.groups,
     mostLayers: limits.layers,
   });

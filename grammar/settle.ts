@@ -3,6 +3,7 @@ import { printCanonical } from './print-canonical.ts';
 import { refused, settled } from './quantities.ts';
 import type { Settled } from './quantities.ts';
 import type { Question } from './question.ts';
+import { settleAlarm } from './settle-alarm.ts';
 import { settleBareCounts, settleCounts, settleStated } from './settle-groups.ts';
 import { changeItems } from './settle-change.ts';
 import { settleClauses } from './settle-clauses.ts';
@@ -47,6 +48,8 @@ function settleItems(
   typedItems: readonly Item[],
   setting: Setting,
 ): Settled<Question> {
+  const alarm = lists.find(({ head }) => head === 'alarm');
+  if (alarm !== undefined) return settleAlarm(typedItems, alarm.name, setting);
   const change = lists.find(({ head }) => head === 'change' || head === 'change-back');
   if (change !== undefined && lists.length > 1)
     return refused(diagnosis('change-of-two', change.span, [], ['from 412 to 530']));

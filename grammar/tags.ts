@@ -31,6 +31,7 @@ export const ChangeHeadTag = tag(
   'ChangeHead',
   '"from ... to ...", "up from" or an arrow between two figures',
 );
+export const AlarmHeadTag = tag('AlarmHead', '"alarm:", or the words of an alarm');
 export const ClauseTag = tag('Clause', 'a clause');
 
 export const tagTypes: readonly TokenType[] = [
@@ -53,6 +54,7 @@ export const tagTypes: readonly TokenType[] = [
   CasesHeadTag,
   CoverageHeadTag,
   ChangeHeadTag,
+  AlarmHeadTag,
   ClauseTag,
 ];
 

@@ -55,7 +55,9 @@ export type TreePart =
   | {
       readonly kind: 'list';
       /** `change`: from the first figure to the second; `change-back`: the later figure stands first. */
-      readonly head: 'cases' | 'coverage' | 'change' | 'change-back' | null;
+      readonly head: 'cases' | 'coverage' | 'change' | 'change-back' | 'alarm' | null;
+      /** What the alarm is called, where the line names it. */
+      readonly name: Words | null;
       readonly items: readonly Item[];
       readonly span: Span;
     }
@@ -119,11 +121,14 @@ function partOf(node: CstNode, folded: Folded): TreePart {
         ? 'cases'
         : node.children['CoverageHead'] !== undefined
           ? 'coverage'
-          : change === undefined
-            ? null
-            : payloadOf(change).kind === 'text'
-              ? 'change-back'
-              : 'change',
+          : node.children['AlarmHead'] !== undefined
+            ? 'alarm'
+            : change === undefined
+              ? null
+              : payloadOf(change).kind === 'text'
+                ? 'change-back'
+                : 'change',
+    name: wordsOf(tokens(node, 'AlarmHead')[0], folded),
     items,
     span: joined([...heads.map((head) => spanOf(head, folded)), ...items.map(({ span }) => span)]),
   };

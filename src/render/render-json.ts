@@ -3,6 +3,8 @@ import type { Diagnosis, Question } from '../../grammar/question.ts';
 import type { Reading } from '../report/reading.ts';
 import type { Report } from '../report/report.ts';
 import { layerName } from './words/strata-words.ts';
+import { statedPlaces } from '../report/alarm-report.ts';
+import { alarmParts } from './alarm-json.ts';
 import { whyText } from './words/reading-row.ts';
 import { plainLabel } from './words/labels.ts';
 import { tell } from './words/tell.ts';
@@ -25,6 +27,7 @@ export function renderJson(line: string, report: Report): string {
       ...(question.kind === 'shares' && question.unknownCases !== null
         ? { unknownCases: question.unknownCases.value }
         : {}),
+      ...(question.kind === 'alarm' ? alarmParts(question) : {}),
       clauses: clausesOf(question),
     },
     groups: groupsOf(question),
@@ -35,7 +38,7 @@ export function renderJson(line: string, report: Report): string {
     stated: report.stated.map(({ group, stated, computed, agrees }) => ({
       text: stated.text,
       value: stated.value,
-      of: plainLabel(question, group),
+      of: question.kind === 'alarm' ? statedPlaces[group] : plainLabel(question, group),
       computed,
       agrees,
       remarks: [],
@@ -102,6 +105,8 @@ function groupsOf(question: Question): readonly object[] {
         ...rangeOf('cases', cases),
         ...rangeOf('exposure', exposure),
       }));
+    case 'alarm':
+      return [];
     case 'bare-counts':
       return question.groups.map(({ cases }, index) => ({
         label: plainLabel(question, index),

@@ -6,6 +6,7 @@ import type {
   SharesQuestion,
   StrataQuestion,
 } from '../../grammar/question.ts';
+import { alarmCautions } from './alarm-cautions.ts';
 import type { Reading } from './reading.ts';
 import { isReversed, pooledAndCrude } from './reversal.ts';
 
@@ -24,6 +25,7 @@ export const cautionIds = [
   'base-rate',
   'unknown-group',
   'coverage-changed',
+  'prevalence-decides',
   'all-cases-in-one-group',
   'no-cases',
   'suppressed-cell',
@@ -36,6 +38,7 @@ export const cautionIds = [
   'coverage-as-given',
   'divisor-may-have-changed',
   'events-singly',
+  'prevalence-as-given',
   'as-stated',
   'picked-starting-point',
   'one-group',
@@ -79,6 +82,8 @@ function applying(question: Question, readings: readonly Reading[]): readonly Ca
       return ratesCautions(question);
     case 'strata':
       return strataCautions(question, readings);
+    case 'alarm':
+      return alarmCautions(question);
     case 'bare-counts':
       if (question.overTime)
         return ['divisor-may-have-changed', ...fewOf(question.groups), 'picked-starting-point'];

@@ -1,22 +1,22 @@
-import type { Question } from '../../grammar/question.ts';
+import type { GroupedQuestion } from '../../grammar/question.ts';
 import { detectableRiskRatio, detectableShareRatio } from '../stats/detectable-ratio.ts';
 import { casesNeeded, growthNeeded } from '../stats/size-needed.ts';
 import { shownDirection } from './report.ts';
 import type { Reading } from './reading.ts';
-import type { CouldShow, Report } from './report.ts';
+import type { CouldShow, GroupedReport } from './report.ts';
 
 /** How often a ratio has to show for it to count as one that would have been seen: four times in five (common practice). */
 const power = 0.8;
 
 /** Could it have been seen? `null` where the figures show a difference, or where nothing can be said about their size. */
-export function couldShow(report: Report, ratio: Reading | undefined): CouldShow | null {
+export function couldShow(report: GroupedReport, ratio: Reading | undefined): CouldShow | null {
   const { question, level } = report;
   if (ratio?.interval == null || ratio.against === null || question.groups.length !== 2) return null;
   if (shownDirection(report, ratio) !== 'none-shown') return null;
   return sizesOf(question, ratio.of, ratio.against, level);
 }
 
-function sizesOf(question: Question, of: number, against: number, level: number): CouldShow | null {
+function sizesOf(question: GroupedQuestion, of: number, against: number, level: number): CouldShow | null {
   const effect = question.clauses.designEffect?.value ?? 1;
   switch (question.kind) {
     case 'counts': {

@@ -1,4 +1,4 @@
-import type { Question } from '../../grammar/question.ts';
+import type { AlarmQuestion, Question } from '../../grammar/question.ts';
 
 /** What the line does not say and the source could: each becomes a question that can be forwarded. */
 export type MissingId =
@@ -16,6 +16,8 @@ export type MissingId =
   | 'other-differences' // layers: in what else do the groups differ
   | 'divisor-over-time' // a change of counts: did the number that it is out of change too
   | 'equally-long' // a change of counts: how long is each of the two times
+  | 'prevalence-source' // alarm: which place and time the prevalence belongs to
+  | 'taken-as-they-come' // alarm: four counts, and whether the sample was chosen by outcome
   | 'who-is-counted';
 
 /** What to ask whoever gave the figure, most useful first. */
@@ -47,8 +49,18 @@ export function missingFor(question: Question): readonly MissingId[] {
       ];
     case 'strata':
       return ['other-differences', 'same-time', ...who];
+    case 'alarm':
+      return [...missingForAlarm(question), ...who];
     case 'bare-counts':
       if (question.overTime) return ['divisor-over-time', 'equally-long', ...who];
       return ['totals', 'same-time', ...who];
   }
+}
+
+function missingForAlarm({ sensitivity, specificity, prevalence }: AlarmQuestion): readonly MissingId[] {
+  const stated = [sensitivity, specificity].some(({ given }) => given.kind === 'share');
+  return [
+    ...(stated ? (['counts-behind'] as const) : []),
+    prevalence === null ? 'taken-as-they-come' : 'prevalence-source',
+  ];
 }

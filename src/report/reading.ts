@@ -35,7 +35,18 @@ export type ReadingId =
   | 'count-ratio'
   | 'percentage-ratio'
   | 'percentage-difference'
-  | 'hidden-cause-strength';
+  | 'hidden-cause-strength'
+  | AlarmReadingId;
+
+/** The readings of an alarm. */
+export type AlarmReadingId =
+  | 'sensitivity'
+  | 'specificity'
+  | 'prevalence'
+  | 'positive-predictive-value'
+  | 'negative-predictive-value'
+  | 'likelihood-ratio-positive'
+  | 'likelihood-ratio-negative';
 
 /** How an interval was worked out. An `envelope` is the outermost limits over every value that a range or a suppressed cell allows. */
 export type IntervalMethod =
@@ -64,6 +75,8 @@ export type IntervalMethod =
   | 'effective-sample-fraction'
   | 'growing-coverage' // the wider of two assumptions about coverage that grew
   | 'coverage-by-period'
+  | 'miettinen-nurminen-prevalence-odds'
+  | 'mover-prevalence-odds'
   | 'as-given'; // an interval that came with the figure
 
 /** Why a reading has no interval. */

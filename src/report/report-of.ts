@@ -1,4 +1,5 @@
-import type { Question } from '../../grammar/question.ts';
+import type { GroupedQuestion, Question } from '../../grammar/question.ts';
+import { alarmReport } from './alarm-report.ts';
 import { bareCountsReport } from './bare-counts-report.ts';
 import { withCaution } from './cautions.ts';
 import { couldShow } from './could-show.ts';
@@ -7,7 +8,7 @@ import { optionsOf } from './options.ts';
 import { ratesReport } from './rates-report.ts';
 import type { Reading } from './reading.ts';
 import { readingsOf } from './report.ts';
-import type { Report } from './report.ts';
+import type { GroupedReport, Report } from './report.ts';
 import { levelForAll, severalGroups } from './several-groups.ts';
 import { sharesReport } from './shares-report.ts';
 import { statedReport } from './stated-report.ts';
@@ -15,7 +16,14 @@ import { strataReport } from './strata-report.ts';
 
 /** Works out the report of a question. */
 export function reportOf(question: Question): Report {
-  const report = reportOfKind(question);
+  return question.kind === 'alarm'
+    ? alarmReport(question)
+    : withComparisons({ ...reportOfGroups(question), question });
+}
+
+/** What every comparison of groups needs, whatever it compares: all groups at once, and what would have shown. */
+function withComparisons(report: GroupedReport): Report {
+  const { question } = report;
   const { overall, againstRest } = severalGroups(question, optionsOf(question.clauses));
   const seen = couldShow(report, readingsOf(report, report.headline)[0]);
   const readings = overall === null ? report.readings : [overall, ...atOnce(report)];
@@ -23,7 +31,7 @@ export function reportOf(question: Question): Report {
   return { ...report, readings, cautions, againstRest, couldShow: seen };
 }
 
-function reportOfKind(question: Question): Report {
+function reportOfGroups(question: GroupedQuestion): Report {
   switch (question.kind) {
     case 'counts':
       return countsReport(question);
@@ -41,12 +49,12 @@ function reportOfKind(question: Question): Report {
 }
 
 /** The ratios of several pairs with a second interval each, that holds for all the pairs at once. */
-function atOnce(report: Report): readonly Reading[] {
+function atOnce(report: GroupedReport): readonly Reading[] {
   const { question, headline } = report;
   const pairs = readingsOf(report, headline).length;
   const value = levelForAll(report.level, pairs);
   if (value === null) return report.readings;
-  const wider = reportOfKind({
+  const wider = reportOfGroups({
     ...question,
     clauses: { ...question.clauses, level: { value, text: '' } },
   });

@@ -1,4 +1,4 @@
-import type { Quantity, Question } from '../../grammar/question.ts';
+import type { AlarmQuestion, GroupedQuestion, Quantity, Question } from '../../grammar/question.ts';
 import type { DetectableRatio } from '../stats/detectable-ratio.ts';
 import type { CautionId } from './cautions.ts';
 import type { MissingId } from './missing.ts';
@@ -41,6 +41,14 @@ export interface Report {
   readonly missing: readonly MissingId[];
   /** Ratios that stand beside the headline's, each under an assumption of its own. */
   readonly variants?: readonly RatioVariants[];
+}
+
+/** A report of a question that compares groups, and one of an alarm. */
+export interface GroupedReport extends Report {
+  readonly question: GroupedQuestion;
+}
+export interface AlarmReport extends Report {
+  readonly question: AlarmQuestion;
 }
 
 /** The level used where the line names none: 95%, common practice. */

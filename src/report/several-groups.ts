@@ -1,4 +1,4 @@
-import type { CountsGroup, Question, RatesGroup, SharesGroup } from '../../grammar/question.ts';
+import type { CountsGroup, GroupedQuestion, RatesGroup, SharesGroup } from '../../grammar/question.ts';
 import type { ChiSquaredTest } from '../stats/homogeneity.ts';
 import { overallChiSquared, overallShareChiSquared } from '../stats/overall-chi-squared.ts';
 import { shareRatioInterval } from '../stats/share-ratio.ts';
@@ -21,7 +21,7 @@ export interface SeveralGroups {
 const none: SeveralGroups = { overall: null, againstRest: [] };
 
 /** Nothing for two groups: the pair says it all. */
-export function severalGroups(question: Question, options: CountsOptions): SeveralGroups {
+export function severalGroups(question: GroupedQuestion, options: CountsOptions): SeveralGroups {
   if (question.groups.length < 3) return none;
   switch (question.kind) {
     case 'counts':

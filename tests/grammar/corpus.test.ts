@@ -218,9 +218,9 @@ describe('the rules that settle the language', () => {
   });
 
   it('D1: the earlier of two groups ordered in time is the reference', () => {
-    expect(question('before: 41 of 1,000 vs after: 52 of 1,100').reference).toBe(0);
-    expect(question('after: 52 of 1,100 vs before: 41 of 1,000').reference).toBe(1);
-    expect(question('2023: 3 of 900 vs 2022: 4 of 800').reference).toBe(1);
+    expect(question('before: 41 of 1,000 vs after: 52 of 1,100')).toMatchObject({ reference: 0 });
+    expect(question('after: 52 of 1,100 vs before: 41 of 1,000')).toMatchObject({ reference: 1 });
+    expect(question('2023: 3 of 900 vs 2022: 4 of 800')).toMatchObject({ reference: 1 });
   });
 
   it('Q3: rows chosen by outcome are known by their names', () => {

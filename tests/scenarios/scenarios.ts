@@ -65,6 +65,11 @@ export const scenarios = {
   'stated-frequencies': '1 in 250 vs 1 in 400',
   'bare-counts': 'night 18 vs day 9',
   'without-labels': '18/1204 v 9/2377',
+  'water-alarm': 'alarm: sensitivity 92%, specificity 97%, prevalence 0.4%',
+  'water-alarm-with-counts':
+    'water alarm: sensitivity 46 of 50, false alarms 6 of 200, prevalence 1 in 250 wells',
+  'water-alarm-one-sample': 'caught 46, missed 4, false alarms 30, quiet 920',
+  'water-alarm-range': 'water alarm: sensitivity 92%, specificity 97%, prevalence 0.2-1% of wells',
 } as const satisfies Record<string, string>;
 
 export type ScenarioName = keyof typeof scenarios;

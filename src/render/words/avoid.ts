@@ -1,5 +1,5 @@
 import { readingsOf, shownDirection } from '../../report/report.ts';
-import type { Report } from '../../report/report.ts';
+import type { GroupedReport as Report } from '../../report/report.ts';
 import { pooledAndCrude } from '../../report/reversal.ts';
 import { capital, cases, Label, label, one } from './labels.ts';
 import { percent, ratio } from './numbers.ts';

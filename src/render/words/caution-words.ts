@@ -9,6 +9,7 @@ import {
   unknownCaution,
   ofKnownGroup,
 } from './coverage-words.ts';
+import { prevalenceAsGiven, prevalenceDecides } from './alarm-cautions.ts';
 import { cases } from './labels.ts';
 import { amount, fixed, percent, probability, ratio } from './numbers.ts';
 
@@ -64,6 +65,10 @@ export const cautionCatalogue = {
     source: 'Farrington 1993, International Journal of Epidemiology 22:742',
     text: ({ question }) => (question.kind === 'shares' ? coverageChanged(question) : ''),
   },
+  'prevalence-decides': {
+    source: 'Altman & Bland 1994, BMJ 309:102',
+    text: ({ question }) => prevalenceDecides(question),
+  },
   'all-cases-in-one-group': {
     source: 'Hanley & Lippman-Hand 1983, JAMA 249:1743',
     text: () => 'All cases are in one group. None in the other does not mean that none can happen there.',
@@ -115,6 +120,10 @@ export const cautionCatalogue = {
     source: 'Barnett et al. 2005, Int. J. Epidemiol. 34:215',
     text: () => 'A first figure that was picked because it stood out falls back by itself.',
   },
+  'prevalence-as-given': {
+    source: 'Altman & Bland 1994, BMJ 309:102',
+    text: ({ question }) => prevalenceAsGiven(question),
+  },
   'as-stated': {
     source: 'common practice',
     text: () =>
@@ -143,6 +152,7 @@ function baseRate(report: Report): string {
 }
 
 function fewCases({ question }: Report): string {
+  if (question.kind === 'alarm') return 'Few cases or few false alarms: treat the limits as rough.';
   const few = casesOf(question).some((count) => count > 0 && count < 5);
   return few
     ? 'Few cases: treat the limits as rough. If these are people in a small place, write "fewer than 5".'
@@ -155,6 +165,7 @@ function casesOf(question: Question): readonly number[] {
     case 'strata':
       return question.layers.flatMap((layer) => casesOf(layer.question));
     case 'stated':
+    case 'alarm':
       return [];
     case 'shares':
       return question.groups.flatMap(({ cases: count }) => (count === null ? [] : [count.value]));

@@ -1,5 +1,5 @@
 import { readingsOf } from '../../report/report.ts';
-import type { Report } from '../../report/report.ts';
+import type { GroupedReport as Report } from '../../report/report.ts';
 import { limitsText } from './interval-text.ts';
 import { plainLabel } from './labels.ts';
 import { percent, ratio } from './numbers.ts';

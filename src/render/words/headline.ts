@@ -1,7 +1,7 @@
 import type { Question } from '../../../grammar/question.ts';
 import type { Reading } from '../../report/reading.ts';
 import { readingsOf, shownDirection } from '../../report/report.ts';
-import type { Report } from '../../report/report.ts';
+import type { GroupedReport as Report } from '../../report/report.ts';
 import { boundsHeadline } from './bounds-headline.ts';
 import { changeText, countedMore, estimateText, levelText, limitsText } from './interval-text.ts';
 import { cases, Label, label, perOne, plainLabel, capital } from './labels.ts';

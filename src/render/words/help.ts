@@ -16,13 +16,14 @@ export const helpTopics = {
     title:
       'Type the figure as you were given it. The answer comes in the thread, with every fair reading of it.',
     lines: [
-      'In a thread, write @Divisor and the line. "help counts", and in the same way shares, rates, change, strata, stated and bare-counts, say more.',
+      'In a thread, write @Divisor and the line. "help counts", and in the same way shares, rates, change, strata, alarm, stated and bare-counts, say more.',
       clauses,
     ],
     examples: [
       'night shift: 18 of 1,204 vs day shift: 9 of 2,377',
       'cases: no helmet 44, helmet 31; coverage: no helmet 38%',
       '4.2% vs 2.6%',
+      'alarm: sensitivity 92%, specificity 97%, prevalence 0.4%',
     ],
   },
   counts: {
@@ -108,6 +109,19 @@ export const helpTopics = {
     title: 'Counts whose totals nobody stated.',
     lines: ['The answer says how many times as many, and asks: out of how many?', clauses],
     examples: ['night 18 vs day 9'],
+  },
+  alarm: {
+    title: 'A test, a filter or an alert: how many of its alarms are real.',
+    lines: [
+      'It takes sensitivity, specificity (or the false alarm rate) and prevalence, in any order; or the four counts. "46 of 50" in place of a percentage gives an interval.',
+      clauses,
+    ],
+    examples: [
+      'alarm: sensitivity 92%, specificity 97%, prevalence 0.4%',
+      'water alarm: sensitivity 46 of 50, false alarm rate 6 of 200, prevalence 1 in 250 wells',
+      'alarm: sensitivity 92%, specificity 97%, prevalence 0.2-1%',
+      'caught 46, missed 4, false alarms 30, quiet 920',
+    ],
   },
 } satisfies Record<HelpTopic, Help>;
 

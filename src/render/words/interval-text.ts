@@ -52,6 +52,11 @@ function isShare({ id }: Reading): boolean {
     case 'attributable-fraction':
     case 'prevented-fraction':
     case 'population-attributable-fraction':
+    case 'sensitivity':
+    case 'specificity':
+    case 'prevalence':
+    case 'positive-predictive-value':
+    case 'negative-predictive-value':
       return true;
     default:
       return false;
@@ -79,6 +84,8 @@ function writer(reading: Reading, digits: Digits): (value: number) => string {
     case 'pooled-rate-ratio':
     case 'pooled-odds-ratio':
     case 'standardised-risk-ratio':
+    case 'likelihood-ratio-positive':
+    case 'likelihood-ratio-negative':
       return (value) => ratio(value, digits);
     case 'rate':
     case 'standardised-rate':

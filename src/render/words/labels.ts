@@ -1,4 +1,5 @@
 import type { Question } from '../../../grammar/question.ts';
+import { alarmName } from './alarm-read-as.ts';
 
 /** How a group is called in sentences, and what one of the counted is called. All from what was typed. */
 
@@ -18,6 +19,7 @@ const longest = 40;
 
 /** The typed label, or "the first group"; the implied other group of a coverage line is "everybody else". */
 export function plainLabel(question: Question, index: number): string {
+  if (question.kind === 'alarm') return alarmName(question);
   const label = question.groups[index]?.label ?? null;
   if (label !== null)
     return label.length > longest ? `${label.slice(0, longest - 1).trimEnd()}\u2026` : label;
@@ -36,6 +38,7 @@ const wantsQuotes =
   /^(?:no|not|non|never|without|with|under|over|up|less|more|at|above|below|in|on|from|to|of|by|yes|before|after|[^A-Za-z\u00c0-\uffff])/i;
 
 function quoted(question: Question): boolean {
+  if (question.kind === 'alarm') return false;
   // "As before", "after" and "2023" are words of time here, not names.
   const time = question.overTime ? /^(?:before|after|(?:19|20)\d\d)$/i : null;
   return question.groups.some(
@@ -47,6 +50,7 @@ function quoted(question: Question): boolean {
 /** The label inside a sentence: in quotation marks where any label of the question would read badly without. */
 export function label(question: Question, index: number): string {
   const plain = plainLabel(question, index);
+  if (question.kind === 'alarm') return plain;
   return question.groups[index]?.label != null && quoted(question) ? `\u201c${plain}\u201d` : plain;
 }
 

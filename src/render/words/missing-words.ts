@@ -1,6 +1,7 @@
 import type { Question } from '../../../grammar/question.ts';
 import type { MissingId } from '../../report/missing.ts';
 import type { Report } from '../../report/report.ts';
+import { prevalenceSource, statedSides } from './alarm-cautions.ts';
 import { cases, casesAsTyped, plainLabel, population } from './labels.ts';
 import { quantityText } from './read-as.ts';
 
@@ -13,7 +14,12 @@ export function missingText(question: Question, id: MissingId): string {
       return `How many ${casesAsTyped(question)} are there in all? With that the ratio gets an interval.`;
     case 'counts-behind':
       return `Which counts are behind ${shares(question)}: how many, out of how many?`;
+    case 'prevalence-source':
+      return prevalenceSource(question);
+    case 'taken-as-they-come':
+      return 'Were these taken as they came, or were real cases picked out? If they were picked, the prevalence has to come from elsewhere.';
     case 'totals':
+      if (question.kind === 'alarm') return 'Out of how many?';
       return `Out of how many? ${question.groups.map((group, index) => `${plainLabel(question, index)} ${'cases' in group && group.cases !== null ? quantityText(group.cases) : ''} of ...`).join(', ')}`;
     case 'second-group':
       return 'What is it to be compared with: how many, out of how many, in a second group?';
@@ -45,6 +51,7 @@ const unknownCount = (question: Question) =>
 
 function shares(question: Question): string {
   if (question.kind === 'rates') return 'the rates';
+  if (question.kind === 'alarm') return statedSides(question);
   if (question.kind !== 'stated') return 'the percentages';
   return question.groups.map(({ share }) => share.text).join(' and ');
 }

@@ -1,7 +1,7 @@
 import type { CountsQuestion, SharesQuestion } from '../../../grammar/question.ts';
 import type { Reading, ReadingId } from '../../report/reading.ts';
 import { readingsOf, shownDirection } from '../../report/report.ts';
-import type { Report } from '../../report/report.ts';
+import type { GroupedReport as Report } from '../../report/report.ts';
 import { changePosts } from './change-posts.ts';
 import { assumption, coveragePhrase, unknownSentence, ofKnownGroup } from './coverage-words.ts';
 import { grantedNote, wanting } from './coverage-posts.ts';

@@ -1,5 +1,12 @@
-import type { Quantity, Question, RatesQuestion, ReadingRemark } from '../../../grammar/question.ts';
+import type {
+  AlarmQuestion,
+  Quantity,
+  Question,
+  RatesQuestion,
+  ReadingRemark,
+} from '../../../grammar/question.ts';
 import type { Report } from '../../report/report.ts';
+import { alarmReadAs } from './alarm-read-as.ts';
 import { coverageRead } from './coverage-words.ts';
 import { casesAsTyped, one, plainLabel } from './labels.ts';
 import { count, percent } from './numbers.ts';
@@ -13,6 +20,7 @@ export function quantityText(quantity: Quantity): string {
 
 /** The second line of every answer: how the line was read. */
 export function readAs(question: Question): string {
+  if (question.kind === 'alarm') return alarmReadAs(question);
   const named = (index: number) => plainLabel(question, index);
   const reference = named(question.reference);
   const earlier = question.overTime && reference !== 'before' ? 'the earlier, ' : '';
@@ -80,14 +88,32 @@ export function rateText(question: RatesQuestion, index: number): string {
 /** A percentage that stood beside counts: "31 of 9,240 is 0.34%. The line has 3.4%." */
 export function statedText(report: Report): string[] {
   const { question, stated } = report;
+  if (question.kind === 'alarm') return alarmStated(question, stated);
   if (question.kind !== 'counts') return [];
   return stated.flatMap(({ group, stated: figure, computed, agrees }) => {
     const row = question.groups[group];
     if (row === undefined) return [];
-    const decimals = figure.text.split('.')[1]?.replace(/\D/g, '').length ?? 0;
-    const gives = percentAt(computed, decimals);
-    const counts = `${quantityText(row.cases)} of ${quantityText(row.total)} is ${gives}.`;
-    return [agrees ? `${counts} So has the line.` : `${counts} The line has ${figure.text}.`];
+    return [statedLine([row.cases, row.total], figure, computed, agrees)];
+  });
+}
+
+function statedLine(
+  [part, whole]: readonly [Quantity, Quantity],
+  stated: Quantity,
+  computed: number,
+  agrees: boolean,
+): string {
+  const decimals = stated.text.split('.')[1]?.replace(/\D/g, '').length ?? 0;
+  const gives = percentAt(computed, decimals);
+  const counts = `${quantityText(part)} of ${quantityText(whole)} is ${gives}.`;
+  return agrees ? `${counts} So has the line.` : `${counts} The line has ${stated.text}.`;
+}
+
+function alarmStated(question: AlarmQuestion, stated: Report['stated']): string[] {
+  const sides = [question.sensitivity, question.specificity, question.prevalence];
+  return stated.flatMap(({ group, stated: figure, computed, agrees }) => {
+    const given = sides[group]?.given;
+    return given?.kind === 'counts' ? [statedLine([given.part, given.whole], figure, computed, agrees)] : [];
   });
 }
 
@@ -120,6 +146,8 @@ function remarkText({ id, text, readAs: value }: ReadingRemark): string {
       return `Struck-out text was not read: ${text}.`;
     case 'emoji-dropped':
       return `${text} was left out.`;
+    case 'words-left-out':
+      return `\u201c${text}\u201d was left out.`;
     case 'number-in-label':
       return `${text} was read as part of the name: ${value}.`;
     case 'each-counted-once':

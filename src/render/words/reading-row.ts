@@ -2,6 +2,8 @@ import type { Question } from '../../../grammar/question.ts';
 import type { IntervalMethod, NoInterval, Reading, ReadingInterval } from '../../report/reading.ts';
 import type { Report } from '../../report/report.ts';
 import { coverageFormula } from './coverage-formulas.ts';
+import { alarmFormula, alarmMethod, alarmReadingNames } from './alarm-rows.ts';
+import { isRanged } from './alarm-words.ts';
 import { estimateText, levelText, limitsText, workingText } from './interval-text.ts';
 import { cases, plainLabel } from './labels.ts';
 import { amount, beside, fixed } from './numbers.ts';
@@ -95,6 +97,14 @@ function nameOf(question: Question, reading: Reading, fewer: boolean): string {
       return `Difference as stated, ${group}${against}`;
     case 'hidden-cause-strength':
       return `Hidden-cause strength, ${group}${against}`;
+    case 'sensitivity':
+    case 'specificity':
+    case 'prevalence':
+    case 'positive-predictive-value':
+    case 'negative-predictive-value':
+    case 'likelihood-ratio-positive':
+    case 'likelihood-ratio-negative':
+      return alarmReadingNames[reading.id];
   }
 }
 
@@ -185,6 +195,7 @@ function roundingPart(question: Question, reading: Reading): string | null {
   if (reading.roundingRange === null) return null;
   const limits = limitsText(reading, reading.roundingRange, 'full');
   const isRange = question.kind === 'shares' && question.groups.some(({ known }) => known.kind === 'range');
+  if (question.kind === 'alarm' && isRanged(question)) return `the range given allows ${limits}`;
   if (reading.id === 'population-share' && reading.whyNoInterval !== 'given') return `from ${limits}`;
   return isRange && reading.id !== 'case-share'
     ? `the range alone allows ${limits}`
@@ -277,6 +288,14 @@ function formulaOf(asked: Question, reading: Reading): string {
       return 'c(ratio - 1) / (1 + c(ratio - 1)), c the coverage';
     case 'hidden-cause-strength':
       return 'ratio + root(ratio (ratio - 1)), the ratio inverted first if below 1';
+    case 'sensitivity':
+    case 'specificity':
+    case 'prevalence':
+    case 'positive-predictive-value':
+    case 'negative-predictive-value':
+    case 'likelihood-ratio-positive':
+    case 'likelihood-ratio-negative':
+      return alarmFormula(question, reading.id);
   }
 }
 
@@ -327,6 +346,8 @@ function parts(question: Question, index: number): FormulaParts {
       if (group === undefined) return empty;
       return { ...empty, risk: `${quantityText(group.cases)}/${quantityText(group.exposure)}` };
     }
+    case 'alarm':
+      return empty;
     case 'bare-counts': {
       const group = question.groups[index];
       return { ...empty, risk: group === undefined ? '' : quantityText(group.cases) };
@@ -379,6 +400,10 @@ const sources = {
     'The wider of two assumptions, constant risk and evenly spread cases, each from the Wilson limits of the share (Wilson 1927)',
   'coverage-by-period': 'Score of the cases of all periods together (Farrington 1993)',
   'as-given': 'The interval that came with the figure',
+  'miettinen-nurminen-prevalence-odds':
+    'Miettinen-Nurminen limits of the likelihood ratio (1985), through the odds of the prevalence (Bayes)',
+  'mover-prevalence-odds':
+    'Miettinen-Nurminen limits of the likelihood ratio (1985) and Wilson limits of the prevalence, combined on logs (Zou & Donner 2008)',
 } satisfies Record<IntervalMethod, string>;
 
 /** The name of an interval's method, with its source. */
@@ -389,7 +414,7 @@ function methodOf(reading: Reading): string {
       ? 'Deviance (Farrington 1993); misses most real differences'
       : 'Gart & Nam 1988; misses most real differences';
   if (reading.id === 'hidden-cause-strength') return 'VanderWeele & Ding 2017';
-  if (reading.interval === null) return '';
+  if (reading.interval === null) return alarmMethod(reading.id);
   return methodText(reading.interval);
 }
 

@@ -1,4 +1,5 @@
-import type { Report } from '../../report/report.ts';
+import type { AlarmReport, GroupedReport, Report } from '../../report/report.ts';
+import { alarmAvoid, alarmHeadline, alarmPosts, alarmShortPost } from './alarm-words.ts';
 import { avoidFor } from './avoid.ts';
 import { cautionText } from './caution-words.ts';
 import { tableFor } from './group-table.ts';
@@ -16,18 +17,35 @@ export const whatItIsNot =
 
 /** Puts a report into words. */
 export function tell(report: Report): Telling {
+  const { question } = report;
+  const words =
+    question.kind === 'alarm' ? ofAlarm({ ...report, question }) : ofGroups({ ...report, question });
   return {
-    headline: headlineFor(report),
+    ...words,
     readAs: readAs(report.question),
     remarks: [...statedText(report), ...remarksText(report.question)],
-    posts: postsFor(report),
-    shortPost: shortPost(report),
     cautions: report.cautions.map((id) => ({ id, text: cautionText(report, id) })),
     missing: report.missing.map((id) => ({ id, text: missingText(report.question, id) })),
     rows: [...report.readings, ...(report.againstRest ?? [])].map((reading) => readingRow(report, reading)),
-    table: tableFor(report),
     sides: sidesFor(report),
-    avoid: avoidFor(report),
     limits: whatItIsNot,
   };
 }
+
+type OwnWords = Pick<Telling, 'headline' | 'posts' | 'shortPost' | 'table' | 'avoid'>;
+
+const ofGroups = (report: GroupedReport): OwnWords => ({
+  headline: headlineFor(report),
+  posts: postsFor(report),
+  shortPost: shortPost(report),
+  table: tableFor(report),
+  avoid: avoidFor(report),
+});
+
+const ofAlarm = (report: AlarmReport): OwnWords => ({
+  headline: alarmHeadline(report),
+  posts: alarmPosts(report),
+  shortPost: alarmShortPost(report),
+  table: null,
+  avoid: alarmAvoid(report),
+});
