@@ -60,8 +60,10 @@ export function changeIn(tokens: Tokens): ChangePart | null {
   const bothConnected = first.connected && second.connected;
   if (is(tokens, between, token.To) && between === first.end && bothConnected)
     return made('forth', between, null, [between, between + 1]);
-  const nameless = first.start === 0 && is(tokens, between, token.Arrow) && between === first.end;
-  return nameless ? made('forth', between, null, [between, between + 1]) : null;
+  // Words behind the arrow would name the second figure, which makes two groups.
+  return is(tokens, between, token.Arrow) && between === first.end
+    ? made('forth', between, null, [between, between + 1])
+    : null;
 }
 
 interface Place {

@@ -129,6 +129,9 @@ const nounWord = (tokens: Tokens, at: number) =>
 function connectorAt(tokens: Tokens, at: number): 'of' | 'in' | 'per' | null {
   if (is(tokens, at, token.Of) || is(tokens, at, token.Slash)) return 'of';
   if (is(tokens, at, token.In)) return 'in';
+  // `18 incidents from 1,204 shifts`: behind what is counted, `from` says out of how many.
+  if (is(tokens, at, token.From) && nounWord(tokens, at - 1) && numberAt(tokens, at + 1) !== null)
+    return 'of';
   return is(tokens, at, token.Per) ? 'per' : null;
 }
 
@@ -203,12 +206,12 @@ function rangeAt(tokens: Tokens, at: number): Figure | null {
   return shareWithTotal(tokens, at, share, at + 2);
 }
 
-/** `half of the injured`, `a third of incidents`: only with what it is a part of. */
+/** `half of the injured`, `a third of 90`, `half vs a third`. */
 function fractionAt(tokens: Tokens, at: number): Figure | null {
   const first = tokens[at];
-  if (first === undefined || !is(tokens, at, token.FractionWord) || !is(tokens, at + 1, token.Of))
-    return null;
-  if (numberAt(tokens, at + 2) !== null) return null;
+  if (first === undefined || !is(tokens, at, token.FractionWord)) return null;
+  const of = is(tokens, at + 1, token.Of);
+  if (!of && !standsAlone(tokens, at)) return null;
   const [numerator, denominator] = fractionOf(first.image);
   const share: ShareValue = {
     text: `${numerator} in ${denominator}`,
@@ -218,8 +221,16 @@ function fractionAt(tokens: Tokens, at: number): Figure | null {
     precision: 'exact',
     form: 'frequency',
   };
-  return { kind: 'share', start: at, end: at + 1, share, ofNoun: true };
+  return of
+    ? shareWithTotal(tokens, at, share, at + 1)
+    : { kind: 'share', start: at, end: at + 1, share, ofNoun: false };
 }
+
+const joints: ReadonlySet<unknown> = new Set([token.Versus, token.Against, token.Colon, token.Comma]);
+
+/** `half vs a third`: a fraction with nothing of its own on either side. */
+const standsAlone = (tokens: Tokens, at: number) =>
+  [at - 1, at + 1].every((place) => tokens[place] === undefined || joints.has(tokens[place]?.tokenType));
 
 function percentage(number: WrittenNumber, spelled: WrittenNumber, base: number, sign: string): ShareValue {
   const half = 0.5 * 10 ** -number.decimals;

@@ -70,6 +70,10 @@ export const messages = {
   'two-readings-shares': (one: string, ofOne: string, other: string, ofOther: string) =>
     `${one} is a share of ${ofOne}, ${other} a share of ${ofOther}. I can work out the ratio per person from the two, or compare them as two separate groups.`,
   'year-or-people': (text: string) => `${text}: a year, or that many people?`,
+  'unread-name': (name: string) =>
+    `I cannot read "${name}" as a name. Groups stand as "name: count of total".`,
+  'clause-does-not-fit': (clause: string) =>
+    `"${clause}" goes with shares of cases and their coverage, and this line has none. Leave it out, or add the coverage.`,
   'unread-part': (text: string) =>
     `I cannot place "${text}" here. Groups stand as "name: count of total", with "vs" between them.`,
   'change-of-two': () => 'A change has two figures, the earlier and the later. Send one change at a time.',

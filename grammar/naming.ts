@@ -1,4 +1,4 @@
-import { diagnosis } from './diagnosis.ts';
+import { diagnosis, linesToTry } from './diagnosis.ts';
 import { earlierOf, nameKey } from './labels.ts';
 import { refused, settled } from './quantities.ts';
 import type { Settled } from './quantities.ts';
@@ -51,6 +51,14 @@ export function referenceOf(labels: readonly (string | null)[], setting: Setting
   return settled(earlier);
 }
 
+/** Words that end in a connector, or hold a total, are no name: what was meant as a figure there could not be read as one. */
+const isNoName = (label: string) =>
+  /(?:^|\s)(?:of|from|per|than|to|vs\.?)$/i.test(label) ||
+  /(?:^|\s)(?:of|vs\.?) \d/i.test(label) ||
+  /^(?:is|are|was|were) that\b/i.test(label);
+
+const isQuoted = (from: number, typed: string) => /["\u201c\u201e\u00ab]/.test(typed[from] ?? '');
+
 /** The same name twice is refused, and so are too many groups and a person as a name. */
 export function checkNames(
   items: readonly Item[],
@@ -65,6 +73,8 @@ export function checkNames(
     const item = items[index];
     if (label === null || item === undefined) continue;
     const place = item.name ?? item.after ?? item;
+    if (isNoName(label) && !isQuoted(place.span.from, setting.typed))
+      return refused(diagnosis('unread-name', place.span, [label], linesToTry.slice(0, 2)));
     if (label.startsWith('@')) return refused(diagnosis('mention-as-name', place.span));
     if (seen.has(nameKey(label))) return refused(diagnosis('same-name-twice', place.span, [label]));
     seen.add(nameKey(label));

@@ -22,6 +22,8 @@ interface Odd {
 const measured = /^\d[\d.,]*(?:ms|s|sec|kg|g|km|m|cm|mm|mb|gb|px|ml|l|\u00b0c|db)$/i;
 const unitOfMeasure =
   /^(?:ms|sec|seconds?|kg|km|cm|mm|mb|gb|px|ml|litres?|metres?|degrees?|days?|weeks?|months?|hours?|minutes?)$/i;
+/** Units in which nothing is counted, whatever stands around them. */
+const neverCounted = /^(?:ms|kg|cm|mm|mb|gb|px|ml|litres?|degrees?)$/i;
 const unitOfMoney = /^(?:dollars?|euros?|cents|pence|eur|usd|gbp)$/i;
 const exponent = /^(?:\d+(?:\.\d+)?e[+-]?\d+|0x[\da-f]+)$/i;
 
@@ -79,7 +81,11 @@ function oddAt(tokens: Tokens, at: number, folded: Folded): Odd | null {
         ['over the budget: 18 of 1,204 vs ... of ...'],
       );
     }
-    if (unitOfMeasure.test(each.image) && is(at - 1, token.NumberToken) && !hasConnector(tokens)) {
+    if (
+      unitOfMeasure.test(each.image) &&
+      is(at - 1, token.NumberToken) &&
+      (!hasConnector(tokens) || neverCounted.test(each.image))
+    ) {
       return odd(
         'measurement',
         at + 1,
@@ -91,6 +97,8 @@ function oddAt(tokens: Tokens, at: number, folded: Folded): Odd | null {
       return odd('money', at + 1, [each.image], ['over the budget: 18 of 1,204 vs ... of ...']);
     }
     if (/^-\d/.test(each.image)) return odd('negative', at + 1, [each.image]);
+    if (/^(?:nan|inf|infinity)$/i.test(each.image) && (is(at - 1, token.Of) || is(at + 1, token.Of)))
+      return odd('not-a-number', at + 1, [each.image]);
     if (exponent.test(each.image)) return odd('not-a-number', at + 1, [each.image]);
     if (measured.test(each.image) && !is(at - 1, token.Slash)) {
       return odd('measurement', at + 1, [each.image], ['slower than 300 ms: 31 of 91,000 vs ... of ...']);

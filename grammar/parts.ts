@@ -10,6 +10,9 @@ export interface Part {
   readonly end: number;
 }
 
+const isJoint = (each: IToken | undefined) =>
+  each?.tokenType === token.Versus || each?.tokenType === token.Against;
+
 const breaks: ReadonlySet<unknown> = new Set([token.Newline, token.Semicolon, token.Bar]);
 
 /**
@@ -28,6 +31,8 @@ export function partsOf(tokens: readonly IToken[], length: number): readonly Par
   for (let at = 0; at < tokens.length; at += 1) {
     const each = tokens[at];
     if (each === undefined) continue;
+    // A line that breaks off at a `vs` goes on in the next.
+    if (each.tokenType === token.Newline && (isJoint(tokens[at - 1]) || isJoint(tokens[at + 1]))) continue;
     if (breaks.has(each.tokenType)) {
       close(each.startOffset);
       seenFigure = false;

@@ -60,7 +60,13 @@ function wholeNumber(written: WrittenNumber, span: Span, typed: string): Settled
     }
     if (/^\d{1,3}(?:\.\d{3})+$/.test(spelled))
       return refused(
-        diagnosis('decimal-or-thousands', span, [spelled], [replace(spelled.replaceAll('.', ','))]),
+        // All of them at once: a line with one such number usually has several.
+        diagnosis(
+          'decimal-or-thousands',
+          span,
+          [spelled],
+          [typed.replace(/\b\d{1,3}(?:\.\d{3})+\b/g, (text) => text.replaceAll('.', ','))],
+        ),
       );
     return refused(diagnosis('not-whole', span, [spelled]));
   }

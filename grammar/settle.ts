@@ -62,6 +62,11 @@ function settleItems(
   const shares = sharesParts(lists, items, setting);
   if (shares !== null) return settleShares(shares, setting);
   if (areRates(items)) return settleRates(items, setting);
+  const { ofCases } = setting.given;
+  if (ofCases !== null) {
+    const { span, text } = ofCases.quantity;
+    return refused(diagnosis('clause-does-not-fit', span, [`of ${text} ${ofCases.noun ?? ''}`.trim()]));
+  }
   const { trySpan } = setting.given;
   if (trySpan !== undefined) return refused(diagnosis('try-without-coverage', trySpan));
   const everyCount = items.every(({ figure }) => figure.kind === 'count');
@@ -113,16 +118,15 @@ function pairedShares(items: readonly Item[], setting: Setting): SharesParts | n
   const named = items.filter(({ name }) => name !== null);
   const isCoverage = ({ figure, name }: Item) =>
     figure.kind === 'share' && figure.noun !== null && name === null;
-  const coverages = items.filter(isCoverage);
-  const cases = items.filter((item) => !isCoverage(item));
+  const isCases = ({ figure }: Item) => figure.kind === 'share' && /^cases?$/i.test(figure.noun?.text ?? '');
+  const coverages = items.filter((item) => isCoverage(item) && !isCases(item));
+  const cases = items.filter((item) => !coverages.includes(item));
   const isCaseFigure = ({ figure }: Item) =>
     figure.total !== null || (figure.kind === 'share' && figure.noun !== null);
   if (coverages.length === 0 || cases.length !== coverages.length || !cases.every(isCaseFigure)) return null;
   const countFirst = cases.every(({ figure }) => figure.total !== null);
   const oneName = named.length === cases.length && (cases.length > 1 || named[0]?.colon === true);
-  const hasCasesWord = cases.some(
-    ({ figure }) => figure.kind === 'share' && /^cases?$/i.test(figure.noun?.text ?? ''),
-  );
+  const hasCasesWord = cases.some(isCases);
   if (!countFirst && !oneName && !hasCasesWord && setting.given.ofCases === null) return null;
   const names = cases.map(({ name, after }) => name ?? after);
   return {

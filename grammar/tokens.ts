@@ -53,6 +53,8 @@ export const Quoted = sign(
   ['"', '\u201c', '\u201e', '\u00ab'],
 );
 export const YearPair = sign('YearPair', /(?:19|20)\d\d\/\d\d(?![\d,.])/, ['1', '2']);
+/** `8:30` in a name: its colon ends nothing. */
+export const Clock = sign('Clock', /\d{1,2}:\d\d(?![\d,.])(?!\s*(?:of|out|in|per|\/|%))/i, digits);
 export const Range = sign('Range', new RegExp(`\\d+(?:\\.\\d+)?-\\d+(?:\\.\\d+)?${wordEnd}`), digits);
 export const NumberToken = sign(
   'Number',
@@ -129,6 +131,7 @@ export const fineTokens: readonly TokenType[] = [
   Address,
   Quoted,
   YearPair,
+  Clock,
   Range,
   NumberToken,
   Percent,

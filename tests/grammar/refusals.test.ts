@@ -97,6 +97,8 @@ const refused: readonly (readonly [string, string, string])[] = [
   ],
   ['night\t18\t1,204\nday\t9\t2,377\ntotal\t28\t3,581', 'total-not-sum', 'total\t28\t3,581'],
   ['night\t18\t12\nday\t9\t2,377', 'second-column', '18\t12'],
+  ['hundred of 900 vs 3 of 100', 'unread-name', 'hundred of 900 vs'],
+  ['3 of 900 vs 4 of 800; of 75 cases', 'clause-does-not-fit', 'of 75 cases'],
   ['240 ms vs 310 ms', 'measurement', 'ms'],
   ['4.2 days vs 3.1 days', 'measurement', 'days'],
   ['harbour ward: 31 of 9,240 vs all: 21 of 88,000', 'whole-too-small', 'all: 21 of 88,000'],
