@@ -55,6 +55,8 @@ export const messages = {
     `"${word}" needs something after it, as in "${example}".`,
   'design-effect-range': (text: string) =>
     `A design effect of ${text} cannot be: it is 1 where all come singly, and larger where they come together.`,
+  'design-effect-too-large': (effect: string, total: string) =>
+    `A design effect of ${effect} leaves less than one of a total of ${total}. Is it the right one?`,
   'exact-with-design-effect': () =>
     'Exact limits need whole counts, and a design effect divides them. Leave one of the two out.',
   'design-effect-and-form': () =>

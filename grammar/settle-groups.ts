@@ -38,6 +38,10 @@ export function settleCounts(typedItems: readonly Item[], typedSetting: Setting)
   }
   const reference = referenceOf(naming.labels, setting);
   if (!reference.ok) return reference;
+  const effect = setting.given.clauses.designEffect;
+  const small = effect === null ? undefined : groups.find(({ total }) => total.low < effect.value);
+  if (effect !== null && small !== undefined)
+    return refused(diagnosis('design-effect-too-large', small.span, [effect.text, small.total.text]));
   const parts = withoutWhole(groups, naming.labels, setting);
   if (!parts.ok) return parts;
   const { groups: kept, reference: at } = parts.value;

@@ -57,6 +57,13 @@ export function settleShares(typed: SharesParts, setting: Setting): Settled<Shar
   if (population !== null && short) {
     return refused(diagnosis('population-too-small', population.span, [population.text]));
   }
+  const effect = setting.given.clauses.designEffect;
+  if (
+    population !== null &&
+    effect !== null &&
+    groups.some(({ coverage }) => coverage.low * population.low < effect.value)
+  )
+    return refused(diagnosis('design-effect-too-large', population.span, [effect.text, population.text]));
   return settled({
     kind: 'shares',
     groups,

@@ -1,5 +1,5 @@
 import type { Quantity, RatesGroup } from '../../grammar/question.ts';
-import { garwoodInterval } from '../stats/garwood-interval.ts';
+import { garwoodInterval, mostExactEvents } from '../stats/garwood-interval.ts';
 import type { Interval } from '../stats/interval.ts';
 import { rateDifference, rateDifferenceInterval } from '../stats/rate-difference-interval.ts';
 import { exactRateRatioInterval, rateRatioInterval } from '../stats/rate-ratio.ts';
@@ -17,20 +17,22 @@ import type { IntervalMethod, NoInterval, Reading, ReadingInterval } from './rea
 export function rateReading(group: RatesGroup, of: number, per: number, options: CountsOptions): Reading {
   const { level, exact, designEffect } = options;
   const quantities = [group.cases, group.exposure];
+  const tooLarge = exact && group.cases.high > mostExactEvents;
   return reading({
     id: 'rate',
     of,
     estimate: group.cases.value / group.exposure.value,
-    interval: group.asStated
-      ? null
-      : intervalOver(
-          quantities,
-          level,
-          exact ? 'garwood' : 'rate-score',
-          ([x = NaN, t = NaN]) => (exact ? garwoodInterval(x, t, level) : rateScoreInterval(x, t, level)),
-          designEffect,
-        ),
-    whyNoInterval: group.asStated ? 'no-counts' : null,
+    interval:
+      group.asStated || tooLarge
+        ? null
+        : intervalOver(
+            quantities,
+            level,
+            exact ? 'garwood' : 'rate-score',
+            ([x = NaN, t = NaN]) => (exact ? garwoodInterval(x, t, level) : rateScoreInterval(x, t, level)),
+            designEffect,
+          ),
+    whyNoInterval: group.asStated ? 'no-counts' : tooLarge ? 'too-large-for-exact' : null,
     roundingRange: rangeOverCorners(quantities, ([x = NaN, t = NaN]) => x / t),
     per,
   });

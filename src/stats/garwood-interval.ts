@@ -2,6 +2,9 @@ import { ArgumentError, checkExposure, checkLevel } from './argument-error.ts';
 import { gammaLowerQuantile, gammaUpperQuantile } from './gamma-tail.ts';
 import type { Interval } from './interval.ts';
 
+/** Beyond this many events the exact interval is not worked out. */
+export const mostExactEvents = 1e9;
+
 /**
  * Exact interval of a rate, events over exposure: never holds the truth less often than its level.
  *
@@ -16,7 +19,7 @@ import type { Interval } from './interval.ts';
 export function garwoodInterval(events: number, exposure: number, level: number): Interval {
   checkLevel(level);
   checkExposure(events, exposure);
-  if (!Number.isInteger(events) || events > 1e9) {
+  if (!Number.isInteger(events) || events > mostExactEvents) {
     throw new ArgumentError('not-whole', `events must be whole and at most 1e9, not ${events}`);
   }
   const half = (1 - level) / 2;

@@ -104,6 +104,7 @@ const refused: readonly (readonly [string, string, string])[] = [
   ['harbour ward: 31 of 9,240 vs all: 21 of 88,000', 'whole-too-small', 'all: 21 of 88,000'],
   ['harbour ward: <5 of 9,240 vs all: 210 of 88,000', 'whole-not-exact', 'all: 210 of 88,000'],
   ['18 of 1,204 vs 9 of 2,377; design effect 0.5', 'design-effect-range', 'design effect 0.5'],
+  ['1 of 5 vs 0 of 900; design effect 50', 'design-effect-too-large', '1 of 5'],
   ['18 of 1,204 vs 9 of 2,377; design effect 2; exact', 'exact-with-design-effect', 'design effect 2'],
   [
     'cases: no helmet 44, helmet 31; coverage: helmet 55-65%; design effect 2',

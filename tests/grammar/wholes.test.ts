@@ -52,6 +52,9 @@ describe('design effect and whole registers', () => {
   it.each([
     ['18 of 1,204 vs 9 of 2,377; design effect 0.5', 'design-effect-range'],
     ['18 of 1,204 vs 9 of 2,377; design effect', 'clause-without-value'],
+    ['1 of 5 vs 0 of 900; design effect 50', 'design-effect-too-large'],
+    ['a: x 1 of 5 vs y 0 of 900 | b: x 1 of 50 vs y 0 of 900; design effect 50', 'design-effect-too-large'],
+    ['cases: a 1, b 2; coverage: a 38%; population 60; design effect 50', 'design-effect-too-large'],
     ['18 of 1,204 vs 9 of 2,377; design effect 2; exact', 'exact-with-design-effect'],
     ['cases: no helmet 44, helmet 31; coverage: helmet 55-65%; design effect 2', 'design-effect-and-form'],
   ])('%j is refused as %s', (line, id) => {

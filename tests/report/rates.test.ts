@@ -24,6 +24,11 @@ describe('rates', () => {
     close(rate.interval?.high, -Math.log(0.025));
   });
 
+  it('of more than 1e9 events have no exact limits, and say so', () => {
+    const rate = readingFor('2,000,000,000 in 5 days vs 3 in 5 days; exact', 'rate');
+    expect(rate).toMatchObject({ interval: null, whyNoInterval: 'too-large-for-exact' });
+  });
+
   it('as stated have no interval, and say what rounding alone allows: 3 and 2 per 1,000 give 2.5/2.5 to 3.5/1.5', () => {
     const ratio = readingFor('3 per 1,000 bus-days vs 2 per 1,000 bus-days', 'rate-ratio');
     expect(ratio.interval).toBeNull();
