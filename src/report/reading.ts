@@ -50,6 +50,7 @@ export type NoInterval =
   | 'no-counts' // percentages without the counts behind them
   | 'no-totals' // counts without totals
   | 'no-case-number' // shares of cases without the number of cases
+  | 'range' // given as a range, which stands in the place of an interval
   | 'given' // a figure taken as given, not estimated
   | 'no-exact-form' // `exact` was asked for, and this reading has no exact interval of the same family
   | 'spans-none' // one extra case per K: the difference's interval includes none, so K runs through infinity

@@ -32,6 +32,7 @@ describe('grammar/GRAMMAR.md', () => {
     ['Shares', 'shares'],
     ['Stated percentages and frequencies', 'stated'],
     ['Bare counts', 'bare-counts'],
+    ['Alarms', 'alarm'],
     ['Clauses', 'counts'],
     ['Names', 'counts'],
   ])('every example under %s is read as %s', (heading, kind) => {

@@ -18,6 +18,7 @@ export function intervalNote(reading: Reading): string {
       return 'interval: see the risk ratio';
     case 'no-counts':
     case 'given':
+    case 'range':
     case 'spans-none':
     case null:
       return 'no interval without counts';

@@ -1,8 +1,7 @@
 import type { Question } from '../../../grammar/question.ts';
 import type { IntervalMethod, NoInterval, Reading, ReadingInterval } from '../../report/reading.ts';
 import type { Report } from '../../report/report.ts';
-import { alarmFormula, alarmMethod, alarmReadingNames } from './alarm-rows.ts';
-import { isRanged } from './alarm-words.ts';
+import { alarmFormula, alarmMethod, alarmRangePart, alarmReadingNames } from './alarm-rows.ts';
 import { estimateText, levelText, limitsText, workingText } from './interval-text.ts';
 import { cases, plainLabel } from './labels.ts';
 import { amount, beside, fixed } from './numbers.ts';
@@ -15,7 +14,10 @@ export function readingRow(report: Report, reading: Reading): ReadingRow {
   return {
     reading,
     name: nameOf(question, reading, isFewer(report, reading)),
-    value: valueOf(reading, question.kind === 'alarm' && isRanged(question)),
+    value: valueOf(
+      reading,
+      question.kind === 'alarm' ? alarmRangePart(question, reading) : roundingPart(reading),
+    ),
     formula: formulaOf(question, reading),
     long: workingText(reading),
     method: methodOf(reading),
@@ -75,14 +77,11 @@ function nameOf(question: Question, reading: Reading, fewer: boolean): string {
 const isFewer = ({ readings }: Report, { of }: Reading) =>
   (readings.find((each) => each.id === 'risk-difference' && each.of === of)?.estimate ?? 0) < 0;
 
-function valueOf(reading: Reading, ranged: boolean): string {
+function valueOf(reading: Reading, allowed: string | null): string {
   const estimate = estimateText(reading, 'full') ?? (reading.unbounded ? 'no upper end' : 'no value');
-  const parts = [
-    intervalPart(reading),
-    exactPart(reading),
-    roundingPart(reading, ranged),
-    limitPart(reading),
-  ].filter((part) => part !== null);
+  const parts = [intervalPart(reading), exactPart(reading), allowed, limitPart(reading)].filter(
+    (part) => part !== null,
+  );
   return parts.length === 0 ? estimate : `${estimate} (${parts.join('; ')})`;
 }
 
@@ -112,6 +111,8 @@ export function whyText(why: NoInterval): string {
       return 'no interval: the number of cases is not given';
     case 'given':
       return 'as given, taken as exact';
+    case 'range':
+      return 'given as a range';
     case 'no-exact-form':
       return 'no exact interval of this reading; leave out `exact` for the score interval';
     case 'spans-none':
@@ -127,10 +128,10 @@ function exactPart(reading: Reading): string | null {
     : `exact limits ${limitsText(reading, reading.exactBeside, 'full')}`;
 }
 
-function roundingPart(reading: Reading, ranged: boolean): string | null {
+function roundingPart(reading: Reading): string | null {
   return reading.roundingRange === null
     ? null
-    : `${ranged ? 'the range given' : 'rounding alone'} allows ${limitsText(reading, reading.roundingRange, 'full')}`;
+    : `rounding alone allows ${limitsText(reading, reading.roundingRange, 'full')}`;
 }
 
 function limitPart(reading: Reading): string | null {
