@@ -156,7 +156,7 @@ export const messages = {
   'alarm-share-due': (text: string) =>
     `Is ${text} a percentage or a count? Put "%" behind it, or "of" and a total.`,
   'alarm-word-twice': (word: string) => `"${word}" stands twice, with two figures. Which one is it?`,
-  'alarm-compared': () => 'I read one alarm at a time. Send each in a line of its own.',
+  'alarm-compared': () => 'I read one alarm at a time, without "vs" in it. Send each in a line of its own.',
   'alarm-no-case': (words: string) => `${words} are both 0: nothing follows from nobody.`,
   'alarm-clause': (word: string) => `"${word}" does not go with an alarm: there are no groups in it.`,
   'prevalence-at-end': (text: string) =>

@@ -111,8 +111,15 @@ const wordsIn = (read: readonly AlarmPart[]) =>
 const different = (words: readonly FoundWord[]) => new Set(words.map(({ word }) => word)).size;
 
 /** `sensitivity 92%, specificity 97% vs sensitivity 90%, ...`: two alarms in one line. */
-const comparesAlarms = (read: readonly AlarmPart[]) =>
-  different(wordsIn(read).filter(({ technical }) => technical)) >= 2;
+function comparesAlarms(read: readonly AlarmPart[]): boolean {
+  const separators = read
+    .flatMap(({ tokens }) => tokens)
+    .filter(({ tokenType }) => strongSeparators.has(tokenType)).length;
+  const pieces = piecesIn(read);
+  // `tp 46 vs fp 30` are two counts; with a percentage, or with more figures than groups, it is an alarm.
+  const alarm = pieces.length > separators + 1 || pieces.some(({ figure }) => figure.kind === 'share');
+  return alarm && different(wordsIn(read).filter(({ technical }) => technical)) >= 2;
+}
 
 function isAlarm(read: readonly AlarmPart[], head: Head | null): boolean {
   const pieces = piecesIn(read);

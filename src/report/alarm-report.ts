@@ -73,13 +73,16 @@ function measured(
   id: AlarmReadingId,
   { from }: Setup,
   value: (rates: AlarmRates) => number | null,
+  quantities: readonly Quantity[] = from.quantities,
 ): Pick<Reading, 'id' | 'of' | 'estimate' | 'unbounded' | 'roundingRange'> {
   const at = (values: readonly number[]) => value(from.rates(values)) ?? NaN;
   return {
     id,
     of: 0,
     ...estimateOf(at(from.quantities.map((quantity) => quantity.value))),
-    roundingRange: rangeOverCorners(from.quantities, at),
+    roundingRange: quantities.some(({ low, high }) => low !== high)
+      ? rangeOverCorners(from.quantities, at)
+      : null,
   };
 }
 
@@ -107,11 +110,13 @@ function predictiveInterval(after: AfterWhat, setup: Setup): WithInterval {
 }
 
 function likelihoodRatio(id: AlarmReadingId, after: AfterWhat, setup: Setup): Reading {
-  const { both, level, exact } = setup;
+  const { both, level, exact, question } = setup;
+  // The prevalence has no part in it.
+  const sides = [question.sensitivity.share, question.specificity.share];
   const ratio = ({ sensitivity, falseAlarmRate }: AlarmRates) =>
     after === 'alarm' ? sensitivity / falseAlarmRate : (1 - sensitivity) / (1 - falseAlarmRate);
   return reading({
-    ...measured(id, setup, ratio),
+    ...measured(id, setup, ratio, sides),
     ...(both === null
       ? none('no-counts')
       : exact
@@ -142,7 +147,7 @@ function shareReading(id: AlarmReadingId, { share, given }: AlarmShare, setup: S
     estimate: share.value,
     roundingRange: share.low === share.high ? null : { low: share.low, high: share.high },
     ...(counts === null
-      ? none(id === 'prevalence' ? 'given' : 'no-counts')
+      ? none(id !== 'prevalence' ? 'no-counts' : share.precision === 'range' ? 'range' : 'given')
       : has(
           shareInterval(counts.quantities, setup, ([first = NaN, second = NaN]) =>
             counts.rightOfAll(first, second),

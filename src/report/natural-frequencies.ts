@@ -1,6 +1,6 @@
 import type { AlarmQuestion } from '../../grammar/question.ts';
 import { positivePredictiveValue } from '../stats/predictive-values.ts';
-import { ratesOf } from './alarm-rates.ts';
+import { oneSample, ratesOf } from './alarm-rates.ts';
 
 /**
  * An alarm worked out on whole numbers: how many of so many are real cases, how many of those and of the others raise an alarm.
@@ -23,13 +23,13 @@ const largestBase = 1e12;
 
 /**
  * The smallest power of ten (from `per`, where the line has one, or 100) at which every number is at least a few and the whole
- * numbers show the same share of real alarms as the figures do; `null` where there is never an alarm.
+ * numbers show the same share of real alarms, out of `shownOutOf`, as the figures do; `null` where there is never an alarm.
  */
-export function naturalFrequencies(question: AlarmQuestion): NaturalFrequencies | null {
+export function naturalFrequencies(question: AlarmQuestion, shownOutOf: number): NaturalFrequencies | null {
   const rates = ratesOf(question);
   const value = positivePredictiveValue(rates);
   if (value === null) return null;
-  const shown = Math.round(value * outOf([value]));
+  const shown = Math.round(value * shownOutOf);
   for (let base = question.clauses.per ?? 100; ; base *= 10) {
     const exact = [
       rates.prevalence * base,
@@ -40,10 +40,29 @@ export function naturalFrequencies(question: AlarmQuestion): NaturalFrequencies 
     const alarms = caught + falseAlarms;
     const fine =
       exact.every((number) => number === 0 || number >= aFew) &&
-      Math.round((caught / alarms) * outOf([value])) === shown;
+      // Whole numbers say "all" only where it is all.
+      (caught === cases) === (rates.sensitivity === 1) &&
+      Math.round((caught / alarms) * shownOutOf) === shown;
     if (fine || base >= largestBase)
       return { base, cases, caught, others: base - cases, falseAlarms, alarms };
   }
+}
+
+/** The four counts of one sample in the same form; `null` where they are not all there, or not exact. */
+export function countedNumbers(question: AlarmQuestion): NaturalFrequencies | null {
+  const cells = oneSample(question);
+  if (cells === null || !cells.every(({ precision }) => precision === 'exact')) return null;
+  const [caught, missed, falseAlarms, quiet] = cells;
+  const cases = caught.value + missed.value;
+  const others = falseAlarms.value + quiet.value;
+  return {
+    base: cases + others,
+    cases,
+    caught: caught.value,
+    others,
+    falseAlarms: falseAlarms.value,
+    alarms: caught.value + falseAlarms.value,
+  };
 }
 
 /** The M of "of M alarms": the smallest power of ten from 100 at which each share and its rest, where not 0, are a few. */

@@ -84,6 +84,7 @@ export type NoInterval =
   | 'no-counts' // percentages without the counts behind them
   | 'no-totals' // counts without totals
   | 'no-case-number' // shares of cases without the number of cases
+  | 'range' // given as a range, which stands in the place of an interval
   | 'given' // a figure taken as given, not estimated
   | 'range-given' // coverage as a range: the estimate is its middle
   | 'mean-of-growth' // coverage that grew: the estimate is the mean of its ends

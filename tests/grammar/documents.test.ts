@@ -34,6 +34,7 @@ describe('grammar/GRAMMAR.md', () => {
     ['Cases of unknown group', 'shares'],
     ['Stated percentages and frequencies', 'stated'],
     ['Bare counts', 'bare-counts'],
+    ['Alarms', 'alarm'],
     ['Clauses', 'counts'],
     ['Names', 'counts'],
   ])('every example under %s is read as %s', (heading, kind) => {

@@ -1,7 +1,7 @@
 import type { AlarmQuestion, Question } from '../../../grammar/question.ts';
 import { oneSample, ratesOf } from '../../report/alarm-rates.ts';
 import { atAnotherPrevalence, outOf } from '../../report/natural-frequencies.ts';
-import { fixed, percent } from './numbers.ts';
+import { fixed, plainPercent } from './numbers.ts';
 
 /** The cautions and the questions of an alarm. */
 
@@ -11,11 +11,12 @@ export function prevalenceDecides(question: Question): string {
   const { falseAlarmRate, prevalence } = ratesOf(question);
   if (falseAlarmRate === 0)
     return 'The figures have no false alarm at all; a single one would lower the share of real alarms.';
-  const other = atAnotherPrevalence(question);
-  if (other === null) return 'The prevalence decides how many of the alarms are real.';
+  const other = question.prevalence?.share.precision === 'range' ? null : atAnotherPrevalence(question);
+  if (other === null || other.value === 0)
+    return 'The prevalence decides: the lower it is, the fewer of the alarms are real.';
   const base = outOf([other.value]);
-  const here = oneSample(question) === null ? prevalenceText(question) : percent(prevalence, 'short');
-  return `The prevalence decides: at ${percent(other.prevalence, 'short')} instead of ${here}, about ${fixed(Math.round(other.value * base), 0)} of ${fixed(base, 0)} alarms would be real.`;
+  const here = oneSample(question) === null ? prevalenceText(question) : plainPercent(prevalence);
+  return `The prevalence decides: at ${spelledLike(here, other.prevalence)} instead of ${here}, about ${fixed(Math.round(other.value * base), 0)} of ${fixed(base, 0)} alarms would be real.`;
 }
 
 /** "0.4% has to belong to the place where the alarm stands, and is taken as exact." */
@@ -27,6 +28,14 @@ export function prevalenceAsGiven(question: Question): string {
 }
 
 const capitalPrevalence = (question: AlarmQuestion) => `The prevalence (${prevalenceText(question)})`;
+
+/** Another prevalence in the spelling of the typed one: `1 in 25` beside `1 in 250`. */
+function spelledLike(typed: string, prevalence: number): string {
+  const one = Number((1 / prevalence).toPrecision(12));
+  return typed.startsWith('1 in ') && Number.isInteger(one)
+    ? `1 in ${fixed(one, 0)}`
+    : plainPercent(prevalence);
+}
 
 /** A prevalence as it was typed: `0.4%`, `1 in 250`, `40 of 10,000`. */
 export function prevalenceText({ prevalence }: AlarmQuestion): string {

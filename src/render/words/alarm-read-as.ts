@@ -1,7 +1,7 @@
 import { alarmFigures } from '../../../grammar/print-alarm.ts';
 import type { AlarmQuestion } from '../../../grammar/question.ts';
 import { oneSample } from '../../report/alarm-rates.ts';
-import { percent } from './numbers.ts';
+import { plainPercent } from './numbers.ts';
 
 /** What an alarm is called in the answer. */
 export const alarmName = ({ name }: AlarmQuestion) => name ?? 'this alarm';
@@ -11,10 +11,10 @@ export function alarmReadAs(question: AlarmQuestion): string {
   const { specificity, sensitivity, name } = question;
   const turned = [
     ...(sensitivity.given.kind !== 'cells' && sensitivity.given.turned
-      ? [`sensitivity ${percent(sensitivity.share.value, 'full')}`]
+      ? [`sensitivity ${plainPercent(sensitivity.share.value)}`]
       : []),
     ...(specificity.given.kind !== 'cells' && specificity.given.turned
-      ? [`specificity ${percent(specificity.share.value, 'full')}`]
+      ? [`specificity ${plainPercent(specificity.share.value)}`]
       : []),
   ];
   const also = turned.length === 0 ? '' : ` (so ${turned.join(', ')})`;

@@ -1,6 +1,7 @@
-import type { AlarmGiven, AlarmQuestion, Question } from '../../../grammar/question.ts';
+import type { AlarmGiven, AlarmQuestion, AlarmShare, Question } from '../../../grammar/question.ts';
 import { oneSample } from '../../report/alarm-rates.ts';
-import type { AlarmReadingId } from '../../report/reading.ts';
+import type { AlarmReadingId, Reading, ReadingId } from '../../report/reading.ts';
+import { limitsText } from './interval-text.ts';
 
 /** The readings of an alarm in the working: their names, their formulas with the typed numbers, and where the method comes from. */
 
@@ -42,17 +43,26 @@ export function alarmFormula(question: Question, id: AlarmReadingId): string {
         ? share(`${others.right} x ${prevalence.wrong}`, `${own.wrong} x ${prevalence.right}`)
         : share(cells[3] ?? '', cells[1] ?? '');
     case 'likelihood-ratio-positive':
-      return `${own.right} / (${others.wrong})`.replace('((', '(').replace('))', ')');
+      return `${own.right} / ${bracketed(others.wrong)}`;
     case 'likelihood-ratio-negative':
-      return `${own.wrong} / (${others.right})`.replace('((', '(').replace('))', ')');
+      return `${own.wrong} / ${bracketed(others.right)}`;
     case 'sensitivity':
-      return own.right;
+      return alone(own.right);
     case 'specificity':
-      return others.right;
+      return alone(others.right);
     case 'prevalence':
-      return prevalence.right;
+      return alone(prevalence.right);
   }
 }
+
+/** A share by itself: without brackets, a range with the word for the value taken. */
+function alone(text: string): string {
+  const bare = text.replace(/^\(([^()]*)\)$/, '$1');
+  return isSpan(bare) ? `the middle of ${bare}` : bare;
+}
+
+/** Brackets around what is itself a quotient, where it has none yet. */
+const bracketed = (text: string) => (/^\([^()]*\)$/.test(text) || !text.includes('/') ? text : `(${text})`);
 
 interface SideTexts {
   readonly right: string;
@@ -79,6 +89,8 @@ const turnedRound = (text: string, turned: boolean): SideTexts =>
 const countsText = ({ part, whole }: Extract<AlarmGiven, { kind: 'counts' }>) =>
   / of /.test(part.text) ? `(${part.text})` : `${part.text}/${whole.text}`;
 
+const isSpan = (text: string) => / to |\d-\d/.test(text);
+
 /** `1 in 250` is `1/250` in a formula; a range stands in brackets. */
 const plain = (text: string) => (/ to |\d-\d/.test(text) ? `(${text})` : text.replace(/ (?:in|per) /, '/'));
 
@@ -91,4 +103,35 @@ function prevalenceTexts(question: AlarmQuestion): SideTexts {
   }
   const given = question.prevalence?.given;
   return given === undefined ? { right: '', wrong: '' } : sideTexts(given);
+}
+
+const isRange = (side: AlarmShare | null) => side?.share.precision === 'range';
+
+/** Whether one of the figures is a range, so that no single value stands for the whole. */
+export const isRanged = ({ sensitivity, specificity, prevalence }: AlarmQuestion) =>
+  isRange(sensitivity) || isRange(specificity) || isRange(prevalence);
+
+/** Whether a reading comes from a figure that is a range. */
+export function dependsOnRange(question: AlarmQuestion, id: ReadingId): boolean {
+  switch (id) {
+    case 'sensitivity':
+    case 'specificity':
+    case 'prevalence':
+      return isRange(question[id]);
+    case 'likelihood-ratio-positive':
+    case 'likelihood-ratio-negative':
+      return isRange(question.sensitivity) || isRange(question.specificity);
+    default:
+      return isRanged(question);
+  }
+}
+
+/** What rounding or a range allows a reading, where it shows at the digits printed. */
+export function alarmRangePart(question: AlarmQuestion, reading: Reading): string | null {
+  if (reading.roundingRange === null) return null;
+  const text = limitsText(reading, reading.roundingRange, 'full');
+  if (/^(.+) to \1$/.test(text)) return null;
+  return dependsOnRange(question, reading.id)
+    ? `at the middle of what is given, which allows ${text}`
+    : `rounding alone allows ${text}`;
 }

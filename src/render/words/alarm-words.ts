@@ -1,13 +1,15 @@
 import { alarmFigures } from '../../../grammar/print-alarm.ts';
 import type { AlarmQuestion } from '../../../grammar/question.ts';
-import { oneSample, ratesOf } from '../../report/alarm-rates.ts';
-import { naturalFrequencies, outOf } from '../../report/natural-frequencies.ts';
+import { ratesOf } from '../../report/alarm-rates.ts';
+import { countedNumbers, naturalFrequencies, outOf } from '../../report/natural-frequencies.ts';
 import type { Reading } from '../../report/reading.ts';
 import { readingsOf } from '../../report/report.ts';
 import type { AlarmReport } from '../../report/report.ts';
+import { dependsOnRange, isRanged } from './alarm-rows.ts';
 import { levelText, limitsText } from './interval-text.ts';
 import { capital } from './labels.ts';
-import { fixed, percent, ratio } from './numbers.ts';
+import { asCounted, forExample, inNaturalNumbers } from './natural-words.ts';
+import { fixed, plainPercent, ratio } from './numbers.ts';
 import type { Avoid, Post } from './telling.ts';
 
 /** An alarm in words: of so many alarms so many are real. */
@@ -16,13 +18,18 @@ const shortLength = 70;
 
 /** "Of 100 alarms about 11 are real (95% interval 5 to 21)." */
 export function alarmHeadline(report: AlarmReport): string {
-  return `Of ${realAlarms(report, 'full')}.`;
+  return predictive(report).estimate === null
+    ? 'With these figures there is never an alarm, so none can be real or false.'
+    : `Of ${realAlarms(report, 'full')}.`;
 }
 
 /** The headline's figure in at most 70 characters, or `null` where it does not fit. */
 export function alarmShortPost(report: AlarmReport): string | null {
+  const { estimate, roundingRange } = predictive(report);
+  // "None" and "all" from a rounded percentage need what rounding allows beside them.
+  if (estimate === null || ((estimate === 0 || estimate === 1) && roundingRange !== null)) return null;
   const text = `Of ${realAlarms(report, 'short')}.`;
-  return text.length <= shortLength && predictive(report).estimate !== null ? text : null;
+  return text.length <= shortLength ? text : null;
 }
 
 function predictive(report: AlarmReport): Reading {
@@ -31,17 +38,23 @@ function predictive(report: AlarmReport): Reading {
   return value;
 }
 
-/** "100 alarms about 11 are real (...)"; without any alarm it is said that there is none. */
+/** "100 alarms about 11 are real (...)". */
 function realAlarms(report: AlarmReport, detail: 'full' | 'short'): string {
   const value = predictive(report);
-  if (value.estimate === null) return 'no alarms nothing can be said: with these figures there is never one';
   const base = baseFor(value);
   const alarms = `${fixed(base, 0)} alarms`;
-  if (isRanged(report.question)) {
-    const { low, high } = value.roundingRange ?? { low: null, high: null };
-    return `${alarms} about ${among(low ?? 0, base)} to ${among(high ?? 1, base)} are real, over the range given (${note(value, base, 'short')})`;
+  const spread = isRanged(report.question) ? spreadOf(value, base) : null;
+  if (spread !== null) {
+    return `${alarms} about ${spread} are real, over all that the figures allow (${note(value, base, 'short')})`;
   }
-  return `${alarms} ${many(value.estimate, base, 'are real', 'is real')} (${note(value, base, detail)})`;
+  return `${alarms} ${many(value.estimate ?? NaN, base, 'are real', 'is real')} (${note(value, base, detail)})`;
+}
+
+/** "6 to 24": what a range allows, where its ends differ. */
+function spreadOf({ roundingRange }: Reading, base: number): string | null {
+  if (roundingRange === null) return null;
+  const [low, high] = [among(roundingRange.low ?? 0, base), among(roundingRange.high ?? 1, base)];
+  return low === high ? null : `${low} to ${high}`;
 }
 
 /** "about 11 are real"; "none is real" and "all are real" only where that is exact. */
@@ -61,9 +74,11 @@ function among(share: number, base: number): string {
 }
 
 /** The base at which the estimate shows, and at which the limits do not fall together. */
-function baseFor({ estimate, interval }: Reading): number {
+function baseFor({ estimate, interval, roundingRange }: Reading): number {
   const share = estimate === 0 || estimate === 1 ? null : estimate;
-  const near = [share, ...(share === null ? [interval?.high ?? null] : [])].filter((part) => part !== null);
+  const near = [share, ...(share === null ? [(interval ?? roundingRange)?.high ?? null] : [])].filter(
+    (part) => part !== null,
+  );
   let base = outOf(near);
   const same = () =>
     interval !== null &&
@@ -85,13 +100,8 @@ function note({ interval, roundingRange, whyNoInterval }: Reading, base: number,
   return rounded && detail === 'full' ? `rounding allows ${span(low, high)}; ${why}` : why;
 }
 
-/** Whether one of the figures is a range, so that no single value stands for the whole. */
-export function isRanged({ sensitivity, specificity, prevalence }: AlarmQuestion): boolean {
-  return [sensitivity, specificity, prevalence].some((side) => side?.share.precision === 'range');
-}
-
 /** What is checked, as typed: "wells"; else the word for anything that goes past an alarm. */
-const checked = ({ unit }: AlarmQuestion) => unit ?? 'checked';
+const checked = ({ unit, clauses }: AlarmQuestion) => clauses.among ?? unit ?? 'checked';
 
 /** The sentences that may be posted: alarms, silence, and the odds. */
 export function alarmPosts(report: AlarmReport): readonly Post[] {
@@ -101,29 +111,20 @@ export function alarmPosts(report: AlarmReport): readonly Post[] {
 function alarmsPost(report: AlarmReport): Post[] {
   const { question } = report;
   const value = predictive(report);
-  if (value.estimate === null) return [];
+  const share = value.estimate;
+  if (share === null) return [];
   const post = (text: string): Post[] => [{ reading: 'positive-predictive-value', text }];
-  const base = outOf([value.estimate]);
-  const about = `about ${among(value.estimate, base)} in ${fixed(base, 0)} (${note(value, base, 'short')}${fromCounts(question)})`;
-  const cells = oneSample(question);
+  const base = baseFor(value);
+  // Whole numbers would need one value for each figure.
   if (isRanged(question)) return post(`${figures(question)}: of ${realAlarms(report, 'short')}.`);
-  if (cells?.every(({ precision }) => precision === 'exact') === true) {
-    const [caught = 0, missed = 0, falseAlarms = 0, quiet = 0] = cells.map(({ value: count }) => count);
-    const sum = { cases: caught + missed, others: falseAlarms + quiet, alarms: caught + falseAlarms };
-    return post(
-      `Of ${fixed(sum.cases + sum.others, 0)} ${checked(question)}, ${fixed(sum.cases, 0)} were real cases and ${part(caught, sum.cases)} raised an alarm; of the ${fixed(sum.others, 0)} others, ${number(falseAlarms)} did too. So of ${fixed(sum.alarms, 0)} alarms ${number(caught)} were real, ${about}.`,
-    );
-  }
-  const natural = naturalFrequencies(question);
-  if (natural === null) return [];
-  const { cases, caught, others, falseAlarms, alarms } = natural;
-  return post(
-    `Of ${fixed(natural.base, 0)} ${checked(question)}, ${fixed(cases, 0)} are real cases and ${part(caught, cases)} raise an alarm; of the ${fixed(others, 0)} others, ${number(falseAlarms)} do too. So of ${fixed(alarms, 0)} alarms ${number(caught)} are real, ${about}.`,
-  );
+  const counted = countedNumbers(question);
+  const numbers = counted ?? naturalFrequencies(question, base);
+  if (numbers === null) return [];
+  const about = share === 0 || share === 1 ? '' : `, about ${among(share, base)} in ${fixed(base, 0)}`;
+  const remark = `${note(value, base, 'full')}${value.interval === null ? '' : fromCounts(question)}`;
+  const verbs = counted === null ? forExample : asCounted;
+  return post(`${inNaturalNumbers(numbers, checked(question), verbs)}${about} (${remark}).`);
 }
-
-const number = (count: number) => (count === 0 ? 'none' : fixed(count, 0));
-const part = (count: number, all: number) => (count === all ? 'all of them' : `${number(count)} of them`);
 
 /** ", from 50 real cases and 200 others": what an interval rests on, where the sentence does not say it already. */
 function fromCounts({ sensitivity, specificity, prevalence }: AlarmQuestion): string {
@@ -158,7 +159,7 @@ function silencePost(report: AlarmReport): Post[] {
   return [
     {
       reading: 'negative-predictive-value',
-      text: `${figures(question)}: ${silence(question, value, note(value, baseFor(value), 'short'))}.`,
+      text: `${figures(question)}: ${silence(question, value, note(value, baseFor(value), 'full'))}.`,
     },
   ];
 }
@@ -166,17 +167,27 @@ function silencePost(report: AlarmReport): Post[] {
 /** "of 10,000 quiet times about 3 hide a real case (...)". */
 function silence(question: AlarmQuestion, value: Reading, remark: string): string {
   const base = baseFor(value);
-  const share = value.estimate ?? NaN;
   const { unit } = question;
   const of = unit === null ? `${fixed(base, 0)} quiet times` : `${fixed(base, 0)} ${unit} without an alarm`;
   const words =
     unit === null ? ['hide a real case', 'hides a real case'] : ['are real cases', 'is a real case'];
-  return `of ${of} ${many(share, base, words[0] ?? '', words[1] ?? '')} (${remark})`;
+  const spread = isRanged(question) ? spreadOf(value, base) : null;
+  const count =
+    spread === null
+      ? many(value.estimate ?? NaN, base, words[0] ?? '', words[1] ?? '')
+      : `about ${spread} ${words[0] ?? ''}`;
+  return `of ${of} ${count} (${remark})`;
 }
 
 function oddsPost(report: AlarmReport): Post[] {
   const [value] = readingsOf(report, 'likelihood-ratio-positive');
-  if (value?.estimate == null || value.estimate === 0) return [];
+  if (
+    value?.estimate == null ||
+    value.estimate === 0 ||
+    value.estimate === 1 ||
+    dependsOnRange(report.question, value.id)
+  )
+    return [];
   const limits =
     value.interval === null
       ? note(value, 100, 'short')
@@ -192,18 +203,26 @@ function oddsPost(report: AlarmReport): Post[] {
 /** What is better not posted: a share of real cases passed off as a share of alarms, and silence as safety. */
 export function alarmAvoid(report: AlarmReport): readonly Avoid[] {
   const { sensitivity, falseAlarmRate } = ratesOf(report.question);
-  const caught = percent(sensitivity, 'full');
-  const falsely = percent(falseAlarmRate, 'full');
+  const caught = plainPercent(sensitivity);
+  const falsely = plainPercent(falseAlarmRate);
   const value = hidden(report);
   return [
-    {
-      because: `${caught} is the share of real cases that raise an alarm, not the share of alarms that are real.`,
-      text: `The alarm is ${caught} right.`,
-    },
-    {
-      because: `${falsely} is the share of the others that raise an alarm, not the share of alarms that are false.`,
-      text: `${falsely} of the alarms are false.`,
-    },
+    ...(sensitivity === 0
+      ? []
+      : [
+          {
+            because: `${caught} is the share of real cases that raise an alarm, not the share of alarms that are real.`,
+            text: `The alarm is ${caught} right.`,
+          },
+        ]),
+    ...(falseAlarmRate === 0
+      ? []
+      : [
+          {
+            because: `${falsely} is the share of the others that raise an alarm, not the share of alarms that are false.`,
+            text: `${falsely} of the alarms are false.`,
+          },
+        ]),
     ...(value?.estimate == null || value.estimate === 0
       ? []
       : [

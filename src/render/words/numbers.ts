@@ -63,6 +63,10 @@ export function percent(share: number, digits: Digits): string {
   return `${percentNumber(share, digits)}%`;
 }
 
+/** The same without zeros at the end: "4%", for a percentage that stands beside one as typed. */
+export const plainPercent = (share: number) =>
+  percent(share, 'short').replace(/\.0+%$|(\.\d*[1-9])0+%$/, '$1%');
+
 /** The same without the sign. */
 export function percentNumber(share: number, digits: Digits): string {
   const value = share * 100;

@@ -21,6 +21,7 @@ export function intervalNote(reading: Reading): string {
     case 'range-given':
     case 'mean-of-growth':
     case 'mean-over-cases':
+    case 'range':
     case 'spans-none':
     case 'no-cases-at-all':
     case 'too-large-for-exact':

@@ -2,8 +2,7 @@ import type { Question } from '../../../grammar/question.ts';
 import type { IntervalMethod, NoInterval, Reading, ReadingInterval } from '../../report/reading.ts';
 import type { Report } from '../../report/report.ts';
 import { coverageFormula } from './coverage-formulas.ts';
-import { alarmFormula, alarmMethod, alarmReadingNames } from './alarm-rows.ts';
-import { isRanged } from './alarm-words.ts';
+import { alarmFormula, alarmMethod, alarmRangePart, alarmReadingNames } from './alarm-rows.ts';
 import { estimateText, levelText, limitsText, workingText } from './interval-text.ts';
 import { cases, plainLabel } from './labels.ts';
 import { amount, beside, fixed } from './numbers.ts';
@@ -120,7 +119,7 @@ function valueOf(question: Question, reading: Reading): string {
     intervalPart(reading),
     atOncePart(reading),
     exactPart(reading),
-    roundingPart(question, reading),
+    question.kind === 'alarm' ? alarmRangePart(question, reading) : roundingPart(question, reading),
     limitPart(reading),
   ].filter((part) => part !== null);
   return parts.length === 0 ? estimate : `${estimate} (${parts.join('; ')})`;
@@ -167,6 +166,8 @@ export function whyText(why: NoInterval): string {
       return 'the mean of its two ends';
     case 'mean-over-cases':
       return 'the mean over all cases';
+    case 'range':
+      return 'given as a range';
     case 'no-exact-form':
       return 'no exact interval of this reading; leave out `exact` for the score interval';
     case 'too-large-for-exact':
@@ -195,7 +196,6 @@ function roundingPart(question: Question, reading: Reading): string | null {
   if (reading.roundingRange === null) return null;
   const limits = limitsText(reading, reading.roundingRange, 'full');
   const isRange = question.kind === 'shares' && question.groups.some(({ known }) => known.kind === 'range');
-  if (question.kind === 'alarm' && isRanged(question)) return `the range given allows ${limits}`;
   if (reading.id === 'population-share' && reading.whyNoInterval !== 'given') return `from ${limits}`;
   return isRange && reading.id !== 'case-share'
     ? `the range alone allows ${limits}`
