@@ -139,8 +139,6 @@ export const messages = {
     'Cases of unknown group are read as a count beside the counts of two groups: "no helmet 44, helmet 31, unknown 12".',
   'try-without-coverage': () => '"try" works the ratio out at several coverages, and this line has none.',
   'too-many-tried': (most: string) => `"try" takes up to ${most} coverages. Send the rest in a second line.`,
-  'not-yet-clause': (word: string) =>
-    `I do not read "${word}" yet. Leave it out and I answer the figure itself.`,
   'not-yet-alarm': () =>
     'I do not read tests and alarms yet. I can compare how often they went off: how many, out of how many.',
 } satisfies Record<string, (...pieces: string[]) => string>;

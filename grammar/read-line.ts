@@ -7,7 +7,9 @@ import type { Folded } from './fold.ts';
 import { withoutAbout } from './about.ts';
 import { joinSpacedNumbers } from './odd-figures.ts';
 import { parseTags } from './parser.ts';
-import type { Diagnosis, HelpTopic, LineLimits, LineReading } from './question.ts';
+import type { SaysClause } from './claim.ts';
+import type { Diagnosis, HelpTopic, LineLimits, LineReading, Question } from './question.ts';
+import { cutSays } from './says-cut.ts';
 import { settleLine } from './settle.ts';
 import { tableOf } from './table.ts';
 import { tagLine } from './tag.ts';
@@ -36,7 +38,10 @@ export function readLine(line: string, limits: LineLimits): LineReading {
   }
   const topic = helpTopicOf(line);
   if (topic !== null) return { kind: 'help', topic };
-  const typed = fold(line);
+  const { folded: typed, says, fault: saysFault } = cutSays(fold(line));
+  if (saysFault !== null) return refusal(saysFault);
+  if (says !== null && /^[\s;|]*$/.test(typed.text))
+    return refusal(diagnosis('clauses-only', { from: 0, to: line.length }));
   const table = typed.text.includes('\n') ? tableOf(typed) : ({ kind: 'none' } as const);
   if (table.kind === 'fault') return refusal(table.fault);
   const folded = table.kind === 'line' ? table.folded : typed;
@@ -63,8 +68,15 @@ export function readLine(line: string, limits: LineLimits): LineReading {
     mostGroups: limits.groups,
     mostLayers: limits.layers,
   });
-  return question.ok ? { kind: 'question', question: question.value } : refusal(question.fault);
+  return question.ok
+    ? { kind: 'question', question: says === null ? question.value : withSays(question.value, says) }
+    : refusal(question.fault);
 }
+
+const withSays = (question: Question, says: SaysClause): Question => ({
+  ...question,
+  clauses: { ...question.clauses, says },
+});
 
 const refusal = (fault: Diagnosis): LineReading => ({ kind: 'diagnosis', diagnosis: fault });
 
