@@ -38,8 +38,7 @@ export function cutSays(folded: Folded): SaysCut {
   if (first === null) return { folded, says: null, fault: null };
   const again = nextSays(text, first.to);
   const place = ({ from, to }: Stretch) => typedSpan(folded, from, to);
-  if (again !== null)
-    return { folded, says: null, fault: diagnosis('clause-twice', place(again), ['says']) };
+  if (again !== null) return { folded, says: null, fault: diagnosis('clause-twice', place(again), ['says']) };
   const sentence = tidy(text.slice(first.sentence.from, first.sentence.to));
   if (sentence === '') {
     const fault = diagnosis('clause-without-value', place(first), ['says', 'says "twice as often"']);
@@ -53,11 +52,7 @@ export function cutSays(folded: Folded): SaysCut {
 }
 
 /** Straight quotation marks inside become single ones, so that the sentence can be printed and read again. */
-const tidy = (sentence: string) =>
-  sentence
-    .replace(/"/g, "'")
-    .replace(/\s+/g, ' ')
-    .trim();
+const tidy = (sentence: string) => sentence.replace(/"/g, "'").replace(/\s+/g, ' ').trim();
 
 function nextSays(text: string, start: number): Found | null {
   const pattern = new RegExp(saysOrQuoted);
@@ -74,7 +69,8 @@ function clauseAt(text: string, from: number): Found | null {
   const lead = /^\s*:?[ \t]*/.exec(text.slice(from + 4, from + 40))?.[0] ?? '';
   const body = from + 4 + lead.length;
   // A line break behind the word leaves it without a sentence.
-  if (/\n/.test(lead)) return counts(text, from, '') ? { from, to: from + 4, sentence: { from: from + 4, to: from + 4 } } : null;
+  if (/\n/.test(lead))
+    return counts(text, from, '') ? { from, to: from + 4, sentence: { from: from + 4, to: from + 4 } } : null;
   const opening = text[body] ?? '';
   if (opening === '"') return straight(text, from, body + 1);
   if (/[\u201c\u201e\u00ab]/.test(opening)) return directed(text, from, body + 1, opening);
@@ -118,9 +114,10 @@ function straight(text: string, from: number, body: number): Found {
   const marks = [...line.matchAll(/"/g)].map(({ index }) => index);
   // An even number behind the opening one leaves it without a mark of its own.
   const within = marks.length % 2 === 0 ? line.slice(0, endOfPart(line, 0)) : line;
-  const closing = /"(?=\s*(?:[;|]|$|(?:level|per|reference|among|source|note|period|population|exact|only me)\b))/i.exec(
-    within,
-  );
+  const closing =
+    /"(?=\s*(?:[;|]|$|(?:level|per|reference|among|source|note|period|population|exact|only me)\b))/i.exec(
+      within,
+    );
   const at = closing?.index ?? (marks[0] !== undefined && marks[0] < within.length ? marks[0] : null);
   if (at === null) {
     const end = body + endOfPart(line, 0);

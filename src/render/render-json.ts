@@ -41,7 +41,7 @@ export function renderJson(line: string, report: Report): string {
       remarks: [],
     })),
     beside: besideOf(report, words.sides),
-    says: null,
+    says: saysOf(words),
     remarks: words.remarks,
     cautions: words.cautions,
     missing: words.missing,
@@ -110,6 +110,12 @@ function groupsOf(question: Question): readonly object[] {
   }
 }
 
+function saysOf({ says }: Telling) {
+  if (says === null) return null;
+  const { text, agreesWith, remarks, instead, line } = says;
+  return { text, agreesWith, remarks, instead, answer: line };
+}
+
 /** Ratios under other assumptions, side by side; numbers as in the readings. */
 function besideOf({ question, variants = [] }: Report, sides: Telling['sides']) {
   return variants.map(({ topic, coverageOf, rows, slope }, index) => ({
@@ -148,6 +154,7 @@ function clausesOf(question: Question) {
     everyone,
     onlyMe,
     tryCoverages,
+    says,
   } = question.clauses;
   return {
     level: level?.value ?? null,
@@ -162,6 +169,7 @@ function clausesOf(question: Question) {
     designEffect: designEffect?.value ?? null,
     countedEveryone: everyone,
     onlyMe,
+    ...(says === undefined ? {} : { says: says.text }),
     ...(tryCoverages === undefined ? {} : { try: tryCoverages.map(({ value }) => value) }),
   };
 }

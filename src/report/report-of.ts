@@ -8,6 +8,7 @@ import { ratesReport } from './rates-report.ts';
 import type { Reading } from './reading.ts';
 import { readingsOf } from './report.ts';
 import type { Report } from './report.ts';
+import { saysFor } from './says.ts';
 import { levelForAll, severalGroups } from './several-groups.ts';
 import { sharesReport } from './shares-report.ts';
 import { statedReport } from './stated-report.ts';
@@ -20,8 +21,14 @@ export function reportOf(question: Question): Report {
   const seen = couldShow(report, readingsOf(report, report.headline)[0]);
   const readings = overall === null ? report.readings : [overall, ...atOnce(report)];
   const cautions = seen === null ? report.cautions : withCaution(report.cautions, 'could-have-shown');
-  return { ...report, readings, cautions, againstRest, couldShow: seen };
+  const whole: Report = { ...report, readings, cautions, againstRest, couldShow: seen };
+  return { ...whole, says: saysFor(whole, (level) => reportOfKind(atLevel(question, level))) };
 }
+
+const atLevel = (question: Question, value: number): Question => ({
+  ...question,
+  clauses: { ...question.clauses, level: { value, text: '' } },
+});
 
 function reportOfKind(question: Question): Report {
   switch (question.kind) {
@@ -46,10 +53,7 @@ function atOnce(report: Report): readonly Reading[] {
   const pairs = readingsOf(report, headline).length;
   const value = levelForAll(report.level, pairs);
   if (value === null) return report.readings;
-  const wider = reportOfKind({
-    ...question,
-    clauses: { ...question.clauses, level: { value, text: '' } },
-  });
+  const wider = reportOfKind(atLevel(question, value));
   const second = readingsOf(wider, headline);
   return report.readings.map((each) => {
     const limits = each.id === headline ? second.find(({ of }) => of === each.of)?.interval : null;

@@ -2,7 +2,7 @@ import { avoidLine } from '../words/avoid.ts';
 import type { KnownBlock } from '@slack/types';
 import { printCanonical } from '../../../grammar/print-canonical.ts';
 import type { Report } from '../../report/report.ts';
-import { postLine, shortLine, sideWorking, workingLine } from '../render-text.ts';
+import { insteadLine, postLine, shortLine, sideWorking, workingLine } from '../render-text.ts';
 import { tell } from '../words/tell.ts';
 import type { Telling } from '../words/telling.ts';
 import { restColumn } from '../words/group-table.ts';
@@ -30,6 +30,8 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
   const post = hasFirstPost(words) ? words.posts[0] : undefined;
   // What one point more does stands with the readings.
   const beside = words.sides.filter(({ table: rows }) => rows !== null).map(({ line }) => line);
+  const said =
+    words.says === null ? [] : [`The line says “${shortened(words.says.text)}”. ${words.says.short}`];
   const lacking = lackingText(report);
   const careful = words.cautions.map(({ text }) => text).join(' ');
   const foot =
@@ -40,6 +42,7 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
   const blocks: KnownBlock[] = [
     paragraph(bold(words.headline)),
     paragraph(plain([words.readAs, ...words.remarks].join(' '))),
+    ...said.map((line) => paragraph(plain(line))),
     ...beside.map((line) => paragraph(plain(line))),
     ...(post === undefined ? [] : [paragraph(bold('To post:')), quotation(postLine(post))]),
     paragraph(bold('Careful: '), plain(careful)),
@@ -60,6 +63,7 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
     words.headline,
     words.readAs,
     ...words.remarks,
+    ...said,
     ...beside,
     ...(post === undefined ? [] : [`To post: ${postLine(post)}`]),
     `Careful: ${careful}`,
@@ -83,10 +87,13 @@ function tableShown({ table: rows }: Telling): Telling['table'] {
 
 /**
  * Whether the first sentence to post stands in the answer. Three or more groups have a table instead, and a sentence that takes
- * something for granted needs the others beside it: those stand with the readings.
+ * something for granted needs the others beside it: those stand with the readings, as they do where a sentence is under test.
  */
-const hasFirstPost = ({ table: rows, sides }: Telling) =>
-  rows === null && !sides.some(({ topic }) => topic === 'growth' || topic === 'unknown');
+const hasFirstPost = ({ table: rows, sides, says }: Telling) =>
+  rows === null && says === null && !sides.some(({ topic }) => topic === 'growth' || topic === 'unknown');
+
+/** As much of a sentence under test as there is room for beside what it agrees with. */
+const shortened = (text: string) => (text.length <= 60 ? text : `${text.slice(0, 59).trimEnd()}…`);
 
 /** One of the parts behind the answer's buttons, for the person who pressed. */
 export function renderPart(line: string, report: Report, part: PartBehind): SlackMessage {
@@ -123,6 +130,9 @@ function partLines(
               .slice(1)
               .map((cells) => `${title}, ${cells[0] ?? ''}: ${cells[1] ?? ''} (interval ${cells[2] ?? ''})`),
           ]),
+          ...(words.says === null
+            ? []
+            : [...words.says.remarks.slice(1).map(({ text }) => text), ...insteadLine(words.says)]),
           ...words.posts.slice(hasFirstPost(words) ? 1 : 0).map((post) => `To post: ${postLine(post)}`),
           ...shortLine(words),
         ],

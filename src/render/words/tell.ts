@@ -7,6 +7,7 @@ import { missingText } from './missing-words.ts';
 import { postsFor, shortPost } from './posts.ts';
 import { readAs, remarksText, statedText } from './read-as.ts';
 import { readingRow } from './reading-row.ts';
+import { saysTold } from './says-words.ts';
 import { sidesFor } from './side-by-side.ts';
 import type { Telling } from './telling.ts';
 
@@ -20,6 +21,7 @@ export function tell(report: Report): Telling {
     headline: headlineFor(report),
     readAs: readAs(report.question),
     remarks: [...statedText(report), ...remarksText(report.question)],
+    says: saysTold(report),
     posts: postsFor(report),
     shortPost: shortPost(report),
     cautions: report.cautions.map((id) => ({ id, text: cautionText(report, id) })),
