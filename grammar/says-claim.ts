@@ -7,6 +7,7 @@ import {
   fractionValue,
   hedgeAtEnd,
   numeral,
+  rangeBefore,
   percentSign,
   scaledNumber,
   wordNumber,
@@ -19,6 +20,8 @@ interface Piece {
   readonly direction: 'up' | 'down' | null;
   readonly from: number;
   readonly to: number;
+  /** What the limits of an interval that goes with it are per. */
+  readonly per?: number;
 }
 type Reader = (text: string) => Piece | null;
 
@@ -29,7 +32,12 @@ export function readClaim(sentence: string): Claim {
   if (text.length !== sentence.length) return { kind: 'none' };
   if (notShown.test(text)) return { kind: 'not-shown' };
   if (noDifference.test(text)) return { kind: 'no-difference' };
-  for (const read of readers) {
+  for (const read of comparisons) {
+    const piece = read(text);
+    if (piece !== null) return claimOf(text, piece);
+  }
+  if (alike.test(text)) return { kind: 'no-difference' };
+  for (const read of figuresAlone) {
     const piece = read(text);
     if (piece !== null) return claimOf(text, piece);
   }
@@ -37,26 +45,40 @@ export function readClaim(sentence: string): Claim {
 }
 
 const notShown =
-  /(?:no|not|without)(?: a| any)?(?: statistically)? significan|non-?significan|insignifican|no evidence of|not? shown/;
+  /(?:no|not|without)(?: a| any)?(?: statistically)? significan|non-?significan|insignifican|no evidence of|not? shown|(?:do|does|did) not show|no difference (?:is|was) shown/;
 const noDifference =
-  /(?<![a-z])(?:no(?: real| clear| measurable| relevant)? (?:difference|change|effect|increase|rise|decrease|drop)|not differ|same (?:risk|rate|chance|odds|as)|the same|unchanged|equally|just as (?:likely|often|many|high)|no (?:more|less) (?:likely|often)|no (?:higher|lower))(?![a-z])/;
+  /(?<![a-z])(?:no(?: real| clear| measurable| relevant)? (?:difference|change|effect|increase|rise|decrease|drop)|not differ|no (?:more|less) (?:likely|often)|no (?:higher|lower))(?![a-z])/;
+/** Said only where nothing is compared in figures: "if both times are equally long" claims nothing. */
+const alike =
+  /(?<![a-z])(?:same (?:risk|rate|chance|odds|as)|the same|unchanged|equally|just as (?:likely|often|many|high))(?![a-z])/;
 
-function claimOf(text: string, { measure, number, direction, from, to }: Piece): FigureClaim {
-  const interval = intervalBehind(text, to, measure);
+function claimOf(text: string, { measure, number, direction, from, to, per = 1 }: Piece): FigureClaim {
+  const interval = intervalBehind(text, to, measure, per);
   const behind = text.slice(to, to + 12);
-  const hedge = hedgeAtEnd(text.slice(0, from)) ?? (/^ or so(?![a-z])/.test(behind) ? 'about' : null);
+  const before = hedgeAtEnd(text.slice(0, from));
+  const hedge = before ?? (/^ or so(?![a-z])/.test(behind) ? 'about' : null);
   return {
     kind: 'figure',
     measure,
     ...number,
     text: text.slice(from, to).trim(),
     direction,
-    hedge,
+    // More than halved is less than half.
+    hedge: hedge !== null && text.startsWith('halv', from) ? turnedHedge[hedge] : hedge,
     about: aboutOf(text, from, to),
     interval,
     at: from,
   };
 }
+
+const turnedHedge = {
+  about: 'about',
+  nearly: 'over',
+  over: 'below',
+  'at-least': 'at-most',
+  'at-most': 'at-least',
+  below: 'over',
+} as const;
 
 /** What the words near the figure say it is about. */
 function aboutOf(text: string, from: number, to: number): FigureClaim['about'] {
@@ -96,6 +118,15 @@ function frequency(count: string, base: string): ClaimedNumber {
   return scaledNumber(own, 1 / all.value);
 }
 
+/** A number, or what lies between two where it is the end of a range. */
+function numberOrRange(text: string, from: number, spelled: string, what: 'change' | 'other'): ClaimedNumber {
+  const number = claimedNumber(spelled, what);
+  const start = rangeBefore(text, from);
+  const low = start === null ? null : claimedNumber(start, what);
+  if (low === null || low.value >= number.value) return number;
+  return { value: (low.value + number.value) / 2, low: low.low, high: number.high };
+}
+
 const points = search(
   `(${numeral})(?:${percentSign}[ -]?|[ -](?:percentage|per ?cent)[ -])?[ -]?(?:points?|pp|ppts?|pts)(?![a-z])`,
   (found, text) => {
@@ -118,9 +149,38 @@ const extra = search(
     const number = frequency(count ?? otherCount ?? '', base ?? otherBase ?? '');
     if (!(number.value <= 1)) return null;
     const down = /fewer|less|lower/.test(word ?? otherWord ?? '');
-    return { measure: 'extra', number, direction: down ? 'down' : 'up', ...placed(found) };
+    const per = claimedNumber(base ?? otherBase ?? '', 'other').value;
+    return { measure: 'extra', number, direction: down ? 'down' : 'up', ...placed(found), per };
   },
 );
+
+/** "Per 1,000 shifts: about 15 against about 3.8, 11 more". */
+const extraPer = search(
+  `(?<![a-z])(?:per|in|of) (${numeral})[^.;]*?(?:[:,][^;]*?[ ,])(${numeral}) (${more})(?! than \\d)(?![a-z])`,
+  (found) => {
+    const [whole, base, count, word] = found;
+    const number = frequency(count ?? '', base ?? '');
+    const from = found.index + whole.lastIndexOf(count ?? '');
+    const direction = /fewer|less|lower/.test(word ?? '') ? 'down' : 'up';
+    if (!(number.value <= 1)) return null;
+    return {
+      measure: 'extra',
+      number,
+      direction,
+      from,
+      to: found.index + whole.length,
+      per: claimedNumber(base ?? '', 'other').value,
+    };
+  },
+);
+
+/** "6 more", of which nobody says per what. */
+const moreAlone = search(`(${numeral}) (?:more|fewer)(?![a-z])`, (found, text) => {
+  const from = found.index;
+  const to = from + (found[1] ?? '').length;
+  const number = claimedNumber(found[1] ?? '', 'other');
+  return { measure: 'figure', number, direction: directionBehind(text, to), from, to };
+});
 
 const change = search(`(${numeral})${percentSign}`, (found, text) => {
   const { from, to } = placed(found);
@@ -132,7 +192,13 @@ const change = search(`(${numeral})${percentSign}`, (found, text) => {
   const direction = directionAround(text, from, to);
   return direction === null
     ? null
-    : { measure: 'change', number: shareOf(spelled, 'change'), direction, from, to };
+    : {
+        measure: 'change',
+        number: scaledNumber(numberOrRange(text, from, spelled, 'change'), 0.01),
+        direction,
+        from,
+        to,
+      };
 });
 
 const halfAgain = search(
@@ -144,7 +210,7 @@ const times = search(
   `(${numeral})(?: ?times| ?\u00d7| ?x|[ -]?fold)(?![a-z])(?! (?:a|per|each|every) (?:day|week|month|year))`,
   (found, text) => {
     const { from, to } = placed(found);
-    const number = claimedNumber(found[1] ?? '', 'other');
+    const number = numberOrRange(text, from, found[1] ?? '', 'other');
     const direction = directionBehind(text, to);
     if (direction !== null && !/fold$/.test(found[0]))
       return { measure: 'times-more', number, direction, from, to };
@@ -256,37 +322,45 @@ const figures = search(`(${numeral})(?!\\s*[:/]\\d)`, (found, text) => {
   };
 });
 
-/** In the order of how much the words say: a comparison before a share, a bare number last. */
-const readers: readonly Reader[] = [
+/** In the order of how much the words say. */
+const comparisons: readonly Reader[] = [
   points,
   extra,
+  extraPer,
   halfAgain,
   change,
   times,
   worded,
   fractions,
   namedRatio,
-  shares,
-  percentages,
-  most,
-  figures,
+  moreAlone,
 ];
+/** Shares, and a number without anything else last. */
+const figuresAlone: readonly Reader[] = [shares, percentages, most, figures];
 
 const limits = new RegExp(
   `(?:(\\d+(?:\\.\\d+)?) ?% ?(?:ci|c\\.i\\.|confidence interval|interval|confidence limits)|[([]|(?<![a-z])(?:ci|interval)(?![a-z]))[:,= ]*(?:ci|of|from|was|is|interval)?[:,= ]*(-?)(${numeral.replace('(?<![\\d.,a-z])', '')})(?:${percentSign})?(?: (?:more|fewer|higher|lower))?(?: to |-| - |, | and )(-?)(${numeral.replace('(?<![\\d.,a-z])', '')})`,
+  'g',
 );
 
 /** The interval that stands somewhere behind the figure, in the figure's own measure. */
-function intervalBehind(text: string, to: number, measure: ClaimMeasure): ClaimedInterval | null {
-  const found = limits.exec(text.slice(to));
-  if (found === null) return null;
+function intervalBehind(
+  text: string,
+  to: number,
+  measure: ClaimMeasure,
+  per: number,
+): ClaimedInterval | null {
+  const all = [...text.slice(to).matchAll(limits)];
+  // One with its level is the figure's; another may be that of a coverage.
+  const found = all.find(([, level]) => level !== undefined) ?? all[0];
+  if (found === undefined) return null;
   const [, level, lowSign = '', low = '', highSign = '', high = ''] = found;
   const inHundredths =
     measure === 'change' || measure === 'points' || measure === 'share' || measure === 'percentage';
   const limit = (sign: string, spelled: string) =>
     scaledNumber(
-      claimedNumber(spelled, measure === 'change' ? 'change' : 'other'),
-      (sign === '-' ? -1 : 1) * (inHundredths ? 0.01 : 1),
+      claimedNumber(spelled, measure === 'change' ? 'limit' : 'other'),
+      ((sign === '-' ? -1 : 1) * (inHundredths ? 0.01 : 1)) / per,
     );
   const share = level === undefined ? null : Number(level) / 100;
   return {

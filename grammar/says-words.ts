@@ -49,17 +49,28 @@ export const wordNumber = (value: number): ClaimedNumber => ({
 
 /**
  * A number as spelled, with what rounds to it. Zeros at the end of a whole number may be rounding too: 290% stands for 285% to
- * 295%. `zeros` bounds by how much, as a share of the number; a change in per cent follows from a ratio with one decimal, and
- * may then be off by 5.
+ * 295%. How much they may leave open depends on what the number is: a change in per cent follows from a ratio with one decimal,
+ * and may then be off by 5; a limit may be rounded to its first digit.
  */
-export function claimedNumber(spelled: string, zeros: 'change' | 'other'): ClaimedNumber {
+export function claimedNumber(spelled: string, what: 'change' | 'limit' | 'other'): ClaimedNumber {
   const plain = plainDigits(spelled);
   const value = Number(plain);
   const decimals = plain.split('.')[1]?.length ?? 0;
   const trailing = decimals > 0 || value === 0 ? 0 : (/0*$/.exec(plain)?.[0].length ?? 0);
-  const most = zeros === 'change' ? Math.min(value * 0.2, Math.max(5, value / 16)) : value * 0.05;
+  const most = {
+    change: Math.min(value * 0.2, Math.max(5, value / 16)),
+    limit: Infinity,
+    other: value * 0.05,
+  }[what];
   const half = trailing === 0 ? 0.5 * 10 ** -decimals : Math.max(0.5, Math.min(0.5 * 10 ** trailing, most));
   return { value, low: value - half, high: value + half };
+}
+
+const rangeStart = new RegExp(`(${numeral})(?: ?%| times)?(?: to | and | or | ?- ?)$`);
+
+/** The number before `from` where the two are a range: 2 to 3 times. */
+export function rangeBefore(text: string, from: number): string | null {
+  return rangeStart.exec(text.slice(Math.max(0, from - 40), from))?.[1] ?? null;
 }
 
 /** Thousands without their commas, a decimal comma as a point, a number word in digits. */

@@ -35,8 +35,8 @@ export type SaysFault =
   | {
       readonly id: 'from-wrong-base';
       readonly reading: Reading;
-      /** Divided by the group's own figure; the whole of the ratio taken for the change; or the change for the ratio. */
-      readonly base: 'own' | 'whole' | 'change' | 'other-total';
+      /** Divided by the group's own figure; the whole of the ratio taken for the change; the change for the ratio; or the counts without what they are out of. */
+      readonly base: 'own' | 'whole' | 'change' | 'counts' | 'other-total';
     }
   | {
       readonly id: 'rounded-first';
@@ -111,6 +111,9 @@ export interface Says {
   readonly remarks: readonly SaysRemark[];
   /** The reading whose sentence would be right; `null` where nothing needs to be written instead. */
   readonly instead: Reading | null;
-  /** `no-figure`: nothing in it could be held; `no-reading`: nothing here measures what it says. */
-  readonly held: 'held' | 'no-figure' | 'no-reading';
+  /**
+   * `no-figure`: nothing in it could be held; `no-reading`: nothing here measures what it says; `given`: it repeats a count as
+   * it was given, or, with `count-difference`, the difference of the two.
+   */
+  readonly held: 'held' | 'no-figure' | 'no-reading' | 'given' | 'count-difference';
 }

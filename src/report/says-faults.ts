@@ -133,6 +133,14 @@ function wrongBase(report: Report, pair: SaysPair, claim: FigureClaim): SaysFaul
   const [first] = ratios(report, pair, 'plain');
   if (first === undefined) return null;
   const { reading, value: ratio } = first;
+  const counts = countRatio(report, pair);
+  const ofCounts = counts !== null && claim.measure === 'change' ? signedChange(claim, counts) : counts;
+  if (
+    (claim.measure === 'change' || claim.measure === 'ratio') &&
+    ofCounts !== null &&
+    agrees(claim, ofCounts)
+  )
+    return { id: 'from-wrong-base', reading, base: 'counts' };
   if (claim.measure === 'change') {
     const own = claim.direction === 'down' ? 1 / ratio - 1 : 1 - 1 / ratio;
     if (agrees(claim, own)) return { id: 'from-wrong-base', reading, base: 'own' };
@@ -142,6 +150,17 @@ function wrongBase(report: Report, pair: SaysPair, claim: FigureClaim): SaysFaul
   if (claim.measure === 'ratio' && ratio > 2 && agrees(claim, ratio - 1))
     return { id: 'from-wrong-base', reading, base: 'change' };
   return null;
+}
+
+const signedChange = ({ direction }: FigureClaim, ratio: number) =>
+  direction === 'down' ? 1 - ratio : ratio - 1;
+
+/** The cases of the one group over those of the other, whatever their totals or times. */
+function countRatio({ question }: Report, pair: SaysPair): number | null {
+  if (question.kind !== 'counts' && question.kind !== 'rates') return null;
+  const [own, other] = [question.groups[pair.subject], question.groups[otherOf(pair)]];
+  if (own === undefined || other === undefined || other.cases.value === 0) return null;
+  return own.cases.value / other.cases.value;
 }
 
 /** A group's cases over another total: that of the other group, or of both. */

@@ -42,8 +42,8 @@ const comparing =
 
 /** The first group named that is not what another is compared with; and the one that is. */
 function namedIn(question: Question, sentence: string): { subject: number | null; reference: number | null } {
-  let text = ` ${sentence.toLowerCase().replace(/[^a-z0-9\u00c0-\uffff]+/g, ' ')} `;
-  const labels = question.groups.map(({ label }) => label?.toLowerCase() ?? null);
+  let text = ` ${sentence.toLowerCase().replace(/[^a-z0-9\u00c0-\u1fff\u2c00-\ud7ff\uf900-\ufaff]+/g, ' ')} `;
+  const labels = question.groups.map(({ label }, index) => label?.toLowerCase() ?? implied(question, index));
   const order = labels
     .map((label, index) => ({ label: label ?? '', index }))
     // "No helmet" before "helmet", which it holds.
@@ -51,15 +51,16 @@ function namedIn(question: Question, sentence: string): { subject: number | null
   const found: { readonly index: number; readonly at: number; readonly compared: boolean }[] = [];
   for (const { label, index } of order) {
     const others = labels.filter((_, at) => at !== index);
+    let first: { readonly index: number; readonly at: number; readonly compared: boolean } | null = null;
     for (const name of namesOf(label, others)) {
       const at = text.indexOf(` ${name} `);
       const plural = at === -1 ? text.indexOf(` ${name}s `) : at;
       if (plural === -1) continue;
-      found.push({ index, at: plural, compared: comparing.test(text.slice(0, plural + 1)) });
+      first ??= { index, at: plural, compared: comparing.test(text.slice(0, plural + 1)) };
       // What was taken for one group is no name of another; as many units, so that places stay.
       text = text.replaceAll(` ${name}`, ` ${'_'.repeat(name.length)}`);
-      break;
     }
+    if (first !== null) found.push(first);
   }
   const first = [...found].sort((a, b) => a.at - b.at);
   const subject = first.find(({ compared }) => !compared)?.index ?? null;
@@ -70,12 +71,19 @@ function namedIn(question: Question, sentence: string): { subject: number | null
   return { subject: other, reference };
 }
 
+/** The other group of a coverage line: "helmet" beside "no helmet". */
+function implied({ kind, groups }: Question, index: number): string | null {
+  const other = groups[1 - index]?.label?.toLowerCase();
+  if (kind !== 'shares' || groups.length !== 2 || other === undefined) return null;
+  return other.startsWith('no ') ? other.slice(3) : `no ${other}`;
+}
+
 const tooCommon =
   /^(?:before|after|the|and|with|without|group|other|rest|new|old|one|two|all|not|more|less|over|under)$/;
 
 /** How a group may be called: its label, "without a helmet" for "no helmet", or a word that it alone has. */
 function namesOf(label: string, others: readonly (string | null)[]): string[] {
-  const plain = label.replace(/[^a-z0-9\u00c0-\uffff]+/g, ' ').trim();
+  const plain = label.replace(/[^a-z0-9\u00c0-\u1fff\u2c00-\ud7ff\uf900-\ufaff]+/g, ' ').trim();
   if (plain === '' || tooCommon.test(plain)) return [];
   const without = /^no (.+)$/.exec(plain)?.[1];
   const own = plain

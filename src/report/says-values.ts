@@ -211,8 +211,9 @@ const hedged = 0.1;
 
 /** Whether a value agrees with a claim's number at its own precision, with the hedge that stands before it. */
 export function agrees(claim: Pick<FigureClaim, 'value' | 'low' | 'high' | 'hedge'>, value: number): boolean {
-  if (!Number.isFinite(value)) return false;
   const { value: claimed, low, high, hedge } = claim;
+  // A ratio without an upper end is at least anything.
+  if (!Number.isFinite(value)) return value === Infinity && hedge === 'at-least';
   const within = (from: number, to: number) => value >= from - hair(from) && value <= to + hair(to);
   switch (hedge) {
     case null:

@@ -18,7 +18,12 @@ export function saysFor(report: Report, at: AtLevel): Says | null {
   const [first] = pairs;
   if (first === undefined) return null;
   const { claim } = clause;
-  if (claim.kind !== 'figure') return inWords(report, clause, first);
+  if (claim.kind !== 'figure') {
+    const words = pairs.map((pair) => inWords(report, clause, pair));
+    return words.find(({ agreesWith }) => agreesWith.length > 0) ?? words[0] ?? null;
+  }
+  const given = asGiven(report, clause, claim, first);
+  if (given !== null) return given;
   const each = pairs.map((pair) => againstPair(report, clause, claim, pair, at));
   return each.find(({ agreesWith }) => agreesWith.length > 0) ?? each[0] ?? null;
 }
@@ -68,6 +73,22 @@ function againstPair(
     instead: settled ? null : insteadOf(report, pair, claim, remarks, worded),
     held: worded.length === 0 && fault === null ? 'no-reading' : 'held',
   };
+}
+
+/** A number without a unit that is one of the counts of the line, or the difference of two. */
+function asGiven(report: Report, clause: SaysClause, claim: FigureClaim, pair: SaysPair): Says | null {
+  if (claim.measure !== 'figure' || claim.interval !== null) return null;
+  const { question } = report;
+  if (question.kind === 'strata' || question.kind === 'stated') return null;
+  const counts = question.groups.map(({ cases }) => cases?.value ?? NaN);
+  const [own = NaN, other = NaN] = [
+    counts[pair.subject],
+    counts[pair.subject === pair.of ? (pair.against ?? pair.of) : pair.of],
+  ];
+  const difference = claim.direction === 'down' ? other - own : own - other;
+  const base = { clause, pair, agreesWith: [], remarks: [], instead: null };
+  if (claim.direction === null) return counts.includes(claim.value) ? { ...base, held: 'given' } : null;
+  return difference > 0 && difference === claim.value ? { ...base, held: 'count-difference' } : null;
 }
 
 const distinct = (found: readonly Comparable[]): Reading[] => [
@@ -134,7 +155,13 @@ function inWords(report: Report, clause: SaysClause, pair: SaysPair): Says {
     case 'not-shown':
       return shown
         ? { ...base, remarks: [remark('none')] }
-        : { ...base, agreesWith: [headline], remarks: [remark('none')] };
+        : {
+            ...base,
+            agreesWith: [headline],
+            // It says so itself.
+            remarks: /nor that/i.test(clause.text) ? [] : [remark('none')],
+            instead: null,
+          };
     default:
       return { ...base, remarks: [remark('none')] };
   }

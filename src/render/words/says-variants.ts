@@ -1,7 +1,6 @@
 import type { Reading } from '../../report/reading.ts';
 import type { IntervalVariant, Says, SaysRemark, VariantLimits } from '../../report/said.ts';
 import { methodText } from './reading-row.ts';
-import { percentNumber, ratio, points } from './numbers.ts';
 
 /** What each common way of working out an interval is called, with its source. */
 const variantNames: Readonly<Record<Exclude<IntervalVariant, 'own'>, string>> = {
@@ -52,21 +51,13 @@ function nameOf({ variant }: VariantLimits, reading: Reading): string {
   return reading.interval === null ? 'limits given here' : methodText(reading.interval);
 }
 
-/** A limit in the unit of the sentence. */
+/** A limit in the unit of the sentence, with digits enough to show what is off. */
 function written({ clause: { claim } }: Says, limit: number): string {
-  if (claim.kind !== 'figure') return ratio(limit, 'full');
-  switch (claim.measure) {
-    case 'change':
-      return `${percentNumber(limit, 'full')}%`;
-    case 'share':
-    case 'percentage':
-      return `${percentNumber(limit, 'full')}%`;
-    case 'points':
-    case 'extra':
-      return `${points(limit, 'full')} points`;
-    case 'ratio':
-    case 'times-more':
-    case 'figure':
-      return ratio(limit, 'full');
-  }
+  const inHundredths =
+    claim.kind === 'figure' &&
+    claim.measure !== 'ratio' &&
+    claim.measure !== 'times-more' &&
+    claim.measure !== 'figure';
+  const value = Number((inHundredths ? limit * 100 : limit).toPrecision(4));
+  return `${value < 0 ? '\u2212' : ''}${String(Math.abs(value))}${inHundredths ? '%' : ''}`;
 }

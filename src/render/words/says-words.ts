@@ -4,7 +4,7 @@ import type { Report } from '../../report/report.ts';
 import type { Says, SaysPair, SaysRemark } from '../../report/said.ts';
 import { changeText, estimateText, levelText, limitsText } from './interval-text.ts';
 import { capital, cases, label, perOne } from './labels.ts';
-import { ratio } from './numbers.ts';
+import { fixed, ratio } from './numbers.ts';
 import { postsFor } from './posts.ts';
 import { perExposure } from './rate-words.ts';
 import { comparison, fits, intervalNote } from './ratio-words.ts';
@@ -35,9 +35,17 @@ function agreementText(report: Report, says: Says): string {
   if (says.held === 'no-figure') return 'There is no figure in it that could be held against these.';
   if (says.held === 'no-reading')
     return 'Nothing here measures what it says, so it could not be held against these figures.';
+  if (says.held === 'given') return 'It repeats a figure as given; there is no comparison in it to hold.';
+  if (says.held === 'count-difference') return 'It is the difference of the two counts as given.';
   const { claim } = says.clause;
   const [reading] = says.agreesWith;
-  if (reading === undefined) return 'As worded it agrees with none of the readings.';
+  if (reading === undefined) {
+    const nearest =
+      says.remarks.length > 0 || says.instead === null || claim.kind !== 'figure'
+        ? ''
+        : `; ${nameOf(report, says.instead)} is ${valueText(report, says.instead, says.pair)}`;
+    return `As worded it agrees with none of the readings${nearest}.`;
+  }
   if (claim.kind === 'shown')
     return `As worded it agrees with ${nameOf(report, reading)}: its interval does not include “no difference”.`;
   if (claim.kind === 'not-shown')
@@ -79,7 +87,7 @@ function valueText({ question }: Report, reading: Reading, pair: SaysPair | null
   }
   const shown: Reading = turned ? { ...reading, estimate: -estimate } : reading;
   const text = estimateText(shown, 'full') ?? 'no value';
-  if (id === 'extra-cases') return `${text} per ${String(per ?? 1)}`;
+  if (id === 'extra-cases') return `${text} per ${fixed(per ?? 1, 0)}`;
   if (id === 'rate' || id === 'rate-difference' || id === 'pooled-rate-difference')
     return `${text} ${perExposure(question, per ?? 1)}`;
   return id === 'one-extra-per' ? `one for every ${text}` : text;
@@ -121,7 +129,7 @@ function remarkText(report: Report, says: Says, remark: SaysRemark): string {
     case 'share-as-risk':
       return shareRemark(report, says, remark);
     case 'other-way-round':
-      return `It goes the other way round: ${label(question, says.pair.subject)} against ${label(question, otherOf(says.pair))} the figures give ${value}.`;
+      return `It goes the other way round: for ${label(question, says.pair.subject)} against ${label(question, otherOf(says.pair))} the figures give ${value}.`;
     case 'from-wrong-base':
       return baseRemark(report, says, remark, own, value);
     case 'rounded-first':
@@ -192,6 +200,8 @@ function baseRemark(
       return `${claimed(says)} is the whole figure as a percentage of that of ${other}, not what it is higher or lower by; the ratio is ${value}.`;
     case 'change':
       return `${claimed(says)} is by how much it is higher; the ratio is ${value}.`;
+    case 'counts':
+      return `That sets the counts against each other, whatever they are out of; ${perOne(question)} the ratio is ${value}.`;
     case 'other-total':
       return `That is what ${own} counts over another total; over its own it is ${value}.`;
   }
