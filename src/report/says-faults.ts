@@ -23,8 +23,8 @@ export function faultOf(
 ): SaysFault | null {
   const tests: readonly (() => SaysFault | null)[] = [
     () => pointsAndPerCent(report, pair, claim),
-    () => shareAsRisk(report, pair, claim, sentence),
     () => hedgeTooStrong(report, pair, claim, sentence),
+    () => shareAsRisk(report, pair, claim, sentence),
     () => oddsAsRisk(report, pair, claim),
     () => otherWayRound(report, pair, claim, sentence),
     () => wrongBase(report, pair, claim),
@@ -132,7 +132,10 @@ function wrongBase(report: Report, pair: SaysPair, claim: FigureClaim): SaysFaul
   if (claim.measure === 'share') return otherTotal(report, pair, claim);
   const [first] = ratios(report, pair, 'plain');
   if (first === undefined) return null;
-  const { reading, value: ratio } = first;
+  const { value: ratio } = first;
+  // A change is said as what it would be as a change.
+  const [change] = claim.measure === 'change' ? changes(report, pair, claim) : [];
+  const { reading } = change ?? first;
   const counts = countRatio(report, pair);
   const ofCounts = counts !== null && claim.measure === 'change' ? signedChange(claim, counts) : counts;
   if (

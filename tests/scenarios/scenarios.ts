@@ -65,6 +65,19 @@ export const scenarios = {
   'stated-frequencies': '1 in 250 vs 1 in 400',
   'bare-counts': 'night 18 vs day 9',
   'without-labels': '18/1204 v 9/2377',
+  'says-agrees':
+    'night: 18 incidents out of 1,204 shifts vs day: 9 incidents out of 2,377 shifts; says "Night shifts had incidents 3.9 times as often"',
+  'says-rounded-first': 'night shift: 18 of 1,204 vs day shift: 9 of 2,377; says 275% higher',
+  'says-times-more': 'night shift: 18 of 1,204 vs day shift: 9 of 2,377; says 4 times more',
+  'says-with-interval':
+    'night shift: 18 of 1,204 vs day shift: 9 of 2,377; says "3.95 (95% CI 1.78 to 8.76)"',
+  'says-points-as-per-cent': 'late crossings from 4.4% to 5.2% says up 0.8%',
+  'says-from-the-later': 'ferry delays from 412 to 530; says 22% more',
+  'says-share-as-risk':
+    'no helmet: 44 of 75 injured, 38% of riders; says "59% of riders without a helmet were injured"',
+  'says-not-shown': 'night shift: 3 of 900 vs day shift: 4 of 800; says a third fewer',
+  'says-moved-point': 'harbour ferry: 31 of 9,240; says 3.4%',
+  'says-no-figure': 'night shift: 18 of 1,204 vs day shift: 9 of 2,377; says "Nights are the problem"',
 } as const satisfies Record<string, string>;
 
 export type ScenarioName = keyof typeof scenarios;

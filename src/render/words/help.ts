@@ -8,7 +8,7 @@ export interface Help {
 }
 
 const clauses =
-  'After a ; you can add: level 90%, per 1,000, reference day shift, among "registered riders, May", source https://..., note "...", exact, design effect 1.8, counted: everyone, only me.';
+  'After a ; you can add: level 90%, per 1,000, reference day shift, among "registered riders, May", source https://..., note "...", exact, design effect 1.8, counted: everyone, only me; and says "...", the sentence that you want to use.';
 
 /** The help for each topic: what to type and what comes back. */
 export const helpTopics = {
@@ -23,6 +23,7 @@ export const helpTopics = {
       'night shift: 18 of 1,204 vs day shift: 9 of 2,377',
       'cases: no helmet 44, helmet 31; coverage: no helmet 38%',
       '4.2% vs 2.6%',
+      'from 412 to 530; says "up 29%"',
     ],
   },
   counts: {

@@ -7,7 +7,7 @@ import { capital, cases, label, perOne } from './labels.ts';
 import { fixed, ratio } from './numbers.ts';
 import { postsFor } from './posts.ts';
 import { perExposure } from './rate-words.ts';
-import { comparison, fits, intervalNote } from './ratio-words.ts';
+import { comparison, intervalNote } from './ratio-words.ts';
 import { variantText } from './says-variants.ts';
 import type { SaysTold } from './telling.ts';
 
@@ -195,13 +195,13 @@ function baseRemark(
   const other = label(question, otherOf(says.pair));
   switch (base) {
     case 'own':
-      return `${claimed(says)} is the difference over the figure of ${own}; over that of ${other} the ratio is ${value}.`;
+      return `${claimed(says)} is the difference over the figure of ${own}; over that of ${other} it is ${value}.`;
     case 'whole':
-      return `${claimed(says)} is the whole figure as a percentage of that of ${other}, not what it is higher or lower by; the ratio is ${value}.`;
+      return `${claimed(says)} is the whole figure as a percentage of that of ${other}, not what it is higher or lower by; that is ${value}.`;
     case 'change':
       return `${claimed(says)} is by how much it is higher; the ratio is ${value}.`;
     case 'counts':
-      return `That sets the counts against each other, whatever they are out of; ${perOne(question)} the ratio is ${value}.`;
+      return `That sets the counts against each other, whatever they are out of; ${perOne(question)} it is ${value}.`;
     case 'other-total':
       return `That is what ${own} counts over another total; over its own it is ${value}.`;
   }
@@ -239,14 +239,14 @@ function ambiguous(report: Report, says: Says, reading: Reading | null): string 
   const value = claim?.value ?? NaN;
   if (claim?.direction === 'down')
     return `“Times fewer” has no fixed meaning; write what part of the other it is, or by how many per cent it is lower.`;
-  const [few, many] = [ratio(value, 'full'), ratio(value + 1, 'full')];
+  const [few, many] = [value, value + 1].map((each) => String(Number(each.toFixed(6))));
   const here =
     reading === null
       ? ''
       : reading.id === 'relative-change'
         ? ' Here the second fits.'
         : ` Here the first fits (${valueText(report, reading, says.pair)}).`;
-  return `“${claimed(says)} more” is ${few} times as many to some and ${many} times to others.${here}`;
+  return `“${claimed(says)} more” is ${few ?? ''} times as many to some and ${many ?? ''} times to others.${here}`;
 }
 
 function noDifference({
@@ -259,10 +259,10 @@ function noDifference({
       ? intervalNote(reading)
       : `${levelText(reading.interval.level)} interval ${limitsText(reading, reading.interval, 'full')}`;
   if (shown) return `These figures do show a difference (${note}).`;
-  const range = reading.interval === null ? 'a wide range' : fits(reading);
+  const range = reading.interval === null ? '' : ` (${note})`;
   return claims === 'none'
-    ? `The figures fit ${range}: that no difference is shown does not show that there is none.`
-    : `The figures fit ${range}: they do not show a difference, nor that there is none.`;
+    ? `The interval${range} includes “no difference” and much else: that no difference is shown does not show that there is none.`
+    : `The interval${range} includes “no difference”: the figures show no difference, nor that there is none.`;
 }
 
 /** A sentence that would be right: the one to post about that reading, else the reading in a sentence of its own. */
