@@ -87,9 +87,6 @@ function endOfPart(text: string, from: number): number {
 
 const figure = /\d(?:[\d,.]*\d)?(?:k|m|bn)?\s*(?:%|percent\b|per cent\b|[)\]])?\s*$/i;
 const connected = /\d\s*(?:of|out of|in|per|\/)\s*\d|\d ?%(?: of)?/i;
-const claimed =
-  /^(?:\d|twice|half|halved|doubl|tripl|treb|quadrupl|a (?:third|quarter|fifth|tenth|half)|(?:two|three|four|five|six|seven|eight|nine|ten) |about|nearly|almost|around|roughly|over|more|less|fewer|at (?:least|most)|up|down|rose|fell|cut|no |not |one in|most|significant|the same|equal)/i;
-
 /** Whether a bare `says` with this sentence is the clause: at a part's start or after a figure, and with no group behind it. */
 function counts(text: string, from: number, sentence: string): boolean {
   const before = text.slice(0, from);
@@ -100,8 +97,8 @@ function counts(text: string, from: number, sentence: string): boolean {
   if (colon !== -1 && connected.test(sentence.slice(colon))) return false;
   if (/^\s*$/.test(part)) return true;
   if (/\d\s*(?:of|out of|\/)\s*\d/i.test(sentence)) return false;
-  if (figure.test(part)) return true;
-  return connected.test(part) && claimed.test(sentence);
+  if (readClaim(tidy(sentence)).kind !== 'none') return figure.test(part) || connected.test(part);
+  return figure.test(part) && !/says/i.test(part);
 }
 
 /**

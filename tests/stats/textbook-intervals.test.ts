@@ -79,14 +79,14 @@ describe('textbook intervals', () => {
   });
 
   it.each(ofTwo)('%s have no limits that are no numbers, whatever the cells', (_, interval) => {
-    for (const cells of [
-      [0, 10, 0, 10],
-      [10, 10, 0, 10],
-      [0, 10, 5, 10],
-      [10, 10, 10, 10],
-      [1, 1e9, 3, 1e9],
-    ] as const) {
-      const limits = interval(groups(...cells), 0.95);
+    for (const each of [
+      groups(0, 10, 0, 10),
+      groups(10, 10, 0, 10),
+      groups(0, 10, 5, 10),
+      groups(10, 10, 10, 10),
+      groups(1, 1e9, 3, 1e9),
+    ]) {
+      const limits = interval(each, 0.95);
       if (limits === null) continue;
       expect(Number.isFinite(limits.low) && Number.isFinite(limits.high)).toBe(true);
     }

@@ -254,15 +254,15 @@ function noDifference({
   claims,
   shown,
 }: Extract<SaysRemark, { id: 'no-difference-shown' }>): string {
-  const note =
-    reading.interval === null
-      ? intervalNote(reading)
-      : `${levelText(reading.interval.level)} interval ${limitsText(reading, reading.interval, 'full')}`;
-  if (shown) return `These figures do show a difference (${note}).`;
-  const range = reading.interval === null ? '' : ` (${note})`;
+  const { interval } = reading;
+  const limits =
+    interval === null
+      ? 'The interval'
+      : `The ${levelText(interval.level)} interval (${limitsText(reading, interval, 'full')})`;
+  if (shown) return `${limits} leaves “no difference” out: these figures do show one.`;
   return claims === 'none'
-    ? `The interval${range} includes “no difference” and much else: that no difference is shown does not show that there is none.`
-    : `The interval${range} includes “no difference”: the figures show no difference, nor that there is none.`;
+    ? `${limits} includes “no difference” and much else: that none is shown does not show that there is none.`
+    : `${limits} includes “no difference”: the figures show no difference, nor that there is none.`;
 }
 
 /** A sentence that would be right: the one to post about that reading, else the reading in a sentence of its own. */
