@@ -4,7 +4,7 @@ import type { Part } from './parts.ts';
 import type { ClauseName } from './tags.ts';
 import * as token from './tokens.ts';
 
-/** What a part is, if it is a clause. `not-yet`: a clause of the language that is not read yet. */
+/** What a part is, if it is a clause; `says` is taken out of the line before. */
 export type ClausePart =
   | {
       readonly kind: 'clause';
@@ -13,8 +13,7 @@ export type ClausePart =
       readonly number: WrittenNumber | null;
       readonly numbers?: readonly WrittenNumber[];
     }
-  | { readonly kind: 'no-value'; readonly word: string; readonly example: string }
-  | { readonly kind: 'not-yet'; readonly word: string };
+  | { readonly kind: 'no-value'; readonly word: string; readonly example: string };
 
 const examples = {
   level: 'level 90%',
@@ -96,10 +95,8 @@ export function clauseOf(part: Part, folded: string): ClausePart | null {
             number,
           }
         : null;
-    case token.Says:
-      return { kind: 'not-yet', word: 'says' };
     default:
-      return notYet(part);
+      return /^try$/i.test(first.image) ? tryClause(tokens) : null;
   }
 }
 
@@ -127,13 +124,6 @@ function wordClause({ tokens }: Part): ClausePart | null {
 function numberAfterColon({ tokens }: Part): WrittenNumber | null {
   const third = tokens[2];
   return third?.tokenType === token.NumberToken ? writtenNumber(third.image, null) : null;
-}
-
-/** Clauses of the language that later kinds of question bring. */
-function notYet({ tokens }: Part): ClausePart | null {
-  const [first] = tokens;
-  if (first === undefined) return null;
-  return /^try$/i.test(first.image) ? tryClause(tokens) : null;
 }
 
 /** `try 30%, 38%, 50%`: coverages to work the ratio out at; the sign may stand behind the last one alone. */

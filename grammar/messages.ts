@@ -145,8 +145,6 @@ export const messages = {
     'Cases of unknown group are read as a count beside the counts of two groups: "no helmet 44, helmet 31, unknown 12".',
   'try-without-coverage': () => '"try" works the ratio out at several coverages, and this line has none.',
   'too-many-tried': (most: string) => `"try" takes up to ${most} coverages. Send the rest in a second line.`,
-  'not-yet-clause': (word: string) =>
-    `I do not read "${word}" yet. Leave it out and I answer the figure itself.`,
   'alarm-missing': (missing: string) =>
     `Missing: ${missing}. An alarm takes sensitivity, specificity and prevalence, or the four counts of alarms and silences.`,
   'alarm-accuracy': (text: string) =>

@@ -79,8 +79,6 @@ function startsLooseClause(tokens: readonly IToken[], at: number): boolean {
       return endsPart(tokens, at + 1);
     case token.Source:
       return next === token.Address;
-    case token.Says:
-      return next === token.Quoted;
     case token.Per:
       return next === token.NumberToken && endsPart(tokens, at + 2) && completeBefore(tokens, at);
     default:

@@ -195,6 +195,7 @@ function clauseParts({ clauses }: Question): string[] {
     ...(period === null ? [] : [`period ${quote(period)}`]),
     ...(source === null ? [] : [`source ${/^https?:\/\/[^\s|;"]+$/.test(source) ? source : quote(source)}`]),
     ...(note === null ? [] : [`note ${quote(note)}`]),
+    ...(clauses.says === undefined ? [] : [`says "${clauses.says.text}"`]),
     ...(clauses.tryCoverages === undefined
       ? []
       : [`try ${clauses.tryCoverages.map(({ text }) => text).join(', ')}`]),

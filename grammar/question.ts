@@ -3,6 +3,8 @@
  * Labels and nouns stand as they were typed. Positions are UTF-16 units of the typed line, `to` exclusive.
  */
 
+import type { SaysClause } from './claim.ts';
+
 /** A place in the line as typed: UTF-16 units, `to` exclusive. */
 export interface Span {
   readonly from: number;
@@ -51,6 +53,8 @@ export interface Clauses {
   readonly onlyMe: boolean;
   /** Coverages to work the ratio out at, from `try 30%, 38%, 50%`; only for shares. */
   readonly tryCoverages?: readonly TypedShare[];
+  /** The sentence under test. */
+  readonly says?: SaysClause;
 }
 
 /** How the line was read where that may surprise the person who typed it. `text` is the typed piece it is about. */

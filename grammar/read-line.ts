@@ -7,7 +7,10 @@ import type { Folded } from './fold.ts';
 import { withoutAbout } from './about.ts';
 import { joinSpacedNumbers } from './odd-figures.ts';
 import { parseTags } from './parser.ts';
-import type { Diagnosis, HelpTopic, LineLimits, LineReading } from './question.ts';
+import { printCanonical } from './print-canonical.ts';
+import type { SaysClause } from './claim.ts';
+import type { Diagnosis, HelpTopic, LineLimits, LineReading, Question } from './question.ts';
+import { cutSays } from './says-cut.ts';
 import { settleLine } from './settle.ts';
 import { tableOf } from './table.ts';
 import { tagAlarm } from './tag-alarm.ts';
@@ -38,7 +41,10 @@ export function readLine(line: string, limits: LineLimits): LineReading {
   }
   const topic = helpTopicOf(line);
   if (topic !== null) return { kind: 'help', topic };
-  const typed = fold(line);
+  const { folded: typed, says, fault: saysFault } = cutSays(fold(line));
+  if (saysFault !== null) return refusal(saysFault);
+  if (says !== null && /^[\s;|]*$/.test(typed.text))
+    return refusal(diagnosis('clauses-only', { from: 0, to: line.length }));
   const table = typed.text.includes('\n') ? tableOf(typed) : ({ kind: 'none' } as const);
   if (table.kind === 'fault') return refusal(table.fault);
   const folded = table.kind === 'line' ? table.folded : typed;
@@ -66,8 +72,20 @@ export function readLine(line: string, limits: LineLimits): LineReading {
     mostGroups: limits.groups,
     mostLayers: limits.layers,
   });
-  return question.ok ? { kind: 'question', question: question.value } : refusal(question.fault);
+  if (!question.ok) return refusal(question.fault);
+  if (says === null) return { kind: 'question', question: question.value };
+  // A sentence is held against ratios and differences between groups, and an alarm has none.
+  if (question.value.kind === 'alarm')
+    return refusal(
+      diagnosis('alarm-clause', { from: 0, to: line.length }, ['says'], [printCanonical(question.value)]),
+    );
+  return { kind: 'question', question: withSays(question.value, says) };
 }
+
+const withSays = (question: Question, says: SaysClause): Question => ({
+  ...question,
+  clauses: { ...question.clauses, says },
+});
 
 const refusal = (fault: Diagnosis): LineReading => ({ kind: 'diagnosis', diagnosis: fault });
 

@@ -84,11 +84,6 @@ class TaggingPass extends TagWriter {
         case 'no-value':
           this.refuse('clause-without-value', first.startOffset, part.end, [clause.word, clause.example]);
           return;
-        case 'not-yet':
-          this.refuse('not-yet-clause', first.startOffset, first.startOffset + first.image.length, [
-            clause.word,
-          ]);
-          return;
       }
     }
     this.fault ??= oddFigureIn(part.tokens, this.folded);

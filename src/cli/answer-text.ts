@@ -35,8 +35,12 @@ export function speakOnOneLine(answer: Answer, json: boolean): Spoken {
   switch (answer.kind) {
     case 'report': {
       if (json) return { output: renderJson(answer.line, answer.report), error: null, status: 0 };
-      const { headline, readAs } = tell(answer.report);
-      return { output: `${headline} ${readAs}`, error: null, status: 0 };
+      const { headline, readAs, says } = tell(answer.report);
+      return {
+        output: [headline, readAs, ...(says === null ? [] : [says.line])].join(' '),
+        error: null,
+        status: 0,
+      };
     }
     case 'help':
       return { output: helpLines(answer.topic).replaceAll('\n', ' '), error: null, status: 0 };

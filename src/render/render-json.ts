@@ -44,7 +44,7 @@ export function renderJson(line: string, report: Report): string {
       remarks: [],
     })),
     beside: besideOf(report, words.sides),
-    says: null,
+    says: saysOf(words),
     remarks: words.remarks,
     cautions: words.cautions,
     missing: words.missing,
@@ -115,6 +115,12 @@ function groupsOf(question: Question): readonly object[] {
   }
 }
 
+function saysOf({ says }: Telling) {
+  if (says === null) return null;
+  const { text, agreesWith, remarks, instead, line } = says;
+  return { text, agreesWith, remarks, instead, answer: line };
+}
+
 /** Ratios under other assumptions, side by side; numbers as in the readings. */
 function besideOf({ question, variants = [] }: Report, sides: Telling['sides']) {
   return variants.map(({ topic, coverageOf, rows, slope }, index) => ({
@@ -153,6 +159,7 @@ function clausesOf(question: Question) {
     everyone,
     onlyMe,
     tryCoverages,
+    says,
   } = question.clauses;
   return {
     level: level?.value ?? null,
@@ -167,6 +174,7 @@ function clausesOf(question: Question) {
     designEffect: designEffect?.value ?? null,
     countedEveryone: everyone,
     onlyMe,
+    ...(says === undefined ? {} : { says: says.text }),
     ...(tryCoverages === undefined ? {} : { try: tryCoverages.map(({ value }) => value) }),
   };
 }

@@ -4,7 +4,7 @@ import { placeExcerpt } from '../../grammar/place-excerpt.ts';
 import type { Report } from '../report/report.ts';
 import { fitsPost } from './words/posts.ts';
 import { tell } from './words/tell.ts';
-import type { Telling } from './words/telling.ts';
+import type { SaysTold, Telling } from './words/telling.ts';
 
 /** How headings are set off: bold on a terminal, plain elsewhere. */
 export type Emphasis = (text: string) => string;
@@ -17,6 +17,7 @@ export function renderText(report: Report, strong: Emphasis): string {
     words.readAs,
     ...words.remarks,
     '',
+    ...saysSection(words, strong),
     ...section('To post', [...words.posts.map(postLine), ...shortLine(words)], strong),
     ...section(
       'Careful',
@@ -43,6 +44,17 @@ export function renderText(report: Report, strong: Emphasis): string {
     words.limits,
   ].join('\n');
 }
+
+/** The sentence under test, what it agrees with, and what would be right instead. */
+function saysSection({ says }: Telling, strong: Emphasis): string[] {
+  if (says === null) return [];
+  const lines = [says.line, ...says.remarks.map(({ text }) => text), ...insteadLine(says)];
+  return section(`The line says: ${says.text}`, lines, strong);
+}
+
+/** The sentence that would be right, where there is one. */
+export const insteadLine = ({ instead }: SaysTold): string[] =>
+  instead === null ? [] : [`Instead: ${instead}`];
 
 /** One line of the working: "Risk ratio, night shift against day shift: 18/1,204 / (9/2,377) = 3.9485 (1.8145 to 8.5923). Miettinen-Nurminen score (1985)." */
 export function workingLine({ name, formula, long, method }: Telling['rows'][number]): string {

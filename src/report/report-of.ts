@@ -9,6 +9,7 @@ import { ratesReport } from './rates-report.ts';
 import type { Reading } from './reading.ts';
 import { readingsOf } from './report.ts';
 import type { GroupedReport, Report } from './report.ts';
+import { saysFor } from './says.ts';
 import { levelForAll, severalGroups } from './several-groups.ts';
 import { sharesReport } from './shares-report.ts';
 import { statedReport } from './stated-report.ts';
@@ -28,8 +29,15 @@ function withComparisons(report: GroupedReport): Report {
   const seen = couldShow(report, readingsOf(report, report.headline)[0]);
   const readings = overall === null ? report.readings : [overall, ...atOnce(report)];
   const cautions = seen === null ? report.cautions : withCaution(report.cautions, 'could-have-shown');
-  return { ...report, readings, cautions, againstRest, couldShow: seen };
+  const whole: GroupedReport = { ...report, readings, cautions, againstRest, couldShow: seen };
+  const at = (level: number) => ({ ...reportOfGroups(atLevel(question, level)), question });
+  return { ...whole, says: saysFor(whole, at) };
 }
+
+const atLevel = (question: GroupedQuestion, value: number): GroupedQuestion => ({
+  ...question,
+  clauses: { ...question.clauses, level: { value, text: '' } },
+});
 
 function reportOfGroups(question: GroupedQuestion): Report {
   switch (question.kind) {
@@ -54,10 +62,7 @@ function atOnce(report: GroupedReport): readonly Reading[] {
   const pairs = readingsOf(report, headline).length;
   const value = levelForAll(report.level, pairs);
   if (value === null) return report.readings;
-  const wider = reportOfGroups({
-    ...question,
-    clauses: { ...question.clauses, level: { value, text: '' } },
-  });
+  const wider = reportOfGroups(atLevel(question, value));
   const second = readingsOf(wider, headline);
   return report.readings.map((each) => {
     const limits = each.id === headline ? second.find(({ of }) => of === each.of)?.interval : null;

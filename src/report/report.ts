@@ -4,6 +4,7 @@ import type { CautionId } from './cautions.ts';
 import type { MissingId } from './missing.ts';
 import type { RatioVariants } from './ratio-variants.ts';
 import type { Reading, ReadingId } from './reading.ts';
+import type { Says } from './said.ts';
 
 /** A percentage that stood beside counts, held against them. */
 export interface StatedBeside {
@@ -41,6 +42,8 @@ export interface Report {
   readonly missing: readonly MissingId[];
   /** Ratios that stand beside the headline's, each under an assumption of its own. */
   readonly variants?: readonly RatioVariants[];
+  /** The sentence under test, held against the readings. */
+  readonly says?: Says | null;
 }
 
 /** A report of a question that compares groups, and one of an alarm. */

@@ -42,11 +42,6 @@ describe('grammar/GRAMMAR.md', () => {
     expect(lines).not.toEqual([]);
     expect(lines.map((line) => [line, kindOf(line)])).toEqual(lines.map((line) => [line, kind]));
   });
-  it('refuses each kind that is not read yet as such, not for another reason', () => {
-    const lines = blocks(section(text, 'Not read yet'), 'refused');
-    expect(lines).not.toEqual([]);
-    for (const line of lines) expect(kindOf(line), line).toMatch(/^not-yet-/);
-  });
   it.each(blocks(text, 'refused'))('%j is refused or asked about', (line) =>
     expect(readAs(line)).toBe('diagnosis'),
   );

@@ -51,6 +51,7 @@ const clauses = fc.subarray(
     'exact',
     'only me',
     'period "Jan to Jun"',
+    'says "67% higher; or “two thirds”, he says"',
   ],
   { minLength: 0, maxLength: 4 },
 );

@@ -42,6 +42,12 @@ describe.each(Object.entries(scenarios))('%s: every renderer tells the same', (_
     limits: string;
     readings: { id: string; estimate: number | null }[];
     beside: { text: string; ratios: unknown[] }[];
+    says: {
+      text: string;
+      agreesWith: string[];
+      remarks: { id: string; text: string }[];
+      instead: string;
+    } | null;
   };
   const root = renderRoot(line, report, context);
   const reply = renderReply(report, context);
@@ -108,6 +114,20 @@ describe.each(Object.entries(scenarios))('%s: every renderer tells the same', (_
     expect(json.beside.map((beside) => beside.text)).toEqual(words.sides.map((side) => side.line));
   });
 
+  it('says the same of the sentence under test in text, in JSON and in Slack', () => {
+    const { says } = words;
+    if (says === null) return void expect(json.says).toBeNull();
+    const { text: sentence, agreesWith, remarks, instead } = says;
+    expect(json.says).toMatchObject({ text: sentence, agreesWith, remarks, instead });
+    const slack = shown([...reply.blocks, ...parts.readings.blocks]);
+    for (const each of [...remarks.map((remark) => remark.text), ...(instead === null ? [] : [instead])]) {
+      expect(text).toContain(each);
+      expect(slack).toContain(each);
+    }
+    expect(text).toContain(says.line);
+    expect(shown(reply.blocks)).toContain(says.line.replace(/^[A-Z]\w+ (?:\w+ )?it /, ''));
+  });
+
   it('says in the text of every message each number that its blocks show', () => {
     for (const message of [root, reply, ...Object.values(parts)]) {
       const spoken = numbersIn(decoded(message.text));
@@ -164,6 +184,30 @@ describe.each(Object.entries(scenarios))('%s: every renderer tells the same', (_
     if (!/do not show a difference/.test(words.headline)) return;
     for (const post of words.posts) expect(post.text).toMatch(/do not show a difference/);
   });
+});
+
+describe('a sentence under test', () => {
+  const sentences = [
+    'Riders without a helmet were 1.42 times as likely to be injured as the others were in May',
+    '295% higher',
+    '2.3 (95% CI 1.2 to 4.4)',
+    'no difference',
+    '7 times more',
+  ];
+  it.each(Object.values(scenarios).filter((line) => !/ says /.test(line)))(
+    'leaves the answer to %j within what a phone shows, and nothing lost',
+    (line) => {
+      for (const sentence of sentences) {
+        const report = reportFor(`${line}${line.includes('\t') ? '\n' : '; '}says "${sentence}"`);
+        const reply = renderReply(report, context);
+        expect(shown(reply.blocks).length, sentence).toBeLessThanOrEqual(750);
+        const slack = shown([...reply.blocks, ...renderPart(line, report, 'readings').blocks]);
+        const { cautions, says, sides } = tell(report);
+        for (const { text } of [...cautions, ...(says?.remarks ?? [])]) expect(slack).toContain(text);
+        for (const side of sides) expect(slack).toContain(side.line);
+      }
+    },
+  );
 });
 
 describe('typed text in messages', () => {

@@ -70,6 +70,19 @@ export const scenarios = {
     'water alarm: sensitivity 46 of 50, false alarms 6 of 200, prevalence 1 in 250 wells',
   'water-alarm-one-sample': 'caught 46, missed 4, false alarms 30, quiet 920',
   'water-alarm-range': 'water alarm: sensitivity 92%, specificity 97%, prevalence 0.2-1% of wells',
+  'says-agrees':
+    'night: 18 incidents out of 1,204 shifts vs day: 9 incidents out of 2,377 shifts; says "Night shifts had incidents 3.9 times as often"',
+  'says-rounded-first': 'night shift: 18 of 1,204 vs day shift: 9 of 2,377; says 275% higher',
+  'says-times-more': 'night shift: 18 of 1,204 vs day shift: 9 of 2,377; says 4 times more',
+  'says-with-interval':
+    'night shift: 18 of 1,204 vs day shift: 9 of 2,377; says "3.95 (95% CI 1.78 to 8.76)"',
+  'says-points-as-per-cent': 'late crossings from 4.4% to 5.2% says up 0.8%',
+  'says-from-the-later': 'ferry delays from 412 to 530; says 22% more',
+  'says-share-as-risk':
+    'no helmet: 44 of 75 injured, 38% of riders; says "59% of riders without a helmet were injured"',
+  'says-not-shown': 'night shift: 3 of 900 vs day shift: 4 of 800; says a third fewer',
+  'says-moved-point': 'harbour ferry: 31 of 9,240; says 3.4%',
+  'says-no-figure': 'night shift: 18 of 1,204 vs day shift: 9 of 2,377; says "Nights are the problem"',
 } as const satisfies Record<string, string>;
 
 export type ScenarioName = keyof typeof scenarios;

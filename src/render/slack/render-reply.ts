@@ -2,14 +2,15 @@ import { avoidLine } from '../words/avoid.ts';
 import type { KnownBlock } from '@slack/types';
 import { printCanonical } from '../../../grammar/print-canonical.ts';
 import type { Report } from '../../report/report.ts';
-import { postLine, shortLine, sideWorking, workingLine } from '../render-text.ts';
+import { insteadLine, postLine, shortLine, sideWorking, workingLine } from '../render-text.ts';
 import { tell } from '../words/tell.ts';
 import type { Telling } from '../words/telling.ts';
-import { restColumn } from '../words/group-table.ts';
 import { lackingText } from '../words/missing-words.ts';
 import type { CheckContext, PartBehind, SlackMessage } from './message.ts';
 import { bold, box, buttons, escape, list, paragraph, person, plain, quotation, table } from './rich-text.ts';
 import { quoteOf } from './render-root.ts';
+import { replyRoom } from './reply-room.ts';
+import type { ReplyRoom } from './reply-room.ts';
 
 /** Longest top-level text: Slack splits longer ones into several messages. */
 const textLength = 3_900;
@@ -26,12 +27,10 @@ const buttonWords = {
 export function renderReply(report: Report, context: CheckContext): SlackMessage {
   const words = tell(report);
   // Three or more groups, and layers, have a table instead; a large one and their sentences stand with the readings.
-  const shownTable = tableShown(words);
+  const { table: shownTable, beside, said, cautions } = roomFor(report, words);
   const post = hasFirstPost(words) ? words.posts[0] : undefined;
-  // What one point more does stands with the readings.
-  const beside = words.sides.filter(({ table: rows }) => rows !== null).map(({ line }) => line);
   const lacking = lackingText(report);
-  const careful = words.cautions.map(({ text }) => text).join(' ');
+  const careful = cautions.join(' ');
   const foot =
     context.number === null
       ? 'Only you see this answer; it has no number.'
@@ -40,6 +39,7 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
   const blocks: KnownBlock[] = [
     paragraph(bold(words.headline)),
     paragraph(plain([words.readAs, ...words.remarks].join(' '))),
+    ...(said === null ? [] : [paragraph(plain(said))]),
     ...beside.map((line) => paragraph(plain(line))),
     ...(post === undefined ? [] : [paragraph(bold('To post:')), quotation(postLine(post))]),
     paragraph(bold('Careful: '), plain(careful)),
@@ -60,6 +60,7 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
     words.headline,
     words.readAs,
     ...words.remarks,
+    ...(said === null ? [] : [said]),
     ...beside,
     ...(post === undefined ? [] : [`To post: ${postLine(post)}`]),
     `Careful: ${careful}`,
@@ -71,22 +72,23 @@ export function renderReply(report: Report, context: CheckContext): SlackMessage
   return { text: `${withinText(escape(text))}\n${end}`, blocks };
 }
 
-/** How many characters of a table the answer itself shows; a larger one stands behind "All readings". */
-const tableLength = 330;
-
-function tableShown({ table: rows }: Telling): Telling['table'] {
-  if (rows === null) return null;
-  // The last column of a wide table stands with the readings.
-  const narrow = rows.map((row) => (rows[0]?.at(-1) === restColumn ? row.slice(0, -1) : row));
-  return narrow.flat().join('').length <= tableLength ? narrow : null;
-}
-
 /**
  * Whether the first sentence to post stands in the answer. Three or more groups have a table instead, and a sentence that takes
- * something for granted needs the others beside it: those stand with the readings.
+ * something for granted needs the others beside it: those stand with the readings, as they do where a sentence is under test.
  */
-const hasFirstPost = ({ table: rows, sides }: Telling) =>
-  rows === null && !sides.some(({ topic }) => topic === 'growth' || topic === 'unknown');
+const hasFirstPost = ({ table: rows, sides, says }: Telling) =>
+  rows === null && says === null && !sides.some(({ topic }) => topic === 'growth' || topic === 'unknown');
+
+/** What of the answer stands in the reply itself. */
+const roomFor = (report: Report, words: Telling): ReplyRoom =>
+  replyRoom(words, [
+    words.headline,
+    words.readAs,
+    ...words.remarks,
+    'Careful: ',
+    lackingText(report) ?? '',
+    words.limits,
+  ]);
 
 /** One of the parts behind the answer's buttons, for the person who pressed. */
 export function renderPart(line: string, report: Report, part: PartBehind): SlackMessage {
@@ -109,11 +111,13 @@ function partLines(
   part: PartBehind,
 ): { title: string; lines: readonly string[] } {
   switch (part) {
-    case 'readings':
+    case 'readings': {
+      const room = roomFor(report, words);
       return {
         title: 'All readings',
         lines: [
-          ...(tableShown(words) === null
+          ...room.behind,
+          ...(room.table === null
             ? (words.table ?? []).map((row) => row.filter((cell) => cell !== '').join('; '))
             : []),
           ...words.rows.map(({ name, value }) => `${name}: ${value}`),
@@ -123,10 +127,14 @@ function partLines(
               .slice(1)
               .map((cells) => `${title}, ${cells[0] ?? ''}: ${cells[1] ?? ''} (interval ${cells[2] ?? ''})`),
           ]),
+          ...(words.says === null
+            ? []
+            : [...words.says.remarks.slice(1).map(({ text }) => text), ...insteadLine(words.says)]),
           ...words.posts.slice(hasFirstPost(words) ? 1 : 0).map((post) => `To post: ${postLine(post)}`),
           ...shortLine(words),
         ],
       };
+    }
     case 'working':
       return { title: 'Working', lines: [...words.rows.map(workingLine), ...words.sides.map(sideWorking)] };
     case 'questions':

@@ -8,7 +8,7 @@ export interface Help {
 }
 
 const clauses =
-  'After a ; you can add: level 90%, per 1,000, reference day shift, among "registered riders, May", source https://..., note "...", exact, design effect 1.8, counted: everyone, only me.';
+  'After a ; you can add: level 90%, per 1,000, reference day shift, among "registered riders, May", source https://..., note "...", exact, design effect 1.8, counted: everyone, only me; and says "...", the sentence that you want to use.';
 
 /** The help for each topic: what to type and what comes back. */
 export const helpTopics = {
@@ -24,6 +24,7 @@ export const helpTopics = {
       'cases: no helmet 44, helmet 31; coverage: no helmet 38%',
       '4.2% vs 2.6%',
       'alarm: sensitivity 92%, specificity 97%, prevalence 0.4%',
+      'from 412 to 530; says "up 29%"',
     ],
   },
   counts: {

@@ -8,6 +8,7 @@ import { missingText } from './missing-words.ts';
 import { postsFor, shortPost } from './posts.ts';
 import { readAs, remarksText, statedText } from './read-as.ts';
 import { readingRow } from './reading-row.ts';
+import { saysTold } from './says-words.ts';
 import { sidesFor } from './side-by-side.ts';
 import type { Telling } from './telling.ts';
 
@@ -32,10 +33,11 @@ export function tell(report: Report): Telling {
   };
 }
 
-type OwnWords = Pick<Telling, 'headline' | 'posts' | 'shortPost' | 'table' | 'avoid'>;
+type OwnWords = Pick<Telling, 'headline' | 'says' | 'posts' | 'shortPost' | 'table' | 'avoid'>;
 
 const ofGroups = (report: GroupedReport): OwnWords => ({
   headline: headlineFor(report),
+  says: saysTold(report),
   posts: postsFor(report),
   shortPost: shortPost(report),
   table: tableFor(report),
@@ -44,6 +46,7 @@ const ofGroups = (report: GroupedReport): OwnWords => ({
 
 const ofAlarm = (report: AlarmReport): OwnWords => ({
   headline: alarmHeadline(report),
+  says: null,
   posts: alarmPosts(report),
   shortPost: alarmShortPost(report),
   table: null,

@@ -1,6 +1,7 @@
 import type { CautionId } from '../../report/cautions.ts';
 import type { MissingId } from '../../report/missing.ts';
 import type { Reading, ReadingId } from '../../report/reading.ts';
+import type { SaysRemark } from '../../report/said.ts';
 
 /** One sentence that may be posted, with its denominators and interval inside it, so that it can be copied alone. */
 export interface Post {
@@ -40,6 +41,19 @@ export interface Side {
   readonly working: string;
 }
 
+/** The sentence under test, held against the readings. */
+export interface SaysTold {
+  readonly text: string;
+  /** Which readings it agrees with as worded. */
+  readonly line: string;
+  readonly agreesWith: readonly ReadingId[];
+  readonly remarks: readonly { readonly id: SaysRemark['id']; readonly text: string }[];
+  /** A sentence that would be right; `null` where nothing needs to be written instead. */
+  readonly instead: string | null;
+  /** The line and the first remark, for where there is little room. */
+  readonly short: string;
+}
+
 /** The answer in words. Every renderer draws from this one value, so that all of them say the same. */
 export interface Telling {
   /** Complete in itself; within 110 characters for labels of usual length. */
@@ -47,6 +61,8 @@ export interface Telling {
   readonly readAs: string;
   /** How the line was read where that may surprise, and stated percentages held against the counts. */
   readonly remarks: readonly string[];
+  /** `null` where no sentence was given to be tested. */
+  readonly says: SaysTold | null;
   readonly posts: readonly Post[];
   /** The main sentence's short form of at most 70 characters, or `null` where none fits. */
   readonly shortPost: string | null;
