@@ -1,18 +1,18 @@
-import type { CountsQuestion, SharesQuestion } from '../../../grammar/question.ts';
+import type { CountsQuestion } from '../../../grammar/question.ts';
 import type { Reading, ReadingId } from '../../report/reading.ts';
 import { readingsOf, shownDirection } from '../../report/report.ts';
 import type { GroupedReport as Report } from '../../report/report.ts';
 import { changePosts } from './change-posts.ts';
-import { assumption, coveragePhrase, unknownSentence, ofKnownGroup } from './coverage-words.ts';
-import { grantedNote, wanting } from './coverage-posts.ts';
-import { changeText, countedMore, limitsText } from './interval-text.ts';
-import { capital, cases, casesAsTyped, Label, label, perOne } from './labels.ts';
+import { assumption } from './coverage-words.ts';
+import { changeText, limitsText } from './interval-text.ts';
+import { cases, Label, label, perOne } from './labels.ts';
 import { amount, beside, fixed, percent, points, ratio } from './numbers.ts';
 import { compared, comparison, intervalNote } from './ratio-words.ts';
 import { noneShown } from './none-shown.ts';
 import { manyPer } from './rate-words.ts';
 import { ratesPosts } from './rates-posts.ts';
 import { quantityText, rateText } from './read-as.ts';
+import { madeUp, sharesPosts } from './shares-posts.ts';
 import { strataPosts } from './strata-words.ts';
 import type { Post } from './telling.ts';
 
@@ -141,28 +141,6 @@ function changePost(report: Report, rows: string): Post[] {
   ];
 }
 
-/** For shares: "Per rider, that is 130% more cases than ...", since the two shares in front are not what is compared. */
-function shareChangePost(report: Report, rows: string, reference: string): Post[] {
-  const [change] = readingsOf(report, 'relative-change');
-  if (change?.estimate == null || change.interval === null) return [];
-  const more = countedMore(changeText(change.estimate, 'short'));
-  const granted = assumption(report.question);
-  if (granted !== null) {
-    return [
-      {
-        reading: 'relative-change',
-        text: `${rows} ${granted} ${more} ${cases(report.question)} ${perOne(report.question)} than ${reference} (${countedMore(grantedNote(change))}).`,
-      },
-    ];
-  }
-  return [
-    {
-      reading: 'relative-change',
-      text: `${rows} ${capital(perOne(report.question))}, that is ${more} ${cases(report.question)} than ${reference} (${countedMore(intervalNote(change))}).`,
-    },
-  ];
-}
-
 function differencePost(report: Report, question: CountsQuestion): Post[] {
   const [difference] = readingsOf(report, 'risk-difference');
   if (difference?.estimate == null || difference.against === null) return [];
@@ -222,56 +200,6 @@ function extraPost(report: Report): Post[] {
       text: `Per ${fixed(per, 0)}${counted}: about ${frequency(extra.of)} against about ${frequency(extra.against)}, ${beside(Math.abs(extra.estimate), 0, 'short')} ${word} (${intervalNote(flipped)}).`,
     },
   ];
-}
-
-function sharesPosts(report: Report, question: SharesQuestion): Post[] {
-  const [ratioReading] = readingsOf(report, 'risk-ratio');
-  if (ratioReading === undefined) return [];
-  const group = question.groups[ratioReading.of];
-  if (group === undefined) return [];
-  const made = madeUp(report, question, ratioReading.of);
-  const reference = label(report.question, question.reference);
-  if (shownDirection(report, ratioReading) === 'none-shown')
-    return [{ reading: 'risk-ratio', text: noneShown(ratioReading, made) }];
-  const per = capital(perOne(report.question));
-  const granted = assumption(report.question);
-  const ratioPost: Post =
-    ratioReading.estimate === null
-      ? {
-          reading: 'risk-ratio',
-          text: `${made} No ratio can be given ${wanting(question, ratioReading.of)} (${intervalNote(ratioReading)}).`,
-        }
-      : {
-          reading: 'risk-ratio',
-          text:
-            granted === null
-              ? `${made} ${per}, that is ${compared(ratioReading, `many ${cases(report.question)}`, reference)}.`
-              : `${made} ${granted} ${compared(ratioReading, `many ${cases(report.question)} ${perOne(question)}`, reference, grantedNote(ratioReading))}.`,
-        };
-  const share = readingsOf(report, 'case-share').find(({ of }) => of === ratioReading.of);
-  const sharePost: Post[] =
-    share?.interval == null || question.unknownCases !== null
-      ? []
-      : [
-          {
-            reading: 'case-share',
-            text: `${made.slice(0, -1)}. As a share of all ${cases(report.question)} that is ${percent(share.estimate ?? NaN, 'short')} (${intervalNote(share)}); it is no risk.`,
-          },
-        ];
-  return [ratioPost, ...shareChangePost(report, made, reference), ...sharePost];
-}
-
-/** "“No helmet” made up 44 of 75 admitted (59%) and 38% of riders." */
-function madeUp(report: Report, question: SharesQuestion, index: number): string {
-  const group = question.groups[index];
-  if (group === undefined) return '';
-  const share = percent(group.caseShare.value, 'short');
-  const all = question.totalCases;
-  const counted =
-    group.cases !== null && all !== null
-      ? `${quantityText(group.cases)} of ${quantityText(all)} ${casesAsTyped(report.question)}${ofKnownGroup(question)} (${share})`
-      : `${quantityText(group.caseShare)} of the ${casesAsTyped(report.question)}`;
-  return `${Label(report.question, index)} made up ${counted}${coveragePhrase(question, index)}.${unknownSentence(question)}`;
 }
 
 function statedPosts(report: Report): Post[] {

@@ -1,6 +1,6 @@
 import type { Reading } from '../../report/reading.ts';
 import type { IntervalVariant, Says, SaysRemark, VariantLimits } from '../../report/said.ts';
-import { methodText } from './reading-row.ts';
+import { methodText } from './reading-methods.ts';
 
 /** What each common way of working out an interval is called, with its source. */
 const variantNames: Readonly<Record<Exclude<IntervalVariant, 'own'>, string>> = {
