@@ -8,6 +8,7 @@ import { withoutAbout } from './about.ts';
 import { joinSpacedNumbers } from './odd-figures.ts';
 import { parseTags } from './parser.ts';
 import type { Diagnosis, HelpTopic, LineLimits, LineReading } from './question.ts';
+import { withOffer } from './sentence-offer.ts';
 import { settleLine } from './settle.ts';
 import { tableOf } from './table.ts';
 import { tagLine } from './tag.ts';
@@ -26,8 +27,13 @@ const topics: readonly HelpTopic[] = [
   'bare-counts',
 ];
 
-/** Reads one typed line. Pure, linear in the length of the line, and never throws whatever the line holds. */
+/** Reads one typed line: strictly, else as a plain sentence whose figures are offered. Pure, linear in its length, never throws. */
 export function readLine(line: string, limits: LineLimits): LineReading {
+  return withOffer(line, readStrictly(line, limits), (each) => readStrictly(each, limits), limits);
+}
+
+/** Reads one line as it stands. */
+export function readStrictly(line: string, limits: LineLimits): LineReading {
   // Before anything else, so that no step ever sees more.
   if (line.length > limits.characters) {
     return refusal(

@@ -20,7 +20,7 @@ const ratioName = /^(?:rr|or|hr|irr|ratio|risk)$/i;
 /** The claim that starts at a mark, or `null`. */
 export function claimAt(marks: readonly Mark[], at: number, sentence: number): Claim | null {
   const end = claimEnd(marks, at);
-  return end === null ? null : { kind: 'claim', start: at, end, sentence };
+  return end === null ? null : { kind: 'claim', start: ratioAt(marks, at) ?? at, end, sentence };
 }
 
 function claimEnd(marks: readonly Mark[], at: number): number | null {
@@ -34,9 +34,7 @@ function claimEnd(marks: readonly Mark[], at: number): number | null {
   }
   const fraction = marks[at]?.kind === 'fraction';
   if (fraction && (comparing.test(text(at + 1)) || /^by$/i.test(text(at - 1)))) return likely(marks, at + 1);
-  // `RR 2.3`, `an odds ratio of 1.8`
-  const behind = marks[at - 1]?.kind === 'of' || /^(?:is|was|=)$/.test(text(at - 1)) ? at - 2 : at - 1;
-  const named = ratioName.test(text(behind)) && (behind > 0 || /^[A-Z]{2,3}$|^ratio$/i.test(text(behind)));
+  const named = ratioAt(marks, at) !== null;
   const amount = marks[at]?.kind === 'about' ? null : amountAt(marks, at);
   if (amount === null) return null;
   const next = marks[amount.end];
@@ -57,6 +55,16 @@ function claimEnd(marks: readonly Mark[], at: number): number | null {
   if (comparing.test(text(amount.end + 1))) return likely(marks, amount.end + 1);
   if (/^(?:ci|confidence)$/i.test(text(amount.end + 1))) return interval(marks, at);
   return /^by$/i.test(text(at - 1)) ? amount.end + 1 : null;
+}
+
+/** `RR 2.3`, `an odds ratio of 1.8`: where the name of the ratio in front of a number stands. */
+function ratioAt(marks: readonly Mark[], at: number): number | null {
+  const text = (place: number) => marks[place]?.text ?? '';
+  const behind = marks[at - 1]?.kind === 'of' || /^(?:is|was|=)$/.test(text(at - 1)) ? at - 2 : at - 1;
+  if (!ratioName.test(text(behind))) return null;
+  if (/^(?:ratio|risk)$/i.test(text(behind)))
+    return /^(?:odds|risk|rate|hazard|relative)$/i.test(text(behind - 1)) ? behind - 1 : null;
+  return /^[A-Z]{2,3}$/.test(text(behind)) ? behind : null;
 }
 
 /** `up 29%`, `rose by about 12%`, `cut head injuries by 57%`, `cut by half`: the percentage ends it; without one it is no claim. */

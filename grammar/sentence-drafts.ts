@@ -14,6 +14,8 @@ export interface FigureDraft {
   /** The line with `...` where something is missing; empty where nothing is. */
   readonly draft: string;
   readonly missing: readonly MissingId[];
+  /** Which of the pieces is a share of everybody. */
+  readonly coverage: SentenceNode | null;
   /** Another way to take the same words. */
   readonly instead: { readonly line: string; readonly label: string } | null;
 }
@@ -27,4 +29,4 @@ export const complete = (
   kinds: readonly QuestionKind[],
   lines: readonly string[],
   instead: FigureDraft['instead'] = null,
-): FigureDraft => ({ nodes, lines, kinds, draft: '', missing: [], instead });
+): FigureDraft => ({ nodes, lines, kinds, draft: '', missing: [], coverage: null, instead });

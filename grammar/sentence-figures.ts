@@ -198,7 +198,7 @@ function countsFigure(marks: readonly Mark[], counts: readonly CountNode[]): Fig
   if (other === undefined || other.sentence !== one.sentence || !(alike || versus)) {
     const noun = one.noun === '' ? '' : ` ${one.noun}`;
     const draft = `${one.amount.text}${noun} of ...`;
-    return { nodes: [one], lines: [], kinds: [], draft, missing: ['total'], instead: null };
+    return { nodes: [one], lines: [], kinds: [], draft, missing: ['total'], coverage: null, instead: null };
   }
   const pair = [one, other];
   const said = pair.map(({ predicate }) => timeName(predicate) ?? nameOf(predicate) ?? '');
@@ -215,6 +215,7 @@ function countsFigure(marks: readonly Mark[], counts: readonly CountNode[]): Fig
     kinds: ['bare-counts'],
     draft,
     missing: ['totals'],
+    coverage: null,
     instead: null,
   };
 }

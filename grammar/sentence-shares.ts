@@ -88,10 +88,10 @@ function sharesOf(nodes: readonly SentenceNode[], given: CasesBeside): FigureDra
     const [cases, total] = counts;
     const of = coverage.noun === null ? '' : ` of ${coverage.noun}`;
     const head = `cases: ${quoted(own)} ${grouped(cases)}, ${quoted(rest)} ${grouped(total - cases)}; coverage: ${quoted(rest)} ${coverage.text}`;
-    return complete(nodes, ['shares'], [`${head}${of}`, head], instead);
+    return { ...complete(nodes, ['shares'], [`${head}${of}`, head], instead), coverage };
   }
   const of = coverage.noun === null ? '' : `, ${coverage.text} of ${coverage.noun}`;
-  return complete(
+  const draft = complete(
     nodes,
     ['shares'],
     [
@@ -101,6 +101,7 @@ function sharesOf(nodes: readonly SentenceNode[], given: CasesBeside): FigureDra
     ],
     instead,
   );
+  return { ...draft, coverage };
 }
 
 /** `Most of the injured (44 of 75) wore no helmet`: what share of everybody goes without? */
@@ -108,13 +109,13 @@ export function loneCases(pair: PairNode): FigureDraft {
   const { cases, total, phrase } = pair;
   const noun = phrase.noun === '' ? 'cases' : phrase.noun;
   const draft = `${nameOf(phrase.predicate) ?? unnamed}: ${cases.text} of ${total.text} ${noun}, ...% of ...`;
-  return { nodes: [pair], lines: [], kinds: [], draft, missing: ['coverage'], instead: null };
+  return { nodes: [pair], lines: [], kinds: [], draft, missing: ['coverage'], coverage: null, instead: null };
 }
 
 /** One percentage: of cases it needs the share of everybody, of anything else a second group. */
 export function loneShare(share: ShareNode): FigureDraft {
   const { text, noun, predicate, percentage } = share;
-  const base = { nodes: [share], lines: [], kinds: [], instead: null };
+  const base = { nodes: [share], lines: [], kinds: [], coverage: null, instead: null };
   if (noun !== null && (isOutcome(noun) || !percentage || predicate.length > 0)) {
     const draft = `${nameOf(predicate) ?? unnamed}: ${text} of ${noun}, ...% of ...`;
     if (isOutcome(noun)) return { ...base, draft, missing: ['coverage'] };

@@ -75,11 +75,15 @@ export function phraseAt(marks: readonly Mark[], start: number): Phrase {
   return { noun: short, predicate, end: at, nounEnd };
 }
 
+const settingWord = /^(?:in|at|on|by|from|during|of|last|this|to|near|across)$/i;
+
 /** What a group may be called after what is said of it: `werent wearing a helmet` is `no helmet`; `null` where nothing is left. */
 export function nameOf(predicate: readonly string[]): string | null {
   let negated = false;
   let bareNot = false;
-  let at = 0;
+  // `in Harrowmere wore no helmet`: where they were comes before what is said of them.
+  const verb = predicate.findIndex(isVerb);
+  let at = verb > 0 && settingWord.test(predicate[0] ?? '') ? verb : 0;
   for (; at < predicate.length; at += 1) {
     const word = predicate[at] ?? '';
     if (negation.test(word)) {

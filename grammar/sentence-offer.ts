@@ -1,0 +1,194 @@
+import { printCanonical } from './print-canonical.ts';
+import { diagnosis, linesToTry, plainSuggestion } from './diagnosis.ts';
+import type { Diagnosis, LineLimits, LineReading, Question, Span } from './question.ts';
+import { readSentence } from './sentence.ts';
+import type { SentenceReading, StrictReader } from './sentence.ts';
+import { chooseText, confirmText, incompleteText, resultAloneText } from './sentence-messages.ts';
+import { isChanging } from './sentence-words.ts';
+import { isOddName, isOddNoun, nameBeforeVerb } from './sentence-names.ts';
+
+/** Faults that may come of reading a sentence as if it were a line. Any other fault is of the figures, and stays. */
+const ofWording: ReadonlySet<string> = new Set([
+  'unread-part',
+  'no-figure',
+  'mixed-figures',
+  'one-share',
+  'one-count',
+  'change-of-two',
+  'two-readings',
+  'group-missing',
+  'second-total-missing',
+  'total-missing',
+  'total-first',
+  'same-name-twice',
+  'measurement',
+  'two-numbers',
+  'date-in-figure',
+  'year-or-people',
+  'years-or-counts',
+  'different-times',
+  'clauses-only',
+  'clause-without-value',
+  'reference-unknown',
+  'coverage-unknown-group',
+  'coverage-no-share',
+  'coverage-missing',
+  'cases-by-group',
+  'units-differ',
+  'mention-as-name',
+  'too-many-groups',
+  'no-count-fits',
+  'coverage-form-of-several',
+]);
+
+/** `read "..."`: the message is read as a sentence, even where it could be read strictly. */
+const readCommand = /^\s*read\s*["\u201c\u201e\u00ab]([^]*?)["\u201c\u201d\u00bb]?\s*$/i;
+
+/**
+ * Strict, then tolerant: a line that the strict reader refuses for its wording, or reads with a sentence for a name, is read as a
+ * plain sentence, and what that finds is offered. A line that is read rightly is left as it is.
+ */
+export function withOffer(
+  line: string,
+  reading: LineReading,
+  strict: StrictReader,
+  limits: LineLimits,
+): LineReading {
+  const command = line.length > limits.characters ? null : readCommand.exec(line);
+  if (command !== null) {
+    const message = command[1] ?? '';
+    const at = line.indexOf(message);
+    return refused(moved(diagnosisOf(message, readSentence(message, strict)), at));
+  }
+  if (reading.kind === 'help') return reading;
+  if (reading.kind === 'question') {
+    if (!hasOddNames(reading.question, line)) return reading;
+    const found = readSentence(line, strict);
+    const [first] = found.figures;
+    if (first === undefined) return reading;
+    const cut = first.question === null ? null : withCutNames(reading.question, first.question.canonical);
+    return cut === null ? refused(diagnosisOf(line, found)) : { kind: 'question', question: cut };
+  }
+  const { id } = reading.diagnosis;
+  if (!ofWording.has(id)) return reading;
+  const found = readSentence(line, strict);
+  return helps(id, found, line) ? refused(diagnosisOf(line, found)) : reading;
+}
+
+const refused = (fault: Diagnosis): LineReading => ({ kind: 'diagnosis', diagnosis: fault });
+
+const moved = (fault: Diagnosis, by: number): Diagnosis => ({
+  ...fault,
+  span: { from: fault.span.from + by, to: fault.span.to + by },
+});
+
+/** Whether what the sentence gives is more than what the refusal says. */
+function helps(id: string, { figures, found }: SentenceReading, line: string): boolean {
+  const [first] = figures;
+  if (first === undefined)
+    return (id === 'one-share' || id === 'no-figure') && found.some(({ role }) => role === 'claim');
+  if (first.question !== null) {
+    // A total that stands first is best put right by itself, and two percentages are asked about as they stand.
+    if (id === 'total-first') return first.question.kind === 'shares';
+    return isProse(line);
+  }
+  return (
+    isProse(line) && ['one-share', 'one-count', 'no-figure', 'unread-part', 'mixed-figures'].includes(id)
+  );
+}
+
+/** Whether a line is a sentence rather than a figure with names: it has at least four words, one of them a verb. */
+const isProse = (line: string) => {
+  const words = line.split(/[\s,;:()"]+/).filter((word) => /^[^\d%]+$/.test(word));
+  return words.length >= 4 && words.some((word) => isOddNoun(word) || isChanging(word));
+};
+
+/** Names that hold a sentence, in a line that does not set them off with a colon or quotation marks. */
+function hasOddNames(question: Question, line: string): boolean {
+  const setOff = (name: string) => {
+    const plain = line.toLowerCase().replace(/\s+/g, ' ');
+    const key = name.toLowerCase();
+    return plain.includes(`${key}:`) || /["\u201c\u201e\u00ab]/.test(plain[plain.indexOf(key) - 1] ?? '');
+  };
+  const names = namesIn(question);
+  const { unit, caseNoun } = question;
+  return (
+    names.some((name) => isOddName(name) && !setOff(name)) ||
+    [unit, caseNoun].some((noun) => noun !== null && noun.split(' ').some(isOddNoun))
+  );
+}
+
+/** The names of all groups, in every layer. */
+function namesIn(question: Question): string[] {
+  if (question.kind === 'strata') return question.layers.flatMap(({ question: layer }) => namesIn(layer));
+  const labels: readonly (string | null)[] = question.groups.map(({ label }) => label);
+  return labels.filter((label) => label !== null);
+}
+
+/**
+ * `... and 9 out of 2377 day staff had an incident`: where only the end of a sentence clings to a name and the sentence gives the
+ * very same figures without it, the line was read rightly, and the name is cut.
+ */
+function withCutNames(question: Question, canonical: string): Question | null {
+  if (question.kind !== 'counts') return null;
+  const cut = {
+    ...question,
+    groups: question.groups.map((group) => ({
+      ...group,
+      label: group.label === null ? null : nameBeforeVerb(group.label),
+    })),
+  };
+  return printCanonical(cut) === canonical ? cut : null;
+}
+
+/** What a message is answered with: an offer to confirm, figures to choose from, what is missing, or that there is no figure. */
+export function diagnosisOf(
+  message: string,
+  { found, figures, missing, leftOut, count }: SentenceReading,
+): Diagnosis {
+  const [first] = figures;
+  const texts = missing.map(({ text }) => text);
+  if (first === undefined) {
+    const claim = found.find(({ role }) => role === 'claim');
+    if (claim === undefined) return diagnosis('no-figure', { from: 0, to: message.length }, [], linesToTry);
+    return made('result-alone', resultAloneText(cut(claim.text, 60)), claim, []);
+  }
+  if (figures.length > 1) {
+    const offered = figures.slice(0, 3);
+    return made(
+      'confirm',
+      chooseText(
+        offered.map(({ shown }) => cut(shown, 44)),
+        count,
+      ),
+      { from: first.span.from, to: Math.max(...figures.map(({ span }) => span.to)) },
+      offered.map(({ draft, shown }, index) => ({ line: draft, label: cut(`${index + 1}: ${shown}`, 75) })),
+    );
+  }
+  if (first.question === null)
+    return made(
+      'incomplete',
+      incompleteText(cut(first.shown, 80), texts),
+      first.span,
+      first.draft === '' ? [] : [plainSuggestion(first.draft)],
+    );
+  return made('confirm', confirmText(cut(first.shown, 90), texts, cut(leftOut.join(', '), 40)), first.span, [
+    { line: first.question.canonical, label: 'Yes' },
+    ...(first.instead === null ? [] : [first.instead]),
+  ]);
+}
+
+const made = (
+  id: string,
+  message: string,
+  { from, to }: Span,
+  suggestions: Diagnosis['suggestions'],
+): Diagnosis => ({
+  id,
+  message,
+  span: { from, to },
+  suggestions,
+});
+
+const cut = (text: string, most: number) =>
+  text.length <= most ? text : `${text.slice(0, most - 1).trimEnd()}\u2026`;
