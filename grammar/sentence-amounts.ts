@@ -116,7 +116,7 @@ export function overAt(
     };
   if (
     noun.text === '' &&
-    (roundBase(base.value) || amount.value === 1) &&
+    (roundBase(base.value) || amount.value === 1 || base.value < 20) &&
     !isYear(base) &&
     base.value > amount.value
   )

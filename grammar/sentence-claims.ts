@@ -46,8 +46,11 @@ function claimEnd(marks: readonly Mark[], at: number): number | null {
     !Number.isInteger(amount.value)
   )
     return interval(marks, amount.end);
+  // `failed 31 times` counts; `4 times more`, `4 times the risk` compares.
   if (/^times$/i.test(next?.text ?? ''))
-    return /^(?:a|per|each|every|in)$/i.test(text(amount.end + 1)) ? null : likely(marks, amount.end + 1);
+    return comparing.test(text(amount.end + 1)) || /^(?:the|than|that|safer)$/i.test(text(amount.end + 1))
+      ? likely(marks, amount.end + 1)
+      : null;
   if (/^(?:points?|pp|percentage)$/i.test(next?.text ?? ''))
     return likely(marks, amount.end + (/^percentage$/i.test(next?.text ?? '') ? 2 : 1));
   if (next?.kind !== 'percent') return null;

@@ -1,5 +1,5 @@
 import type { QuestionKind } from './question.ts';
-import type { SentenceNode } from './sentence-nodes.ts';
+import type { SentenceNode } from './sentence-node-types.ts';
 
 /** What a figure of a sentence lacks. */
 export type MissingId =

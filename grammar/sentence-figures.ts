@@ -1,9 +1,16 @@
 import type { Mark } from './sentence-marks.ts';
-import type { ChangeNode, ClaimNode, CountNode, PairNode, RateNode, SentenceNode } from './sentence-nodes.ts';
+import type {
+  ChangeNode,
+  ClaimNode,
+  CountNode,
+  PairNode,
+  RateNode,
+  SentenceNode,
+} from './sentence-node-types.ts';
 import { complete, named, quoted } from './sentence-drafts.ts';
 import type { FigureDraft } from './sentence-drafts.ts';
 import { sharesFigure, loneShare, loneCases, twoShares } from './sentence-shares.ts';
-import { isOutcome, nameOf, nounKey, subjectBefore } from './sentence-words.ts';
+import { isOutcome, nounKey, settingOf, subjectBefore, timeOf } from './sentence-words.ts';
 
 /** Puts the found pieces of a message together into figures, each piece into one. */
 export function figuresOf(marks: readonly Mark[], nodes: readonly SentenceNode[]): FigureDraft[] {
@@ -129,7 +136,7 @@ function namesOf(pairs: readonly PairNode[]): {
   if (pairs.length > 1 && distinct(nouns)) return { names: nouns, unit: '' };
   const unit = nouns.find((noun) => noun !== '') ?? '';
   const subjects = pairs.map(({ subject }) => subject);
-  const said = pairs.map(({ phrase }) => nameOf(phrase.predicate));
+  const said = pairs.map(({ phrase }) => (pairs.length > 1 ? settingOf(phrase.predicate) : null));
   const mixed = subjects.map((subject, index) => subject ?? said[index] ?? null);
   const names = [subjects, said, mixed].find((each) => distinct(each.map((name) => name ?? '')));
   return { names: names ?? pairs.map(() => null), unit };
@@ -140,7 +147,7 @@ const distinct = (names: readonly string[]) =>
 
 function ratesOf(rates: readonly RateNode[]): FigureDraft {
   const subjects = rates.map(({ subject }) => subject ?? '');
-  const said = rates.map(({ phrase }) => nameOf([...phrase.noun.split(' '), ...phrase.predicate]) ?? '');
+  const said = rates.map(({ phrase }) => settingOf(phrase.predicate) ?? '');
   const names = [subjects, said].find(distinct);
   const line = (chosen: readonly string[] | undefined) =>
     rates.map(({ text }, index) => `${named(chosen?.[index] ?? null)}${text}`).join(' vs ');
@@ -150,11 +157,18 @@ function ratesOf(rates: readonly RateNode[]): FigureDraft {
 const fromTo = (subject: string | null, { earlier, later }: ChangeNode) =>
   `${subject === null ? '' : `${quoted(subject)} `}from ${earlier.text} to ${later.text}`;
 
+/** `"2023": 412 delays vs "2024": 530`, where the years stand in the sentence. */
+function atTimes({ earlier, later, times, subject }: ChangeNode): string[] {
+  if (times === null) return [];
+  const of = subject === null || earlier.form !== 'count' ? '' : ` ${subject}`;
+  return [of, ''].map((noun) => `"${times[0]}": ${earlier.text}${noun} vs "${times[1]}": ${later.text}`);
+}
+
 function changeOf(change: ChangeNode): FigureDraft {
   return complete(
     [change],
     ['bare-counts', 'counts', 'stated', 'rates'],
-    [fromTo(change.subject, change), fromTo(null, change)],
+    [...atTimes(change), fromTo(change.subject, change), fromTo(null, change)],
   );
 }
 
@@ -201,11 +215,12 @@ function countsFigure(marks: readonly Mark[], counts: readonly CountNode[]): Fig
     return { nodes: [one], lines: [], kinds: [], draft, missing: ['total'], coverage: null, instead: null };
   }
   const pair = [one, other];
-  const said = pair.map(({ predicate }) => timeName(predicate) ?? nameOf(predicate) ?? '');
+  const said = pair.map(({ predicate }) => settingOf(predicate) ?? '');
   const subjects = pair.map(({ subject }) => subject ?? '');
   const names = [said, subjects].find(distinct) ?? [null, null];
   const line = (chosen: readonly (string | null)[]) =>
     pair.map(({ amount }, index) => `${named(chosen[index] ?? null)}${amount.text}`).join(' vs ');
+  const overTime = pair.every(({ predicate }) => timeOf(predicate) !== null);
   const draft = pair
     .map(({ amount }, index) => `${named(names[index] ?? null)}${amount.text} of ...`)
     .join(' vs ');
@@ -214,15 +229,8 @@ function countsFigure(marks: readonly Mark[], counts: readonly CountNode[]): Fig
     lines: [line(names), line([null, null])],
     kinds: ['bare-counts'],
     draft,
-    missing: ['totals'],
+    missing: overTime ? [] : ['totals'],
     coverage: null,
     instead: null,
   };
-}
-
-/** `530 delays this year`, `412 in 2023`. */
-function timeName(predicate: readonly string[]): string | null {
-  const [first = '', second = ''] = predicate;
-  if (/^(?:last|this|previous)$/i.test(first) && second !== '') return `${first} ${second}`;
-  return /^in$/i.test(first) && /^(?:19|20)\d\d$/.test(second) ? second : null;
 }

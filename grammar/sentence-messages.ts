@@ -3,7 +3,7 @@ import type { MissingId } from './sentence-drafts.ts';
 /** What the reader of plain sentences says: two lines at most, in the words of a person in a hurry. */
 
 const missingTexts = {
-  coverage: (thing: string) => `what share of everybody that is: ${thing}`,
+  coverage: (thing: string) => `what share of everybody is "${thing}"`,
   'second-group': () => 'a second group to compare with',
   total: () => 'out of how many',
   totals: () => 'out of how many, in each group',

@@ -1,77 +1,17 @@
-import { isExposureWord } from './exposures.ts';
 import { amountAt, isYear, nounBetween, overAt, sideAt, totalAfter } from './sentence-amounts.ts';
-import type { Amount, Side } from './sentence-amounts.ts';
+import type { Amount } from './sentence-amounts.ts';
 import { claimAt } from './sentence-claims.ts';
+import { countAt } from './sentence-counts.ts';
 import type { Mark } from './sentence-marks.ts';
-import { isChanging, isPronoun, mostOfBefore, phraseAt, subjectBefore } from './sentence-words.ts';
-import type { Phrase } from './sentence-words.ts';
-
-interface NodeBase {
-  /** Among the marks, `end` exclusive. */
-  readonly start: number;
-  readonly end: number;
-  /** Which sentence of the message it stands in. */
-  readonly sentence: number;
-}
-
-/** `44 of 75`: a count and its total. */
-export interface PairNode extends NodeBase {
-  readonly kind: 'pair';
-  readonly cases: Amount & { readonly share: boolean };
-  readonly total: Amount;
-  readonly caseNoun: string;
-  /** What one of the total is called, with what is said of it. */
-  readonly phrase: Phrase;
-  /** The words in front: `on night shifts`. */
-  readonly subject: string | null;
-  /** `most of the injured` stood in front. */
-  readonly mostOf: boolean;
-}
-
-/** `38% of riders`, `a third of incidents`, `one in four riders`. */
-export interface ShareNode extends NodeBase {
-  readonly kind: 'share';
-  readonly text: string;
-  readonly percentage: boolean;
-  /** `null`: the sentence does not say what it is a share of. */
-  readonly noun: string | null;
-  readonly predicate: readonly string[];
-  readonly subject: string | null;
-  /** The word `coverage` stood in front. */
-  readonly coverage: boolean;
-}
-
-/** `from 412 to 530`, `530, up from 412`. */
-export interface ChangeNode extends NodeBase {
-  readonly kind: 'change';
-  readonly earlier: Side;
-  readonly later: Side;
-  readonly subject: string | null;
-}
-
-/** `14 incidents in 5,200 bus-days`. */
-export interface RateNode extends NodeBase {
-  readonly kind: 'rate';
-  readonly text: string;
-  readonly subject: string | null;
-  readonly phrase: Phrase;
-}
-
-/** `18 incidents`: a count without its total. */
-export interface CountNode extends NodeBase {
-  readonly kind: 'count';
-  readonly amount: Amount;
-  readonly noun: string;
-  readonly predicate: readonly string[];
-  readonly subject: string | null;
-}
-
-/** `4 times more`, `up 29%`: a result, not a figure. */
-export interface ClaimNode extends NodeBase {
-  readonly kind: 'claim';
-}
-
-export type SentenceNode = PairNode | ShareNode | ChangeNode | RateNode | CountNode | ClaimNode;
+import type { ChangeNode, PairNode, RateNode, SentenceNode, ShareNode } from './sentence-node-types.ts';
+import {
+  isChanging,
+  isPronoun,
+  mostOfBefore,
+  nounBefore,
+  phraseAt,
+  subjectBefore,
+} from './sentence-words.ts';
 
 /** Finds the figures of a message in the order in which they stand. Looks a bounded way ahead at each mark: linear in the message. */
 export function nodesOf(marks: readonly Mark[]): SentenceNode[] {
@@ -112,7 +52,8 @@ function changeAt(marks: readonly Mark[], at: number, sentence: number): ChangeN
   const isFrom = mark?.kind === 'from';
   const first = sideAt(marks, isFrom ? at + 1 : at);
   if (first === null) return null;
-  const noun = nounBetween(marks, first.end);
+  const time = yearAt(marks, first.end);
+  const noun = nounBetween(marks, time?.end ?? first.end);
   const sign = marks[noun.end];
   const subject = subjectBefore(marks, at);
   const moving = isFrom || /^(?:went|moved)$/i.test(behind) || isChanging(behind) || first.form !== 'count';
@@ -122,7 +63,10 @@ function changeAt(marks: readonly Mark[], at: number, sentence: number): ChangeN
     const years = [first, second].every(({ text, form }) => form === 'count' && /^(?:19|20)\d\d$/.test(text));
     const clock = /^(?:am|pm|o'clock)$/i.test(marks[second.end]?.text ?? '');
     if (years || clock) return null;
-    return { kind: 'change', earlier: first, later: second, subject, start: at, end: second.end, sentence };
+    const until = yearAt(marks, second.end);
+    const times = time !== null && until !== null ? ([time.text, until.text] as const) : null;
+    const end = until?.end ?? second.end;
+    return { kind: 'change', earlier: first, later: second, times, subject, start: at, end, sentence };
   }
   if (isFrom) return null;
   // `530 delays, up from 412`, `rose to 530 from 412`
@@ -136,8 +80,24 @@ function changeAt(marks: readonly Mark[], at: number, sentence: number): ChangeN
   if (!said || marks[place]?.kind !== 'from') return null;
   const earlier = sideAt(marks, place + 1);
   if (earlier === null || earlier.form !== first.form) return null;
-  const own = noun.text === '' ? subject : noun.text;
-  return { kind: 'change', earlier, later: first, subject: own, start: at, end: earlier.end, sentence };
+  const toBefore = marks[at - 1]?.kind === 'to' ? subjectBefore(marks, at - 1) : subject;
+  const own = noun.text === '' ? toBefore : noun.text;
+  return {
+    kind: 'change',
+    earlier,
+    later: first,
+    times: null,
+    subject: own,
+    start: at,
+    end: earlier.end,
+    sentence,
+  };
+}
+
+/** `in 2023` behind a figure. */
+function yearAt(marks: readonly Mark[], at: number): { readonly text: string; readonly end: number } | null {
+  const year = marks[at]?.kind === 'in' ? amountAt(marks, at + 1) : null;
+  return year !== null && isYear(year) ? { text: year.text, end: year.end } : null;
 }
 
 /** `Of the 75 injured, 44 wore no helmet`; `75 injured, 44 of them without`; `1,204 staff, of whom 18 were off sick`. */
@@ -259,7 +219,8 @@ function shareAt(marks: readonly Mark[], at: number, sentence: number): ShareNod
   const phrase = phraseAt(marks, named ? end + 1 : end);
   const hasNoun = named || !percentage;
   const before = startOf(marks, start);
-  const noun = hasNoun && phrase.noun !== '' && !isPronoun(phrase.noun) ? phrase.noun : null;
+  const own = hasNoun && phrase.noun !== '' && !isPronoun(phrase.noun) ? phrase.noun : null;
+  const noun = own ?? (named ? null : nounBefore(marks, before));
   const predicate = hasNoun
     ? phrase.predicate
     : [...phrase.noun.split(' ').filter((word) => word !== ''), ...phrase.predicate];
@@ -293,37 +254,4 @@ function shareSign(marks: readonly Mark[], at: number) {
   const next = marks[first + 1];
   const ofThem = next?.kind === 'of' || /^(?:the|all|our|those)$/i.test(next?.text ?? '');
   return ofThem ? { text: mark.text, start: first, end: first + 1, percentage: false } : null;
-}
-
-/** Words behind which a number is a name, not a count. */
-const numbered =
-  /^(?:route|ward|bus|line|page|level|pier|number|no\.?|week|day|age|aged|over|under|platform|pump|table|figure|chapter|section|room|stage|phase|class|grade|section|step|item|check|form|at|before|after|since|until|by)$/i;
-const month = /^(?:jan|feb|mar|apr|may|june?|july?|aug|sep|oct|nov|dec)[a-z]*$/i;
-
-function countAt(marks: readonly Mark[], at: number, sentence: number): CountNode | null {
-  const amount = amountAt(marks, at);
-  if (amount === null || marks[amount.start]?.kind !== 'number' || isYear(amount)) return null;
-  if (!Number.isInteger(amount.value)) return null;
-  const before = marks[at - 1]?.text ?? '';
-  if (numbered.test(before) || month.test(before)) return null;
-  if (['colon', 'slash', 'percent'].includes(marks[amount.end]?.kind ?? '')) return null;
-  if (marks[at - 1]?.kind === 'slash') return null;
-  const phrase = phraseAt(marks, amount.end);
-  const [first = ''] = phrase.noun.split(' ');
-  if (
-    isExposureWord(first) ||
-    month.test(first) ||
-    /^(?:am|pm|ms|kg|g|cm|mm|m|euros?|pounds?|dollars?|degrees?)$/i.test(first)
-  )
-    return null;
-  return {
-    kind: 'count',
-    amount,
-    noun: phrase.noun,
-    predicate: phrase.predicate,
-    subject: subjectBefore(marks, at),
-    start: amount.start,
-    end: Math.max(amount.end, phrase.nounEnd),
-    sentence,
-  };
 }

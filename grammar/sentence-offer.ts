@@ -5,7 +5,7 @@ import { readSentence } from './sentence.ts';
 import type { SentenceReading, StrictReader } from './sentence.ts';
 import { chooseText, confirmText, incompleteText, resultAloneText } from './sentence-messages.ts';
 import { isChanging } from './sentence-words.ts';
-import { isOddName, isOddNoun, nameBeforeVerb } from './sentence-names.ts';
+import { isOddName, isOddNoun, isOddUnit, nameBeforeVerb } from './sentence-names.ts';
 
 /** Faults that may come of reading a sentence as if it were a line. Any other fault is of the figures, and stays. */
 const ofWording: ReadonlySet<string> = new Set([
@@ -36,6 +36,7 @@ const ofWording: ReadonlySet<string> = new Set([
   'cases-by-group',
   'units-differ',
   'mention-as-name',
+  'not-whole',
   'too-many-groups',
   'no-count-fits',
   'coverage-form-of-several',
@@ -65,7 +66,9 @@ export function withOffer(
     if (!hasOddNames(reading.question, line)) return reading;
     const found = readSentence(line, strict);
     const [first] = found.figures;
-    if (first === undefined) return reading;
+    // `from 2019 to 2021 the ferry did not run`: two numbers in a sentence that are no figure.
+    if (first === undefined)
+      return reading.question.kind === 'bare-counts' ? refused(diagnosisOf(line, found)) : reading;
     const cut = first.question === null ? null : withCutNames(reading.question, first.question.canonical);
     return cut === null ? refused(diagnosisOf(line, found)) : { kind: 'question', question: cut };
   }
@@ -85,22 +88,32 @@ const moved = (fault: Diagnosis, by: number): Diagnosis => ({
 /** Whether what the sentence gives is more than what the refusal says. */
 function helps(id: string, { figures, found }: SentenceReading, line: string): boolean {
   const [first] = figures;
-  if (first === undefined)
-    return (id === 'one-share' || id === 'no-figure') && found.some(({ role }) => role === 'claim');
+  if (first === undefined) {
+    if (found.some(({ role }) => role === 'claim')) return saysLittle.has(id) || id === 'not-whole';
+    // `Ask Ada about ward 7`: a number in a sentence that counts nothing.
+    return id === 'one-count' && line.trim().split(/\s+/).length > 3;
+  }
   if (first.question !== null) {
     // A total that stands first is best put right by itself, and two percentages are asked about as they stand.
     if (id === 'total-first') return first.question.kind === 'shares';
     return isProse(line);
   }
-  return (
-    isProse(line) && ['one-share', 'one-count', 'no-figure', 'unread-part', 'mixed-figures'].includes(id)
-  );
+  return isProse(line) && saysLittle.has(id);
 }
 
-/** Whether a line is a sentence rather than a figure with names: it has at least four words, one of them a verb. */
+/** Refusals that say less than what a sentence lacks. */
+const saysLittle: ReadonlySet<string> = new Set([
+  'one-share',
+  'one-count',
+  'no-figure',
+  'unread-part',
+  'mixed-figures',
+]);
+
+/** Whether a line is a sentence rather than a figure with names: it has at least three words, one of them a verb. */
 const isProse = (line: string) => {
   const words = line.split(/[\s,;:()"]+/).filter((word) => /^[^\d%]+$/.test(word));
-  return words.length >= 4 && words.some((word) => isOddNoun(word) || isChanging(word));
+  return words.length >= 3 && words.some((word) => isOddNoun(word) || isChanging(word));
 };
 
 /** Names that hold a sentence, in a line that does not set them off with a colon or quotation marks. */
@@ -114,7 +127,7 @@ function hasOddNames(question: Question, line: string): boolean {
   const { unit, caseNoun } = question;
   return (
     names.some((name) => isOddName(name) && !setOff(name)) ||
-    [unit, caseNoun].some((noun) => noun !== null && noun.split(' ').some(isOddNoun))
+    [unit, caseNoun].some((noun) => noun !== null && isOddUnit(noun))
   );
 }
 

@@ -1,8 +1,8 @@
 import { grouped } from './numbers.ts';
-import type { PairNode, SentenceNode, ShareNode } from './sentence-nodes.ts';
+import type { PairNode, SentenceNode, ShareNode } from './sentence-node-types.ts';
 import { complete, named, quoted } from './sentence-drafts.ts';
 import type { FigureDraft } from './sentence-drafts.ts';
-import { isNegated, isOutcome, nameOf, nounKey, relatedNames } from './sentence-words.ts';
+import { isNegated, isOutcome, nameOf, nounKey, relatedNames, settingOf, timeOf } from './sentence-words.ts';
 
 /** Shares of cases beside shares of everybody: which of two figures is which, and what the group is called. */
 
@@ -30,9 +30,12 @@ export function twoShares(one: ShareNode, other: ShareNode): FigureDraft | null 
   const nodes = [one, other];
   const lastWord = (noun: string | null) => nounKey(noun?.split(' ').at(-1) ?? '');
   if (one.coverage || other.coverage) return null;
-  if (one.noun === null || other.noun === null || lastWord(one.noun) === lastWord(other.noun)) {
+  const nested = one.noun !== null && other.noun !== null && isOutcome(one.noun) !== isOutcome(other.noun);
+  const alikeNouns = one.noun !== null && other.noun !== null && lastWord(one.noun) === lastWord(other.noun);
+  if (one.noun === null || other.noun === null || (alikeNouns && !nested)) {
     if (one.sentence !== other.sentence) return null;
-    const said = nodes.map(({ predicate }) => nameOf(predicate));
+    const said = nodes.map(({ predicate }) => settingOf(predicate));
+    const times = nodes.map(({ predicate }) => timeOf(predicate));
     const nouns = nodes.map(({ noun }, index) => noun ?? said[index] ?? null);
     const alike = nouns[0] != null && nouns[1] != null && nounKey(nouns[0]) === nounKey(nouns[1]);
     const names = alike ? said : nouns;
@@ -40,7 +43,12 @@ export function twoShares(one: ShareNode, other: ShareNode): FigureDraft | null 
     return complete(
       nodes,
       ['stated'],
-      [pairOf(names, nodes), pairOf(subjects, nodes), pairOf([null, null], nodes)],
+      [
+        ...(times.includes(null) ? [] : [pairOf(times, nodes)]),
+        pairOf(names, nodes),
+        pairOf(subjects, nodes),
+        pairOf([null, null], nodes),
+      ],
     );
   }
   const swapped = isOutcome(other.noun) && !isOutcome(one.noun);
@@ -73,10 +81,10 @@ interface CasesBeside {
 }
 
 function sharesOf(nodes: readonly SentenceNode[], given: CasesBeside): FigureDraft | null {
-  const { coverage, figure, noun, said, counts, instead } = given;
+  const { coverage, figure, noun, said, counts, subject, instead } = given;
   const [ofCases, ofAll] = [nameOf(said), nameOf(coverage.predicate)];
   if (ofCases !== null && ofAll !== null && !relatedNames(ofCases, ofAll)) return null;
-  const name = ofCases ?? ofAll ?? unnamed;
+  const name = ofCases ?? ofAll ?? subject ?? coverage.subject ?? unnamed;
   const opposite =
     said.length > 0 && coverage.predicate.length > 0 && isNegated(said) !== isNegated(coverage.predicate);
   if (opposite) {

@@ -32,10 +32,12 @@ const filler =
 const pronoun = /^(?:them|these|those|us|whom|which|it|they|who)$/i;
 
 /** What befalls people rather than who they are: a percentage of these is a share of cases. */
-const outcome =
-  /(?:^|[ -])(?:injured|injuries|injury|hurt|killed|dead|died|deaths?|casualt(?:y|ies)|victims?|cases?|patients?|admissions?|admitted|hospitali[sz]ed|accidents?|crash(?:es)?|incidents?|collisions?|complaints?|infections?|infected|ill|sick|poisoned|poisonings?|drowned|drownings?|delays?|delayed|breakdowns?|failures?|faults?|errors?|falls|thefts?|fires?|late|wounded|stranded|contaminated|spills?|offences?|burglar(?:y|ies))(?: people| persons?)?$/i;
+const outcomeNoun =
+  /(?:^|[ -])(?:injuries|injury|deaths?|casualt(?:y|ies)|victims?|cases?|patients?|admissions?|accidents?|crash(?:es)?|incidents?|collisions?|complaints?|infections?|poisonings?|drownings?|delays?|breakdowns?|failures?|faults?|errors?|falls|thefts?|fires?|spills?|offences?|burglar(?:y|ies))$/i;
+const outcomeWord =
+  /(?:^|[ -])(?:injured|hurt|killed|dead|died|admitted|hospitali[sz]ed|infected|ill|sick|poisoned|drowned|delayed|late|wounded|stranded|contaminated|cancelled)(?: |$)/i;
 
-export const isOutcome = (noun: string) => outcome.test(noun);
+export const isOutcome = (noun: string) => outcomeNoun.test(noun) || outcomeWord.test(noun);
 export const isPronoun = (word: string) => pronoun.test(word);
 export const isChanging = (word: string) => changing.test(word);
 export const isJoiner = (word: string) => joiner.test(word);
@@ -107,6 +109,7 @@ export function nameOf(predicate: readonly string[]): string | null {
     rest.push(word);
   }
   if (rest.length === 0) return null;
+  if (rest.every((word) => pointing.test(word))) return null;
   const name = rest.join(' ');
   if (!negated) return name;
   return bareNot ? `not ${name}` : `no ${name}`;
@@ -125,14 +128,19 @@ export function subjectBefore(marks: readonly Mark[], end: number): string | nul
     if (joiner.test(mark.text)) break;
     words.unshift(mark.text);
   }
+  // `The council says 31 of 9,240`: who says it is not who is counted.
+  words.splice(0, words.findLastIndex((word) => saying.test(word)) + 1);
   while (words.length > 0 && isSetting(words.at(-1) ?? '')) words.pop();
   while (words.length > 0 && isOpening(words[0] ?? '')) words.shift();
-  const verb = words.findIndex((word) => isVerb(word) || changing.test(word));
+  // `Helmet use is 62%`: there it is no verb.
+  const verb = words.findIndex((word) => word !== 'use' && (isVerb(word) || changing.test(word)));
   const named = verb === -1 ? words : words.slice(0, verb);
   if (named.length === 0 || named.length > 4 || named.every((word) => pronoun.test(word))) return null;
   return named.join(' ');
 }
 
+const saying =
+  /^(?:says?|said|reports?|reported|counted|found|claims?|claimed|tells?|told|writes|wrote|wrong|right)$/i;
 const isSetting = (word: string) =>
   isVerb(word) ||
   changing.test(word) ||
@@ -182,4 +190,41 @@ export function relatedNames(one: string, other: string): boolean {
       .map((word) => nounKey(word).slice(0, 5));
   const [own, others] = [words(one), words(other)];
   return own.length === 0 || others.length === 0 || own.some((word) => others.includes(word));
+}
+
+/** Where or when, which may name a group: `late at night` is `night`, `by day were reported` is `day`; `null` where neither is said. */
+export function settingOf(predicate: readonly string[]): string | null {
+  const time = timeOf(predicate);
+  if (time !== null) return time;
+  const at = predicate.findIndex((word) => /^(?:in|at|on|by|from|during|with|without|aged)$/i.test(word));
+  if (at === -1) return null;
+  const rest = predicate.slice(at);
+  const verb = rest.findIndex((word, index) => index > 0 && isVerb(word));
+  return nameOf(verb === -1 ? rest : rest.slice(0, verb));
+}
+
+/** `530 delays this year`, `412 in 2023`. */
+export function timeOf(predicate: readonly string[]): string | null {
+  const at = predicate.findIndex((word) => /^(?:last|this|previous)$/i.test(word));
+  if (
+    at !== -1 &&
+    /^(?:year|month|week|quarter|season|spring|summer|autumn|winter)$/i.test(predicate[at + 1] ?? '')
+  )
+    return `${predicate[at] ?? ''} ${predicate[at + 1] ?? ''}`;
+  return null;
+}
+
+/** `among the injured 71%`, `of riders, 38%`: the noun that stands in front of its percentage. */
+export function nounBefore(marks: readonly Mark[], end: number): string | null {
+  const words: string[] = [];
+  for (let at = end - 1; at >= Math.max(0, end - 6); at -= 1) {
+    const mark = marks[at];
+    if (mark === undefined) return null;
+    if (mark.kind === 'comma' && at === end - 1) continue;
+    if (mark.kind === 'of' || /^(?:among|amongst)$/i.test(mark.text))
+      return words.length === 0 ? null : words.join(' ');
+    if (mark.kind !== 'word' || isVerb(mark.text) || words.length > 3) return null;
+    if (!article.test(mark.text) && !joiner.test(mark.text)) words.unshift(mark.text);
+  }
+  return null;
 }

@@ -8,7 +8,7 @@ import { marksOf } from './sentence-marks.ts';
 import type { Mark } from './sentence-marks.ts';
 import { missingText } from './sentence-messages.ts';
 import { nodesOf } from './sentence-nodes.ts';
-import type { SentenceNode } from './sentence-nodes.ts';
+import type { SentenceNode } from './sentence-node-types.ts';
 
 /** What a found piece is. */
 export type FoundRole = 'cases' | 'total' | 'share' | 'coverage' | 'rate' | 'change' | 'count' | 'claim';
