@@ -111,8 +111,10 @@ function connectedFigure(tokens: Tokens, start: number, count: CountValue, after
   const pair = { start, end, count, noun, connector: at, total: base, totalAt: [at + 1, end] as const };
   if (connector === 'of') return { kind: 'counts', ...pair, eachCountedOnce: false };
   if (connector === 'in') {
-    if (count.written.value === 1 || roundBase(base.value))
-      return frequency(start, end, count.written, base, 'in');
+    // `2 in 3 of late ferries` is a share of them, as two thirds is.
+    const ofNoun = is(tokens, end, token.Of) && numberOrWordAt(tokens, end + 1) === null;
+    if (count.written.value === 1 || roundBase(base.value) || ofNoun)
+      return frequency(start, end, count.written, base, 'in', ofNoun);
     if (isYear(tokens[at + 1]?.image ?? '') && !nounWord(tokens, end)) {
       return { kind: 'year', start, end, count: count.written, noun, year: tokens[at + 1]?.image ?? '' };
     }
@@ -239,6 +241,7 @@ function frequency(
   count: WrittenNumber,
   base: WrittenNumber,
   word: 'in' | 'per',
+  ofNoun = false,
 ): Figure {
   // `1 in 250` was rounded in its base, `3 per 1,000` in its count.
   const byBase = count.value === 1 && word === 'in' && !roundBase(base.value);
@@ -254,5 +257,5 @@ function frequency(
     precision: 'rounded',
     form: 'frequency',
   };
-  return { kind: 'share', start, end, share, ofNoun: false };
+  return { kind: 'share', start, end, share, ofNoun };
 }

@@ -15,7 +15,7 @@ export function countAt(marks: readonly Mark[], at: number, sentence: number): C
   if (amount === null || marks[amount.start]?.kind !== 'number' || isYear(amount)) return null;
   if (!Number.isInteger(amount.value)) return null;
   const before = marks[at - 1]?.text ?? '';
-  if (numbered.test(before) || month.test(before)) return null;
+  if (numbered.test(before) || month.test(before) || month.test(marks[amount.end]?.text ?? '')) return null;
   if (['colon', 'slash', 'percent'].includes(marks[amount.end]?.kind ?? '')) return null;
   if (['slash', 'colon'].includes(marks[at - 1]?.kind ?? '') && marks[at - 2]?.kind === 'number') return null;
   const phrase = phraseAt(marks, amount.end);

@@ -42,6 +42,9 @@ const ofWording: ReadonlySet<string> = new Set([
   'coverage-form-of-several',
 ]);
 
+/** A full stop between two sentences. */
+const severalSentences = /[A-Za-z0-9%)]{2}[.!?]\s+[A-Z]/;
+
 /** `read "..."`: the message is read as a sentence, even where it could be read strictly. */
 const readCommand = /^\s*read\s*["\u201c\u201e\u00ab]([^]*?)["\u201c\u201d\u00bb]?\s*$/i;
 
@@ -63,8 +66,11 @@ export function withOffer(
   }
   if (reading.kind === 'help') return reading;
   if (reading.kind === 'question') {
-    if (!hasOddNames(reading.question, line)) return reading;
+    const odd = hasOddNames(reading.question, line);
+    if (!odd && !severalSentences.test(line)) return reading;
     const found = readSentence(line, strict);
+    // What a line asks is one figure; a second sentence with another must not be passed over.
+    if (!odd && found.figures.length < 2) return reading;
     const [first] = found.figures;
     // `from 2019 to 2021 the ferry did not run`: two numbers in a sentence that are no figure.
     if (first === undefined)

@@ -12,6 +12,7 @@ const unnamed = 'this group';
 export function sharesFigure(pair: PairNode, share: ShareNode): FigureDraft | null {
   if (share.noun === null && !share.coverage) return null;
   if (share.noun !== null && nounKey(share.noun) === nounKey(pair.phrase.noun)) return null;
+  if (!belongs(pair, share)) return null;
   const nodes = [pair, share].sort((one, other) => one.start - other.start);
   const caseNoun = pair.phrase.noun === '' ? 'cases' : pair.phrase.noun;
   return sharesOf(nodes, {
@@ -23,6 +24,13 @@ export function sharesFigure(pair: PairNode, share: ShareNode): FigureDraft | nu
     subject: pair.subject,
     instead: null,
   });
+}
+
+/** Whether a percentage can be the coverage of counts: in one sentence, or of what befell people, or said of the same thing. */
+function belongs(pair: PairNode, share: ShareNode): boolean {
+  if (pair.sentence === share.sentence || pair.mostOf || isOutcome(pair.phrase.noun)) return true;
+  const [ofCases, ofAll] = [nameOf(pair.phrase.predicate), nameOf(share.predicate)];
+  return ofCases !== null && (ofAll === null ? share.predicate.length > 0 : relatedNames(ofCases, ofAll));
 }
 
 /** `71% of the injured had no helmet, 38% of riders go without`; two groups where both are shares of one thing. */

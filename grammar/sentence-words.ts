@@ -35,7 +35,7 @@ const pronoun = /^(?:them|these|those|us|whom|which|it|they|who)$/i;
 const outcomeNoun =
   /(?:^|[ -])(?:injuries|injury|deaths?|casualt(?:y|ies)|victims?|cases?|patients?|admissions?|accidents?|crash(?:es)?|incidents?|collisions?|complaints?|infections?|poisonings?|drownings?|delays?|breakdowns?|failures?|faults?|errors?|falls|thefts?|fires?|spills?|offences?|burglar(?:y|ies))$/i;
 const outcomeWord =
-  /(?:^|[ -])(?:injured|hurt|killed|dead|died|admitted|hospitali[sz]ed|infected|ill|sick|poisoned|drowned|delayed|late|wounded|stranded|contaminated|cancelled)(?: |$)/i;
+  /(?:^|[ -])(?:injured|hurt|killed|dead|died|admitted|hospitali[sz]ed|infected|ill|sick|poisoned|drowned|wounded|stranded)(?: |$)|^(?:late|delayed|contaminated|cancelled)(?: |$)/i;
 
 export const isOutcome = (noun: string) => outcomeNoun.test(noun) || outcomeWord.test(noun);
 export const isPronoun = (word: string) => pronoun.test(word);
@@ -67,7 +67,8 @@ export function phraseAt(marks: readonly Mark[], start: number): Phrase {
   for (; at < start + reach; at += 1) {
     const mark = marks[at];
     if (mark === undefined || !isPlain(mark) || joiner.test(mark.text)) break;
-    if (inNoun && (mark.kind !== 'word' || startsPredicate(mark.text) || place.test(mark.text)))
+    const state = noun.length > 0 && /^(?:late|delayed|contaminated|cancelled)$/i.test(mark.text);
+    if (inNoun && (state || mark.kind !== 'word' || startsPredicate(mark.text) || place.test(mark.text)))
       inNoun = false;
     if (!inNoun) predicate.push(mark.text);
     else if (noun.length > 0 || !article.test(mark.text)) noun.push(mark.text);
@@ -142,7 +143,7 @@ export function subjectBefore(marks: readonly Mark[], end: number): string | nul
 const saying =
   /^(?:says?|said|reports?|reported|counted|found|claims?|claimed|tells?|told|writes|wrote|wrong|right)$/i;
 const isSetting = (word: string) =>
-  isVerb(word) ||
+  (word !== 'use' && isVerb(word)) ||
   changing.test(word) ||
   article.test(word) ||
   place.test(word) ||

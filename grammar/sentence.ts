@@ -117,10 +117,22 @@ function questionOf(draft: FigureDraft, claim: string | null, strict: StrictRead
     const said = claim === null ? [line] : [`${line}; says "${claim.replaceAll('"', "'")}"`, line];
     for (const each of said) {
       const reading = strict(each);
-      if (reading.kind === 'question' && draft.kinds.includes(reading.question.kind)) return reading.question;
+      if (
+        reading.kind === 'question' &&
+        draft.kinds.includes(reading.question.kind) &&
+        readsBack(reading.question, strict)
+      )
+        return reading.question;
     }
   }
   return null;
+}
+
+/** Whether the line that is offered asks the very same when it is sent. */
+function readsBack(question: Question, strict: StrictReader): boolean {
+  const canonical = printCanonical(question);
+  const again = strict(canonical);
+  return again.kind === 'question' && printCanonical(again.question) === canonical;
 }
 
 const kindOf = (question: Question) =>
