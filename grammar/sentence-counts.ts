@@ -19,6 +19,8 @@ export function countAt(marks: readonly Mark[], at: number, sentence: number): C
   if (['colon', 'slash', 'percent'].includes(marks[amount.end]?.kind ?? '')) return null;
   if (['slash', 'colon'].includes(marks[at - 1]?.kind ?? '') && marks[at - 2]?.kind === 'number') return null;
   const phrase = phraseAt(marks, amount.end);
+  // `the 14 and the 15 bus`
+  if (/^the$/i.test(before) && phrase.noun === '') return null;
   const [first = ''] = phrase.noun.split(' ');
   if (
     isExposureWord(first) ||

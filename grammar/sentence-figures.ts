@@ -1,3 +1,4 @@
+import { areTimes } from './labels.ts';
 import type { Mark } from './sentence-marks.ts';
 import type {
   ChangeNode,
@@ -10,7 +11,7 @@ import type {
 import { complete, named, quoted } from './sentence-drafts.ts';
 import type { FigureDraft } from './sentence-drafts.ts';
 import { sharesFigure, loneShare, loneCases, twoShares } from './sentence-shares.ts';
-import { isOutcome, nounKey, settingOf, subjectBefore, timeOf } from './sentence-words.ts';
+import { isOutcome, nounKey, settingOf, subjectBefore } from './sentence-words.ts';
 
 /** Puts the found pieces of a message together into figures, each piece into one. */
 export function figuresOf(marks: readonly Mark[], nodes: readonly SentenceNode[]): FigureDraft[] {
@@ -100,13 +101,15 @@ function pairsFrom(nodes: readonly SentenceNode[], at: number): PairNode[] {
     const last = group.at(-1);
     if (node?.kind !== 'pair') break;
     if (last !== undefined && node.sentence !== last.sentence) {
-      const same = node.phrase.noun === '' || nounKey(node.phrase.noun) === nounKey(last.phrase.noun);
+      const same = node.phrase.noun === '' || lastWord(node.phrase.noun) === lastWord(last.phrase.noun);
       if (node.sentence - last.sentence > 1 || !same) break;
     }
     group.push(node);
   }
   return group;
 }
+
+const lastWord = (noun: string) => nounKey(noun.split(' ').at(-1) ?? '');
 
 function countsOf(pairs: readonly PairNode[]): FigureDraft {
   const { names, unit } = namesOf(pairs);
@@ -220,7 +223,7 @@ function countsFigure(marks: readonly Mark[], counts: readonly CountNode[]): Fig
   const names = [said, subjects].find(distinct) ?? [null, null];
   const line = (chosen: readonly (string | null)[]) =>
     pair.map(({ amount }, index) => `${named(chosen[index] ?? null)}${amount.text}`).join(' vs ');
-  const overTime = pair.every(({ predicate }) => timeOf(predicate) !== null);
+  const overTime = areTimes(names);
   const draft = pair
     .map(({ amount }, index) => `${named(names[index] ?? null)}${amount.text} of ...`)
     .join(' vs ');

@@ -244,6 +244,8 @@ function shareSign(marks: readonly Mark[], at: number) {
   if (mark === undefined) return null;
   if (mark.kind === 'range' && marks[first + 1]?.kind === 'percent')
     return { text: `${mark.text}%`, start: first, end: first + 2, percentage: true };
+  const between = betweenAt(marks, first);
+  if (between !== null) return between;
   const side = sideAt(marks, first);
   if (side?.form === 'percentage') return { text: side.text, start: first, end: side.end, percentage: true };
   if (side?.form === 'frequency') return { text: side.text, start: first, end: side.end, percentage: false };
@@ -254,4 +256,15 @@ function shareSign(marks: readonly Mark[], at: number) {
   const next = marks[first + 1];
   const ofThem = next?.kind === 'of' || /^(?:the|all|our|those)$/i.test(next?.text ?? '');
   return ofThem ? { text: mark.text, start: first, end: first + 1, percentage: false } : null;
+}
+
+/** `between 55% and 65%`: one percentage that is a range. */
+function betweenAt(marks: readonly Mark[], at: number) {
+  if (!/^between$/i.test(marks[at]?.text ?? '')) return null;
+  const low = amountAt(marks, at + 1);
+  if (low === null) return null;
+  const and = marks[low.end]?.kind === 'percent' ? low.end + 1 : low.end;
+  const high = /^(?:and|to)$/i.test(marks[and]?.text ?? '') ? amountAt(marks, and + 1) : null;
+  if (high === null || marks[high.end]?.kind !== 'percent') return null;
+  return { text: `${low.text}-${high.text}%`, start: at, end: high.end + 1, percentage: true };
 }

@@ -5,7 +5,7 @@ import { readSentence } from './sentence.ts';
 import type { SentenceReading, StrictReader } from './sentence.ts';
 import { chooseText, confirmText, incompleteText, resultAloneText } from './sentence-messages.ts';
 import { isChanging } from './sentence-words.ts';
-import { isOddName, isOddNoun, isOddUnit, nameBeforeVerb } from './sentence-names.ts';
+import { isOddName, isOddNoun, isOddUnit, isSentence, nameBeforeVerb } from './sentence-names.ts';
 
 /** Faults that may come of reading a sentence as if it were a line. Any other fault is of the figures, and stays. */
 const ofWording: ReadonlySet<string> = new Set([
@@ -97,11 +97,12 @@ function helps(id: string, { figures, found }: SentenceReading, line: string): b
   if (first === undefined) {
     if (found.some(({ role }) => role === 'claim')) return saysLittle.has(id) || id === 'not-whole';
     // `Ask Ada about ward 7`: a number in a sentence that counts nothing.
-    return id === 'one-count' && line.trim().split(/\s+/).length > 3;
+    return (id === 'one-count' || id === 'same-name-twice') && line.trim().split(/\s+/).length > 3;
   }
   if (first.question !== null) {
     // A total that stands first is best put right by itself, and two percentages are asked about as they stand.
-    if (id === 'total-first') return first.question.kind === 'shares';
+    if (id === 'total-first')
+      return first.question.kind === 'shares' || / vs /.test(first.question.canonical);
     return isProse(line);
   }
   return isProse(line) && saysLittle.has(id);
@@ -124,15 +125,14 @@ const isProse = (line: string) => {
 
 /** Names that hold a sentence, in a line that does not set them off with a colon or quotation marks. */
 function hasOddNames(question: Question, line: string): boolean {
-  const setOff = (name: string) => {
-    const plain = line.toLowerCase().replace(/\s+/g, ' ');
-    const key = name.toLowerCase();
-    return plain.includes(`${key}:`) || /["\u201c\u201e\u00ab]/.test(plain[plain.indexOf(key) - 1] ?? '');
-  };
+  const plain = () => line.toLowerCase().replace(/\s+/g, ' ');
+  const inQuotes = (name: string) =>
+    /["\u201c\u201e\u00ab]/.test(plain()[plain().indexOf(name.toLowerCase()) - 1] ?? '');
+  const setOff = (name: string) => plain().includes(`${name.toLowerCase()}:`) || inQuotes(name);
   const names = namesIn(question);
   const { unit, caseNoun } = question;
   return (
-    names.some((name) => isOddName(name) && !setOff(name)) ||
+    names.some((name) => isOddName(name) && (isSentence(name) ? !inQuotes(name) : !setOff(name))) ||
     [unit, caseNoun].some((noun) => noun !== null && isOddUnit(noun))
   );
 }

@@ -93,8 +93,7 @@ function sharesOf(nodes: readonly SentenceNode[], given: CasesBeside): FigureDra
   const [ofCases, ofAll] = [nameOf(said), nameOf(coverage.predicate)];
   if (ofCases !== null && ofAll !== null && !relatedNames(ofCases, ofAll)) return null;
   const name = ofCases ?? ofAll ?? subject ?? coverage.subject ?? unnamed;
-  const opposite =
-    said.length > 0 && coverage.predicate.length > 0 && isNegated(said) !== isNegated(coverage.predicate);
+  const opposite = areOpposite(said, coverage.predicate);
   if (opposite) {
     // `44 of 75 wore no helmet, though 62% of riders wear one`: the percentage is of the others.
     const [own, rest] = isNegated(said)
@@ -118,6 +117,18 @@ function sharesOf(nodes: readonly SentenceNode[], given: CasesBeside): FigureDra
     instead,
   );
   return { ...draft, coverage };
+}
+
+/** Words that only take up what was said: `60% of the injured did`. */
+const takesUp = /^(?:did|do|does|so|too|have|had|are|were)$/i;
+
+/** Whether one is said of those with, the other of those without. After `werent wearing` a bare `do` is the opposite, after `go without` it is the same. */
+function areOpposite(one: readonly string[], other: readonly string[]): boolean {
+  if (one.length === 0 || other.length === 0) return false;
+  const [short, full] = one.every((word) => takesUp.test(word)) ? [one, other] : [other, one];
+  if (short.every((word) => takesUp.test(word)))
+    return full.some((word) => /n['\u2019]?t$|^not$/i.test(word));
+  return isNegated(one) !== isNegated(other);
 }
 
 /** `Most of the injured (44 of 75) wore no helmet`: what share of everybody goes without? */

@@ -25,7 +25,7 @@ const attribute = /^(?:with|without|not|no|never|aged|who|which|that|whom|whose)
 const place =
   /^(?:at|on|by|during|since|after|before|through|throughout|across|near|when|where|because|last|this|under|over|for|as)$/i;
 const joiner =
-  /^(?:and|or|but|while|whereas|though|although|yet|compared|only|just|even|however|so|if|&|versus|too|either|also)$/i;
+  /^(?:and|or|but|while|whereas|though|although|yet|compared|only|just|even|however|so|if|&|versus|too|either|also|please|thanks|cheers)$/i;
 const article = /^(?:the|a|an|all|our|their|its|his|her|any|some|these|those|this|that|every|each)$/i;
 const filler =
   /^(?:the|a|an|any|their|our|its|his|her|been|being|to|from|on|at|in|of|for|by|as|just|only|also|still|often|there|ever|actually|already|who|which|that)$/i;
@@ -119,8 +119,11 @@ export function nameOf(predicate: readonly string[]): string | null {
 /** The words in front of a figure that may name what it counts: `on night shifts`, `ferry delays are up`. */
 export function subjectBefore(marks: readonly Mark[], end: number): string | null {
   const words: string[] = [];
+  let year: string | null = marks[end - 1]?.kind === 'comma' ? yearBehind(marks, end - 2) : null;
+  if (year !== null) return year;
   for (let at = end - 1; at >= Math.max(0, end - reach); at -= 1) {
     const mark = marks[at];
+    year = yearBehind(marks, at);
     if (mark === undefined || (mark.kind !== 'word' && mark.kind !== 'colon' && mark.kind !== 'in')) break;
     if (mark.kind === 'colon') {
       if (words.length > 0) break;
@@ -136,9 +139,16 @@ export function subjectBefore(marks: readonly Mark[], end: number): string | nul
   // `Helmet use is 62%`: there it is no verb.
   const verb = words.findIndex((word) => word !== 'use' && (isVerb(word) || changing.test(word)));
   const named = verb === -1 ? words : words.slice(0, verb);
-  if (named.length === 0 || named.length > 4 || named.every((word) => pronoun.test(word))) return null;
+  if (named.length === 0) return year;
+  if (named.length > 4 || named.every((word) => pronoun.test(word))) return null;
   return named.join(' ');
 }
+
+/** `in 2023 there were 412`: the year that ends at a mark. */
+const yearBehind = (marks: readonly Mark[], at: number): string | null =>
+  marks[at - 1]?.kind === 'in' && /^(?:19|20)\d\d$/.test(marks[at]?.text ?? '')
+    ? (marks[at]?.text ?? null)
+    : null;
 
 const saying =
   /^(?:says?|said|reports?|reported|counted|found|claims?|claimed|tells?|told|writes|wrote|wrong|right)$/i;

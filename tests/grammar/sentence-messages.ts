@@ -68,6 +68,14 @@ export const offered: readonly (readonly [string, string])[] = [
     'is that right: 44 of 75 injured wore no helmet, 38% of riders go without?',
     'no helmet: 44 of 75 injured, 38% of riders',
   ],
+  [
+    'About 38% of riders go without helmets, but nearly 60% of the injured did',
+    'no helmets: 60% of injured, 38% of riders',
+  ],
+  [
+    'between 55% and 65% of riders wear helmets; 31 of 75 injured did',
+    'helmets: 31 of 75 injured; coverage 55-65% of riders',
+  ],
   // The percentage is of the others.
   [
     '44 of 75 injured riders wore no helmet, though 62% of riders wear one',
@@ -97,6 +105,19 @@ export const offered: readonly (readonly [string, string])[] = [
   ['Three of nine buses failed the test, but two of ten coaches did', 'buses: 3 of 9 vs coaches: 2 of 10'],
   ['Is "twice as likely" ok? 18/1204 v 9/2377', '18 of 1,204 vs 9 of 2,377'],
   ['can I say twice as many? 18 of 1,204 vs 9 of 2,377', '18 of 1,204 vs 9 of 2,377'],
+  [
+    'Of 1,204 night shifts 18 had an incident; of 2,377 day shifts 9 did',
+    'night shifts: 18 of 1,204 vs day shifts: 9 of 2,377',
+  ],
+  [
+    'Did you see that 12 of the 40 wells in the harbour ward are contaminated but only 9 of 310 in the hill ward?',
+    'harbour ward: 12 of 40 wells vs hill ward: 9 of 310 wells',
+  ],
+  [
+    'Hi all, quick check please: night shift 18 of 1,204, day shift 9 of 2,377. Thanks!',
+    'night shift: 18 of 1,204 vs day shift: 9 of 2,377',
+  ],
+  ['the new pump is 3 times safer: 3 of 900 vs 9 of 900', '3 of 900 vs 9 of 900'],
   // One group.
   [
     'The harbour ferry was late on 31 of 9,240 crossings (3.4%) last year',
@@ -114,6 +135,7 @@ export const offered: readonly (readonly [string, string])[] = [
   ['Complaints fell to 412 from 530', 'Complaints from 530 to 412'],
   ['Delays went up by 29%, from 412 in 2023 to 530 in 2024', '"2023": 412 Delays vs "2024": 530'],
   ['There were 530 delays this year compared with 412 last year', 'this year: 530 vs last year: 412'],
+  ['in 2023 there were 412 delays and in 2024 there were 530', '"2023": 412 vs "2024": 530'],
   ['can I say delays doubled? 4.2% \u2192 8.1%', 'from 4.2% to 8.1%'],
   ['3 in 1000 to 4 in 1000 is that 33%', 'from 3 in 1,000 to 4 in 1,000'],
   ['The share of late crossings rose from 4.4% to 5.2% in May', 'from 4.4% to 5.2%'],
