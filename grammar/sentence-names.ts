@@ -1,3 +1,5 @@
+import type { Question } from './question.ts';
+
 /** Names that nobody would give a group: they hold a sentence, or only the words of a question. */
 
 const sentenceVerb =
@@ -18,11 +20,11 @@ const sixWords = 6;
 export const isOddNoun = (word: string) => sentenceVerb.test(word.replace(/[.,?!]+$/, ''));
 
 /** Whether what is counted is called something that nobody counts: `in May`, `were late`. */
-export const isOddUnit = (unit: string) =>
+const isOddUnit = (unit: string) =>
   startsInSign.test(unit) || politeness.test(unit) || unit.split(' ').some(isOddNoun);
 
 /** Whether a name of a group is a sentence, or what is left of one. */
-export function isOddName(name: string): boolean {
+function isOddName(name: string): boolean {
   const words = name.split(/\s+/);
   return (
     words.length > sixWords ||
@@ -38,7 +40,7 @@ export function isOddName(name: string): boolean {
 }
 
 /** A name so long, with a verb in it, that not even a colon makes it one. */
-export const isSentence = (name: string) => {
+const isSentence = (name: string) => {
   const words = name.split(/\s+/);
   return words.length > sixWords && words.some(isOddNoun);
 };
@@ -48,4 +50,25 @@ export function nameBeforeVerb(name: string): string {
   const words = name.split(' ');
   const verb = words.findIndex(isOddNoun);
   return verb < 1 ? name : words.slice(0, verb).join(' ');
+}
+
+/** Names that hold a sentence, in a line that does not set them off with a colon or quotation marks. */
+export function hasOddNames(question: Question, line: string): boolean {
+  const plain = () => line.toLowerCase().replace(/\s+/g, ' ');
+  const inQuotes = (name: string) =>
+    /["\u201c\u201e\u00ab]/.test(plain()[plain().indexOf(name.toLowerCase()) - 1] ?? '');
+  const setOff = (name: string) => plain().includes(`${name.toLowerCase()}:`) || inQuotes(name);
+  const names = namesIn(question);
+  const { unit, caseNoun } = question;
+  return (
+    names.some((name) => isOddName(name) && (isSentence(name) ? !inQuotes(name) : !setOff(name))) ||
+    [unit, caseNoun].some((noun) => noun !== null && isOddUnit(noun))
+  );
+}
+
+/** The names of all groups, in every layer. */
+function namesIn(question: Question): string[] {
+  if (question.kind === 'strata') return question.layers.flatMap(({ question: layer }) => namesIn(layer));
+  const labels: readonly (string | null)[] = question.groups.map(({ label }) => label);
+  return labels.filter((label) => label !== null);
 }

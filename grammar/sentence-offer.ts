@@ -5,7 +5,7 @@ import { readSentence } from './sentence.ts';
 import type { SentenceReading, StrictReader } from './sentence.ts';
 import { chooseText, confirmText, incompleteText, resultAloneText } from './sentence-messages.ts';
 import { isChanging } from './sentence-words.ts';
-import { isOddName, isOddNoun, isOddUnit, isSentence, nameBeforeVerb } from './sentence-names.ts';
+import { hasOddNames, isOddNoun, nameBeforeVerb } from './sentence-names.ts';
 
 /** Faults that may come of reading a sentence as if it were a line. Any other fault is of the figures, and stays. */
 const ofWording: ReadonlySet<string> = new Set([
@@ -122,27 +122,6 @@ const isProse = (line: string) => {
   const words = line.split(/[\s,;:()"]+/).filter((word) => /^[^\d%]+$/.test(word));
   return words.length >= 3 && words.some((word) => isOddNoun(word) || isChanging(word));
 };
-
-/** Names that hold a sentence, in a line that does not set them off with a colon or quotation marks. */
-function hasOddNames(question: Question, line: string): boolean {
-  const plain = () => line.toLowerCase().replace(/\s+/g, ' ');
-  const inQuotes = (name: string) =>
-    /["\u201c\u201e\u00ab]/.test(plain()[plain().indexOf(name.toLowerCase()) - 1] ?? '');
-  const setOff = (name: string) => plain().includes(`${name.toLowerCase()}:`) || inQuotes(name);
-  const names = namesIn(question);
-  const { unit, caseNoun } = question;
-  return (
-    names.some((name) => isOddName(name) && (isSentence(name) ? !inQuotes(name) : !setOff(name))) ||
-    [unit, caseNoun].some((noun) => noun !== null && isOddUnit(noun))
-  );
-}
-
-/** The names of all groups, in every layer. */
-function namesIn(question: Question): string[] {
-  if (question.kind === 'strata') return question.layers.flatMap(({ question: layer }) => namesIn(layer));
-  const labels: readonly (string | null)[] = question.groups.map(({ label }) => label);
-  return labels.filter((label) => label !== null);
-}
 
 /**
  * `... and 9 out of 2377 day staff had an incident`: where only the end of a sentence clings to a name and the sentence gives the

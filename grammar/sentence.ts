@@ -7,6 +7,7 @@ import type { FigureDraft, MissingId } from './sentence-drafts.ts';
 import { marksOf } from './sentence-marks.ts';
 import type { Mark } from './sentence-marks.ts';
 import { missingText } from './sentence-messages.ts';
+import { hasOddNames } from './sentence-names.ts';
 import { nodesOf } from './sentence-nodes.ts';
 import type { SentenceNode } from './sentence-node-types.ts';
 
@@ -132,7 +133,12 @@ function questionOf(draft: FigureDraft, claim: string | null, strict: StrictRead
 function readsBack(question: Question, strict: StrictReader): boolean {
   const canonical = printCanonical(question);
   const again = strict(canonical);
-  return again.kind === 'question' && printCanonical(again.question) === canonical;
+  return (
+    again.kind === 'question' &&
+    printCanonical(again.question) === canonical &&
+    // Else the offer would be met with another offer.
+    !hasOddNames(again.question, canonical)
+  );
 }
 
 const kindOf = (question: Question) =>

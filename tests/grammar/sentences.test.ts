@@ -72,6 +72,16 @@ describe('a plain sentence', () => {
     expect(suggestions.map(({ label }) => label)).toEqual(['Yes', 'No, two separate groups']);
   });
 
+  it('offers no line that would ask something else once it is sent', () => {
+    const message = '4.2% of night ferries were late against 2.6% of day ferries';
+    const canonicalOf = (strict: typeof readStrictly) =>
+      readSentence(message, (line) => strict(line, commandLineLimits)).figures[0]?.question?.canonical;
+    const named = 'night ferries: 4.2% vs day ferries: 2.6%';
+    expect(canonicalOf(readStrictly)).toBe(named);
+    const forgetful: typeof readStrictly = (line, limits) => readStrictly(line === named ? '' : line, limits);
+    expect(canonicalOf(forgetful)).toBe('4.2% vs 2.6%');
+  });
+
   it('leaves the impossible refused, whatever the sentence around it', () => {
     expect(refusal('The night shift had 18 of 12 shifts go wrong').id).toBe('more-cases-than-people');
   });
@@ -145,10 +155,11 @@ describe('found pieces', () => {
 
 describe('read "..."', () => {
   it('reads the message between the quotation marks, even one that could be read strictly, with places in the line', () => {
-    const line = 'read "31 of 9,240 ferries were late"';
-    const { id, span } = refusal(line);
+    const line = 'read "night 18 of 1,204 vs day 9 of 2,377"';
+    const { id, span, suggestions } = refusal(line);
     expect(id).toBe('confirm');
-    expect(line.slice(span.from, span.to)).toBe('31 of 9,240 ferries');
+    expect(line.slice(span.from, span.to)).toBe('18 of 1,204 vs day 9 of 2,377');
+    expect(suggestions[0]?.line).toBe('night: 18 of 1,204 vs day: 9 of 2,377');
     expect(refusal('read "nothing here"').id).toBe('no-figure');
   });
 
