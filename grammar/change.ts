@@ -60,8 +60,9 @@ export function changeIn(tokens: Tokens): ChangePart | null {
   const bothConnected = first.connected && second.connected;
   if (is(tokens, between, token.To) && between === first.end && bothConnected)
     return made('forth', between, null, [between, between + 1]);
-  // Words behind the arrow would name the second figure, which makes two groups.
-  return is(tokens, between, token.Arrow) && between === first.end
+  // Words behind the arrow would name the second figure, which makes two groups; a question in front of it is a sentence.
+  const asked = tokens.slice(0, first.start).some(({ tokenType }) => tokenType === token.Question);
+  return is(tokens, between, token.Arrow) && between === first.end && !asked
     ? made('forth', between, null, [between, between + 1])
     : null;
 }

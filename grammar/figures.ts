@@ -111,8 +111,10 @@ function connectedFigure(tokens: Tokens, start: number, count: CountValue, after
   const pair = { start, end, count, noun, connector: at, total: base, totalAt: [at + 1, end] as const };
   if (connector === 'of') return { kind: 'counts', ...pair, eachCountedOnce: false };
   if (connector === 'in') {
-    if (count.written.value === 1 || roundBase(base.value))
-      return frequency(start, end, count.written, base, 'in');
+    // `2 in 3 of late ferries` is a share of them, as two thirds is.
+    const ofNoun = is(tokens, end, token.Of) && numberOrWordAt(tokens, end + 1) === null;
+    if (count.written.value === 1 || roundBase(base.value) || ofNoun)
+      return frequency(start, end, count.written, base, 'in', ofNoun);
     if (isYear(tokens[at + 1]?.image ?? '') && !nounWord(tokens, end)) {
       return { kind: 'year', start, end, count: count.written, noun, year: tokens[at + 1]?.image ?? '' };
     }
@@ -211,8 +213,9 @@ function fractionAt(tokens: Tokens, at: number): Figure | null {
   const first = tokens[at];
   if (first === undefined || !is(tokens, at, token.FractionWord)) return null;
   const of = is(tokens, at + 1, token.Of);
-  if (!of && !standsAlone(tokens, at)) return null;
   const [numerator, denominator] = fractionOf(first.image);
+  // `two thirds` alone would have to be written `2 in 3`, which counts two of three.
+  if (!of && (numerator !== 1 || !standsAlone(tokens, at))) return null;
   const share: ShareValue = {
     text: `${numerator} in ${denominator}`,
     value: numerator / denominator,
@@ -250,6 +253,7 @@ function frequency(
   count: WrittenNumber,
   base: WrittenNumber,
   word: 'in' | 'per',
+  ofNoun = false,
 ): Figure {
   // `1 in 250` was rounded in its base, `3 per 1,000` in its count.
   const byBase = count.value === 1 && word === 'in' && !roundBase(base.value);
@@ -265,5 +269,5 @@ function frequency(
     precision: 'rounded',
     form: 'frequency',
   };
-  return { kind: 'share', start, end, share, ofNoun: false };
+  return { kind: 'share', start, end, share, ofNoun };
 }

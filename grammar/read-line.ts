@@ -11,6 +11,7 @@ import { printCanonical } from './print-canonical.ts';
 import type { SaysClause } from './claim.ts';
 import type { Diagnosis, HelpTopic, LineLimits, LineReading, Question } from './question.ts';
 import { cutSays } from './says-cut.ts';
+import { withOffer } from './sentence-offer.ts';
 import { settleLine } from './settle.ts';
 import { tableOf } from './table.ts';
 import { tagAlarm } from './tag-alarm.ts';
@@ -31,8 +32,13 @@ const topics: readonly HelpTopic[] = [
   'alarm',
 ];
 
-/** Reads one typed line. Pure, linear in the length of the line, and never throws whatever the line holds. */
+/** Reads one typed line: strictly, else as a plain sentence whose figures are offered. Pure, linear in its length, never throws. */
 export function readLine(line: string, limits: LineLimits): LineReading {
+  return withOffer(line, readStrictly(line, limits), (each) => readStrictly(each, limits), limits);
+}
+
+/** Reads one line as it stands. */
+export function readStrictly(line: string, limits: LineLimits): LineReading {
   // Before anything else, so that no step ever sees more.
   if (line.length > limits.characters) {
     return refusal(

@@ -1,6 +1,8 @@
 import { once } from 'node:events';
 import packageFile from '../../package.json' with { type: 'json' };
-import { answerLine, commandLineLimits } from '../answer/answer-line.ts';
+import { commandLineLimits } from '../answer/answer-line.ts';
+import { readMessage } from '../answer/read-message.ts';
+import { answerOrOffer, speakOfMessage } from './message-text.ts';
 import { speak, speakOnOneLine } from './answer-text.ts';
 import { readArguments, usage } from './arguments.ts';
 import { LineSplitter } from './line-splitter.ts';
@@ -25,15 +27,15 @@ async function run(words: readonly string[]): Promise<number> {
       stderr.write(`There is no option ${request.option}.\n\n${usage}\n`);
       return 2;
     case 'stream':
-      return answerStream(request.json);
-    case 'line': {
+      return answerStream(request.json, request.yes);
+    case 'line':
+    case 'read': {
       const colour = stdout.isTTY && (env['NO_COLOR'] ?? '') === '';
       const strong = colour ? (text: string) => `\u001b[1m${text}\u001b[22m` : (text: string) => text;
-      const { output, error, status } = speak(
-        answerLine(request.line, commandLineLimits),
-        request.json,
-        strong,
-      );
+      const { output, error, status } =
+        request.kind === 'read'
+          ? speakOfMessage(readMessage(request.message, commandLineLimits), request, strong)
+          : speak(answerOrOffer(request.line, request.yes), request.json, strong);
       if (output !== null) stdout.write(`${output}\n`);
       if (error !== null) stderr.write(`${error}\n`);
       return status;
@@ -41,13 +43,13 @@ async function run(words: readonly string[]): Promise<number> {
   }
 }
 
-async function answerStream(json: boolean): Promise<number> {
+async function answerStream(json: boolean, yes: boolean): Promise<number> {
   const splitter = new LineSplitter(commandLineLimits.characters);
   let worst = 0;
   const answer = async (lines: Iterable<string>) => {
     let text = '';
     for (const line of lines) {
-      const { output, status } = speakOnOneLine(answerLine(line, commandLineLimits), json);
+      const { output, status } = speakOnOneLine(answerOrOffer(line, yes), json);
       text += `${output ?? ''}\n`;
       worst = Math.max(worst, status);
     }

@@ -143,6 +143,9 @@ describe('divisor LINE', () => {
     expect((await divisor(['--help'])).output).toContain('divisor -');
     expect((await divisor(['--version'])).output).toMatch(/^\d+\.\d+\.\d+\n$/);
     expect(await divisor(['--frobnicate'])).toMatchObject({ status: 2, output: '' });
+    expect((await divisor(['read', '18 of 1,204 sailings were late'])).output).toContain(
+      'sailings: 18 of 1,204',
+    );
     expect((await divisor(['--', '18 of 1,204 vs 9 of 2,377'])).status).toBe(0);
   });
 });

@@ -46,6 +46,18 @@ describe('grammar/GRAMMAR.md', () => {
     expect(readAs(line)).toBe('diagnosis'),
   );
 
+  const sentences = blocks(text, 'sentence');
+  it.each(sentences.flatMap((line, index) => (line.startsWith('=> ') ? [] : [[line, sentences[index + 1]]])))(
+    '%j is offered as %j',
+    (line, offered) => {
+      const reading = readLine(line ?? '', commandLineLimits);
+      if (reading.kind !== 'diagnosis') throw new Error(`it is ${reading.kind}`);
+      const [first] = reading.diagnosis.suggestions;
+      expect(`=> ${first?.line.replace(/; says .*$/, '')}`).toBe(offered);
+      expect(reading.diagnosis.id).toBe(first?.line.includes('...') === true ? 'incomplete' : 'confirm');
+    },
+  );
+
   it('states the limits that run', () => {
     const words = (most: number) => most.toLocaleString('en');
     expect(text).toContain(
