@@ -47,7 +47,8 @@ const ofWording: ReadonlySet<string> = new Set([
 const severalSentences = /[A-Za-z0-9%)]{2}[.!?]\s+[A-Z]/;
 
 /** `read "..."`: the message is read as a sentence, even where it could be read strictly. */
-const readCommand = /^\s*read\s*["\u201c\u201e\u00ab]([^]*?)["\u201c\u201d\u00bb]?\s*$/i;
+const readCommand = /^\s*read\s*["\u201c\u201e\u00ab]/i;
+const closingQuotation = /["\u201c\u201d\u00bb]$/;
 
 /**
  * Strict, then tolerant: a line that the strict reader refuses for its wording, or reads with a sentence for a name, is read as a
@@ -63,8 +64,8 @@ export function withOffer(
   if (reading.kind === 'question' && reading.question.clauses.says !== undefined) return reading;
   const command = line.length > limits.characters ? null : readCommand.exec(line);
   if (command !== null) {
-    const message = command[1] ?? '';
-    const at = line.indexOf(message);
+    const at = command[0].length;
+    const message = line.slice(at).trimEnd().replace(closingQuotation, '');
     return refused(moved(offered(strict, message, readSentence(message, strict)), at));
   }
   if (reading.kind === 'help') return reading;
